@@ -1,0 +1,249 @@
+/** What the read routes of the catalogue answer. */
+import { z } from 'zod'
+import { GALAXY_CLASSES, GALAXY_STATUSES } from '../classes.ts'
+import { METHOD_KEYS } from '../methods.ts'
+import { QUANTITY_KEYS } from '../quantities.ts'
+
+const number = z.number().nullable()
+const text = z.string().nullable()
+
+/** One catalogue row, keyed by column; null for a missing value. */
+export const rowSchema = z.record(z.string(), z.union([z.string(), z.number(), z.null()]))
+
+/** GET /api/galaxies */
+export const galaxyListSchema = z.object({
+  rows: z.array(rowSchema),
+  /** Rows that the filter lets through, all pages. */
+  total: z.int(),
+  /** Cursor of the next page; null on the last. */
+  next: text,
+  revision: z.int(),
+})
+
+/** GET /api/galaxies/facets: under the same filter, each facet counted without its own condition. */
+export const facetsSchema = z.object({
+  revision: z.int(),
+  total: z.int(),
+  /** Choice columns: host, class, status, host_relation, distance_method. */
+  choices: z.record(z.string(), z.array(z.object({ value: text, label: z.string(), count: z.int() }))),
+  /** Real columns: distance, abs_v, abs_b, v_lg, tidal_index; equal bins over [lo, hi]. */
+  histograms: z.record(z.string(), z.object({ lo: z.number(), hi: z.number(), counts: z.array(z.int()), missing: z.int() })),
+})
+
+/** GET /api/galaxies/points: all matching rows, column-wise. */
+export const pointsSchema = z.object({
+  revision: z.int(),
+  id: z.array(z.int()),
+  slug: z.array(z.string()),
+  name: z.array(z.string()),
+  class: z.array(z.enum(GALAXY_CLASSES)),
+  ra: z.array(z.number()),
+  dec: z.array(z.number()),
+  distance: z.array(number),
+  distanceLo: z.array(number),
+  distanceHi: z.array(number),
+  sgx: z.array(number),
+  sgy: z.array(number),
+  sgz: z.array(number),
+  absV: z.array(number),
+  host: z.array(text),
+  relation: z.array(z.enum(['host', 'satellite', 'field'])),
+})
+
+/** How one measurement entered the adopted value. */
+export const reasonSchema = z.object({
+  measurementId: z.int(),
+  used: z.boolean(),
+  /** Share of the adopted value, 0 to 1; 0 when not used. */
+  weight: z.number(),
+  /** What the scale added to the published value, canonical unit. */
+  shift: z.number(),
+  /** On the catalogue's scale, canonical unit; null for a text. */
+  scaled: number,
+  /** The error that entered, canonical unit. */
+  error: number,
+  /** (scaled − adopted) / error; null where there is no error. */
+  residual: number,
+  tension: z.boolean(),
+  /** "used", "lower tier", "excluded: ...", "superseded by ...", "upper limit", "not the newest" ... */
+  reason: z.string(),
+  /** "scale unknown", "error assumed" ... */
+  flags: z.array(z.string()),
+})
+
+export const adoptedSchema = z.object({
+  quantity: z.enum(QUANTITY_KEYS),
+  value: number,
+  textValue: text,
+  errPlus: number,
+  errMinus: number,
+  errSys: number,
+  nUsed: z.int(),
+  nAll: z.int(),
+  chi2: number,
+  dof: number,
+  /** Intrinsic scatter (tau) that the values ask for beyond their errors, canonical unit. */
+  scatter: number,
+  method: z.enum(METHOD_KEYS).nullable(),
+  /** "Weighted from 3 TRGB values on the catalogue's scale; ..." */
+  sentence: z.string(),
+  reasons: z.array(reasonSchema),
+  /** The reason of an override, where one decided. */
+  override: text,
+})
+
+export const nameSchema = z.object({ name: z.string(), preferred: z.boolean(), source: text })
+
+/** GET /api/galaxies/:slug */
+export const galaxySchema = z.object({
+  id: z.int(),
+  versionId: z.int(),
+  slug: z.string(),
+  designation: z.string(),
+  status: z.enum(GALAXY_STATUSES),
+  class: z.enum(GALAXY_CLASSES),
+  ra: z.number(),
+  dec: z.number(),
+  note: text,
+  names: z.array(nameSchema),
+  /** Every column of the catalogue. */
+  row: rowSchema,
+  adopted: z.array(adoptedSchema),
+  host: z.object({ slug: z.string(), name: z.string() }).nullable(),
+  mainDisturber: z.object({ slug: z.string(), name: z.string() }).nullable(),
+  /** Satellites, when it has any. */
+  satellites: z.int(),
+  revision: z.int(),
+})
+
+export const measurementSchema = z.object({
+  id: z.int(),
+  versionId: z.int(),
+  galaxyId: z.int(),
+  quantity: z.enum(QUANTITY_KEYS),
+  value: number,
+  errPlus: number,
+  errMinus: number,
+  errSys: number,
+  textValue: text,
+  limitFlag: z.enum(['upper', 'lower']).nullable(),
+  method: z.enum(METHOD_KEYS).nullable(),
+  anchor: text,
+  anchorValueAssumed: number,
+  convention: z.enum(['true', 'sfd']).nullable(),
+  published: z.object({ value: z.number(), errPlus: number, errMinus: number, errSys: number, unit: z.string() }).nullable(),
+  source: z.object({ id: z.int(), label: z.string(), year: z.int(), bibcode: text, doi: text }),
+  locator: text,
+  note: text,
+  excludedReason: text,
+  supersedes: z.int().nullable(),
+  enteredBy: text,
+  revision: z.int(),
+})
+
+/** GET /api/galaxies/:slug/measurements */
+export const measurementsSchema = z.object({ revision: z.int(), measurements: z.array(measurementSchema) })
+
+/** GET /api/galaxies/:slug/history: adopted distance and what changed, revision by revision, newest first. */
+export const historySchema = z.object({
+  entries: z.array(
+    z.object({
+      revision: z.int(),
+      at: z.string(),
+      by: text,
+      summary: z.string(),
+      submission: z.int().nullable(),
+      release: text,
+      changes: z.array(z.object({ column: z.string(), before: z.union([z.string(), z.number(), z.null()]), after: z.union([z.string(), z.number(), z.null()]) })),
+    }),
+  ),
+})
+
+/** GET /api/galaxies/:slug/neighbours: nearest in three dimensions. */
+export const neighboursSchema = z.object({
+  revision: z.int(),
+  neighbours: z.array(z.object({ slug: z.string(), name: z.string(), class: z.enum(GALAXY_CLASSES), separation: z.number(), distance: z.number() })),
+})
+
+/** GET /api/resolve?name= */
+export const resolveSchema = z.object({
+  matches: z.array(z.object({ slug: z.string(), name: z.string(), matched: z.string(), class: z.enum(GALAXY_CLASSES), ra: z.number(), dec: z.number(), exact: z.boolean() })),
+})
+
+const hostSummary = z.object({
+  slug: z.string(),
+  name: z.string(),
+  class: z.enum(GALAXY_CLASSES),
+  distance: number,
+  logMstar: number,
+  members: z.int(),
+  /** Radius of the host's sphere, kpc. */
+  sphere: number,
+  /** Line-of-sight velocity dispersion of the members by the gapper, km/s. */
+  dispersion: number,
+})
+
+/** GET /api/hosts */
+export const hostsSchema = z.object({ revision: z.int(), hosts: z.array(hostSummary) })
+
+/** GET /api/hosts/:slug */
+export const hostSchema = z.object({
+  revision: z.int(),
+  host: hostSummary.extend({ ra: z.number(), dec: z.number(), absV: number, vGsr: number, r200: number, zeroVelocityRadius: number }),
+  members: z.array(
+    z.object({
+      slug: z.string(),
+      name: z.string(),
+      class: z.enum(GALAXY_CLASSES),
+      distance: number,
+      absV: number,
+      separation: number,
+      separationLo: number,
+      separationHi: number,
+      probability: number,
+      angle: number,
+      dv: number,
+      /** Supergalactic offset from the host, kpc. */
+      offset: z.tuple([z.number(), z.number(), z.number()]).nullable(),
+    }),
+  ),
+})
+
+/** GET /api/scale */
+export const scaleSchema = z.object({
+  revision: z.int(),
+  anchors: z.array(
+    z.object({ key: z.string(), label: z.string(), kind: z.enum(['modulus', 'absolute-magnitude']), methods: z.array(z.string()), value: z.number(), err: z.number(), source: z.string(), measurements: z.int() }),
+  ),
+  policy: z.unknown(),
+})
+
+/** GET /api/summary: the catalogue at a glance. */
+export const summarySchema = z.object({
+  revision: z.int(),
+  galaxies: z.int(),
+  measurements: z.int(),
+  sources: z.int(),
+  hosts: z.int(),
+  byClass: z.array(z.object({ class: z.enum(GALAXY_CLASSES), count: z.int() })),
+  release: z.object({ label: z.string(), title: z.string(), publishedAt: z.string(), revision: z.int() }).nullable(),
+  /** Newest revisions first. */
+  recent: z.array(z.object({ revision: z.int(), at: z.string(), by: text, summary: z.string() })),
+  /** What waits for the reader: empty for a visitor. */
+  waiting: z.array(z.object({ submission: z.int(), title: z.string(), why: z.string(), since: z.string() })),
+})
+
+export type Row = z.infer<typeof rowSchema>
+export type GalaxyList = z.infer<typeof galaxyListSchema>
+export type Facets = z.infer<typeof facetsSchema>
+export type Points = z.infer<typeof pointsSchema>
+export type Reason = z.infer<typeof reasonSchema>
+export type AdoptedAnswer = z.infer<typeof adoptedSchema>
+export type GalaxyAnswer = z.infer<typeof galaxySchema>
+export type MeasurementAnswer = z.infer<typeof measurementSchema>
+export type History = z.infer<typeof historySchema>
+export type HostsAnswer = z.infer<typeof hostsSchema>
+export type HostAnswer = z.infer<typeof hostSchema>
+export type ScaleAnswer = z.infer<typeof scaleSchema>
+export type Summary = z.infer<typeof summarySchema>
+export type Resolved = z.infer<typeof resolveSchema>

@@ -1,0 +1,26 @@
+/** Figures kept in the gallery. The recipe itself is core/figure/recipe.ts. */
+import { z } from 'zod'
+
+export const FIGURE_FORMATS = ['svg', 'pdf', 'png'] as const
+export type FigureFormat = (typeof FIGURE_FORMATS)[number]
+
+export const figureInputSchema = z.strictObject({
+  title: z.string().trim().min(1, 'Give the figure a title.').max(160),
+  shared: z.boolean().default(true),
+  /** Checked by core/figure/recipe.ts. */
+  recipe: z.unknown(),
+})
+
+export const figureSchema = z.object({
+  id: z.int(),
+  title: z.string(),
+  shared: z.boolean(),
+  owner: z.object({ id: z.int(), name: z.string() }),
+  recipe: z.unknown(),
+  updatedAt: z.string(),
+  may: z.object({ edit: z.boolean() }),
+})
+export const figureListSchema = z.object({ figures: z.array(figureSchema) })
+
+export type FigureInput = z.infer<typeof figureInputSchema>
+export type Figure = z.infer<typeof figureSchema>
