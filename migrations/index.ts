@@ -1,0 +1,25 @@
+import type { Knex } from 'knex'
+import * as people from './0001_people.ts'
+import * as desk from './0002_desk.ts'
+import * as catalogue from './0003_catalogue.ts'
+import * as outlets from './0004_outlets.ts'
+
+/** One step of the schema. `up` runs in a transaction of its own; `down` undoes it. */
+export interface Migration {
+  up(knex: Knex): Promise<void>
+  down(knex: Knex): Promise<void>
+}
+
+/**
+ * Every migration by name, oldest first. The map is written out by hand, not read from the folder, so that one name is recorded
+ * whether the code runs as .ts or compiled as .js. A new one: a file `0005_what_it_does.ts` exporting `up` and `down`, and
+ * a line here.
+ *
+ * A migration that has been released is never edited; a further one mends it.
+ */
+export const migrations: Readonly<Record<string, Migration>> = {
+  '0001_people': people,
+  '0002_desk': desk,
+  '0003_catalogue': catalogue,
+  '0004_outlets': outlets,
+}
