@@ -69,7 +69,7 @@ export function useSignOut() {
   return useMutation({
     mutationFn: async () => keepToken(await sendJson('DELETE', PATH, undefined, sessionSchema)),
     onSuccess: (session) => {
-      client.removeQueries({ predicate: (query) => query.queryKey[0] !== keys.session[0] })
+      void client.resetQueries({ predicate: (query) => query.queryKey[0] !== keys.session[0] })
       client.setQueryData(keys.session, session)
     },
   })
