@@ -110,3 +110,10 @@ export async function getBlob(path: string, options: ReadOptions = {}): Promise<
   const response = await request(withSearch(path, options.query), { method: 'GET', signal: options.signal })
   return response.blob()
 }
+
+/** Sends JSON and reads a file: its bytes and the name that the server gives it. */
+export async function postForBlob(path: string, body: unknown): Promise<{ blob: Blob; fileName: string }> {
+  const response = await request(path, { method: 'POST', headers: { 'content-type': 'application/json', 'x-csrf-token': csrfToken }, body: JSON.stringify(body) })
+  const named = /filename="?([^";]+)"?/.exec(response.headers.get('content-disposition') ?? '')
+  return { blob: await response.blob(), fileName: named?.[1] ?? 'vicinage' }
+}
