@@ -1,0 +1,45 @@
+/**
+ * `npm run dev`: the same site with hot reload. Vite serves the client at PORT and hands /api to the server, which `tsx watch`
+ * restarts when a file of it changes.
+ */
+import { spawn } from 'node:child_process'
+import { join } from 'node:path'
+import { ensurePackages, requireNode } from './packages.mjs'
+import { run } from './plain-error.mjs'
+import { ROOT } from './place.mjs'
+import { findFreePort } from './postgres/postmaster.mjs'
+import { claimCheckout } from './running.mjs'
+import { openDatabaseForCheckout, prepareDatabase, requirePort, serverEnvironment, spawnServer, stopChild, untilAnswering, wantedAddress } from './service.mjs'
+import { superviseUntilStopped } from './supervise.mjs'
+import { greet } from './greet.mjs'
+
+const TSX = join(ROOT, 'node_modules/tsx/dist/cli.mjs')
+const VITE = join(ROOT, 'node_modules/vite/bin/vite.js')
+
+run(async () => {
+  requireNode()
+  const { host, port, address } = wantedAddress()
+  claimCheckout(address)
+  await requirePort(host, port)
+  ensurePackages()
+  const { url, cluster } = await openDatabaseForCheckout()
+  await superviseUntilStopped(cluster, async (whenStopping) => {
+    const apiPort = await findFreePort()
+    /** @type {NodeJS.ProcessEnv} */
+    const environment = { ...serverEnvironment(url), NODE_ENV: 'development', HOST: '127.0.0.1', PORT: String(apiPort), PUBLIC_URL: process.env.PUBLIC_URL || address }
+    const { accounts } = await prepareDatabase([TSX, 'server/maintenance/prepare.ts'], environment, whenStopping)
+    const server = spawnServer([TSX, 'watch', '--clear-screen=false', 'server/index.ts'], environment)
+    whenStopping(() => stopChild(server.child, server.ended))
+    const vite = spawn(process.execPath, [VITE, '--port', String(port), '--host', host, '--clearScreen', 'false', '--logLevel', 'warn'], {
+      cwd: ROOT,
+      env: { ...process.env, NODE_ENV: 'development', API_PORT: String(apiPort) },
+      stdio: ['ignore', 'inherit', 'inherit'],
+      detached: true,
+    })
+    const viteEnded = new Promise((/** @type {(code: number) => void} */ resolve) => vite.once('exit', (code) => resolve(code ?? 1)))
+    whenStopping(() => stopChild(vite, viteEnded))
+    await untilAnswering(`http://127.0.0.1:${apiPort}`, server.ended)
+    greet({ address, accounts, password: environment.DEMO_PASSWORD ?? '', cluster })
+    return Promise.race([server.ended, viteEnded])
+  })
+})
