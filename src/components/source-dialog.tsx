@@ -2,7 +2,7 @@ import { useState } from 'react'
 import { zodResolver } from '@hookform/resolvers/zod'
 import { Controller, useForm } from 'react-hook-form'
 import { z } from 'zod'
-import { sourceInputSchema, type Source } from '../../core/schema/sources.ts'
+import { sourceInputSchema, type Source, type SourceForm } from '../../core/schema/sources.ts'
 import { fieldError } from '../api/client.ts'
 import { useCreateSource } from '../api/sources.ts'
 import { Button } from './button.tsx'
@@ -14,7 +14,7 @@ import { TextField } from './text-field.tsx'
 /** What a person types: authors line by line, the year as text, empty fields for none. */
 const formSchema = z
   .object({ title: z.string(), authors: z.string(), year: z.string(), venue: z.string(), bibcode: z.string(), doi: z.string() })
-  .transform((typed) => ({
+  .transform((typed): SourceForm => ({
     title: typed.title,
     authors: typed.authors.split(/\n|;/).map((a) => a.trim()).filter((a) => a !== ''),
     year: /^\d{4}$/.test(typed.year.trim()) ? Number(typed.year) : NaN,
