@@ -20,6 +20,7 @@ function resource<Name extends string>(name: Name) {
 
 export const keys = {
   session: ['session'] as const,
+  summary: ['summary'] as const,
   resolve: (name: string) => ['resolve', name] as const,
   galaxies: resource('galaxies'),
   hosts: resource('hosts'),

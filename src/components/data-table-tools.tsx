@@ -1,4 +1,4 @@
-import { Copy, Rows3, Rows4 } from 'lucide-react'
+import { Copy, Download, Rows3, Rows4 } from 'lucide-react'
 import type { ReactNode } from 'react'
 import { useLocalSetting } from '../lib/local-setting.ts'
 import { rowDensitySetting } from '../lib/row-density.ts'
@@ -10,9 +10,10 @@ export interface DataTableToolsProps {
   count: string
   /** Missing while there is nothing to copy. */
   onCopy: (() => void) | undefined
+  onSave: (() => void) | undefined
 }
 
-export function DataTableTools({ toolbar, showTools, count, onCopy }: DataTableToolsProps) {
+export function DataTableTools({ toolbar, showTools, count, onCopy, onSave }: DataTableToolsProps) {
   const [density, setDensity] = useLocalSetting(rowDensitySetting)
   const isDense = density === 'dense'
   return (
@@ -29,6 +30,7 @@ export function DataTableTools({ toolbar, showTools, count, onCopy }: DataTableT
             onPress={() => setDensity(isDense ? 'comfortable' : 'dense')}
           />
           <IconButton label="Copy as TSV" icon={<Copy size={16} aria-hidden />} isDisabled={!onCopy} onPress={onCopy} />
+          {onSave && <IconButton label="Save as TSV" icon={<Download size={16} aria-hidden />} onPress={onSave} />}
         </div>
       )}
     </div>

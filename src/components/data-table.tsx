@@ -4,6 +4,7 @@ import { classNames } from '../lib/class-names.ts'
 import { copyText } from '../lib/clipboard.ts'
 import { formatCounted } from '../lib/format.ts'
 import { useLocalSetting } from '../lib/local-setting.ts'
+import { saveBlob } from '../lib/picture-export.ts'
 import { ROW_HEIGHT_PX, rowDensitySetting } from '../lib/row-density.ts'
 import { rowsToTsv, sortRows, type DataColumn, type SortState } from './data-column.ts'
 import { DataTableHead } from './data-table-head.tsx'
@@ -36,7 +37,9 @@ export interface DataTableProps<Row> {
   countText?: string
   /** The last rows are near: load more. */
   onReachEnd?: () => void
-  /** Row count, row height and copying; true unless said otherwise. */
+  /** With a name (no ending) the rows can be saved as TSV. */
+  fileName?: string
+  /** Row count, row height, copying and saving; true unless said otherwise. */
   showTools?: boolean
 }
 
@@ -51,7 +54,7 @@ const DEFAULT_TEXT_WIDTH = 168
  * move from row to row, Left and Right scroll, Enter opens, Ctrl C copies the row.
  */
 export function DataTable<Row>(props: DataTableProps<Row>) {
-  const { label, columns, rows, rowKey, onSortChange, onRowAction, onRowHover, selectedKey, isLoading, empty, maxHeight = '72vh', toolbar, countText, onReachEnd, showTools = true } = props
+  const { label, columns, rows, rowKey, onSortChange, onRowAction, onRowHover, selectedKey, isLoading, empty, maxHeight = '72vh', toolbar, countText, onReachEnd, fileName, showTools = true } = props
   const [density] = useLocalSetting(rowDensitySetting)
   const rowHeight = ROW_HEIGHT_PX[density]
   const scroller = useRef<HTMLDivElement>(null)
@@ -137,6 +140,7 @@ export function DataTable<Row>(props: DataTableProps<Row>) {
           showTools={showTools}
           count={isLoading && isEmpty ? 'Loading …' : (countText ?? formatCounted(shown.length, 'row'))}
           onCopy={isEmpty ? undefined : () => void copyText(rowsToTsv(columns, shown), `${formatCounted(shown.length, 'row')} with tabs between`)}
+          onSave={isEmpty || !fileName ? undefined : () => saveBlob(new Blob([rowsToTsv(columns, shown)], { type: 'text/tab-separated-values' }), `${fileName}.tsv`)}
         />
       )}
       {isEmpty && !isLoading && empty ? (

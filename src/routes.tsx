@@ -1,0 +1,29 @@
+import type { ComponentType } from 'react'
+import type { RouteObject } from 'react-router-dom'
+import { AppShell } from './app/app-shell.tsx'
+import { NotFoundPage } from './app/not-found-page.tsx'
+import { RouteFailure } from './app/route-failure.tsx'
+
+/** A page fetched when it is first opened; its file exports the component by default. */
+function page(load: () => Promise<{ default: ComponentType }>): RouteObject['lazy'] {
+  return async () => ({ Component: (await load()).default })
+}
+
+/** The pages, one line each; addresses as in src/paths.ts. */
+const pages: RouteObject[] = [
+  { index: true, lazy: page(() => import('./features/home/home-page.tsx')) },
+  { path: 'sign-in', lazy: page(() => import('./features/session/sign-in-page.tsx')) },
+  { path: 'account', lazy: page(() => import('./features/session/account-page.tsx')) },
+  { path: '*', Component: NotFoundPage },
+]
+
+export const routes: RouteObject[] = [
+  {
+    path: '/',
+    Component: AppShell,
+    errorElement: <RouteFailure />,
+    // While the first page's program is on its way: the empty surface, which the shell then fills.
+    HydrateFallback: () => null,
+    children: [{ errorElement: <RouteFailure />, children: pages }],
+  },
+]
