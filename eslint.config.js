@@ -6,10 +6,22 @@ import tseslint from 'typescript-eslint'
 /** The arrows of the house: what a folder may not import, by path. */
 const features = existsSync('src/features') ? readdirSync('src/features') : []
 const zones = [
-  { target: './core', from: ['./server', './src', './migrations', './seeds', './scripts', './tests'], message: 'core/ imports nothing but core/.' },
-  { target: './src', from: ['./server', './migrations', './seeds', './scripts', './tests'], message: 'The client knows core/ and the HTTP API only.' },
+  {
+    target: './core',
+    from: ['./server', './src', './migrations', './seeds', './scripts', './tests'],
+    message: 'core/ imports nothing but core/.',
+  },
+  {
+    target: './src',
+    from: ['./server', './migrations', './seeds', './scripts', './tests'],
+    message: 'The client knows core/ and the HTTP API only.',
+  },
   { target: './server', from: ['./src', './scripts', './tests'], message: 'The server knows core/ only.' },
-  { target: ['./migrations', './seeds'], from: ['./src', './scripts', './tests'], message: 'Migrations and seeds know server/ and core/ only.' },
+  {
+    target: ['./migrations', './seeds'],
+    from: ['./src', './scripts', './tests'],
+    message: 'Migrations and seeds know server/ and core/ only.',
+  },
   { target: ['./src/components', './src/api', './src/lib'], from: './src/features', message: 'Shared parts know no feature.' },
   ...features.map((feature) => ({
     target: `./src/features/${feature}`,
@@ -21,7 +33,20 @@ const zones = [
 
 /** core/ runs in browser, server and worker alike, and gives the same answer every time. */
 const PURE = 'core/ is pure: no interface, no server, no database.'
-const impurePackages = ['react', 'react-dom', 'react-router-dom', 'react-aria-components', 'express', 'knex', 'objection', 'pg', 'pino', 'node:*', 'fs', 'path']
+const impurePackages = [
+  'react',
+  'react-dom',
+  'react-router-dom',
+  'react-aria-components',
+  'express',
+  'knex',
+  'objection',
+  'pg',
+  'pino',
+  'node:*',
+  'fs',
+  'path',
+]
 
 export default tseslint.config(
   { ignores: ['dist/', 'node_modules/', '.data/', 'uploads/', 'coverage/', 'public/'] },
@@ -58,7 +83,10 @@ export default tseslint.config(
         { object: 'Math', property: 'random', message: 'Randomness comes from a seeded generator that is handed in.' },
         { object: 'Date', property: 'now', message: 'The time is handed in.' },
       ],
-      'no-restricted-syntax': ['error', { selector: "NewExpression[callee.name='Date'][arguments.length=0]", message: 'The time is handed in.' }],
+      'no-restricted-syntax': [
+        'error',
+        { selector: "NewExpression[callee.name='Date'][arguments.length=0]", message: 'The time is handed in.' },
+      ],
       'no-restricted-globals': ['error', 'window', 'document', 'process', 'localStorage', 'fetch'],
     },
   },
@@ -68,7 +96,10 @@ export default tseslint.config(
     rules: {
       'react-hooks/rules-of-hooks': 'error',
       'react-hooks/exhaustive-deps': 'error',
-      'no-restricted-imports': ['error', { patterns: [{ group: ['express', 'knex', 'objection', 'pg', 'node:*'], message: 'The client runs in a browser.' }] }],
+      'no-restricted-imports': [
+        'error',
+        { patterns: [{ group: ['express', 'knex', 'objection', 'pg', 'node:*'], message: 'The client runs in a browser.' }] },
+      ],
     },
   },
   {

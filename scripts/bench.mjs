@@ -30,7 +30,9 @@ run(async () => {
 /** @param {string} program @returns {Promise<number>} its exit status */
 async function measure(program) {
   const given = process.env.BENCH_DATABASE_URL
-  const cluster = given ? null : await startThrowaway({ durable: process.env.BENCH_DURABLE !== 'false', settings: ['max_wal_size=4GB', 'shared_buffers=1GB'] })
+  const cluster = given
+    ? null
+    : await startThrowaway({ durable: process.env.BENCH_DURABLE !== 'false', settings: ['max_wal_size=4GB', 'shared_buffers=1GB'] })
   try {
     return await new Promise((resolve, reject) => {
       const child = spawn(process.execPath, ['--import', 'tsx', join('bench', program)], {

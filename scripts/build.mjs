@@ -47,7 +47,11 @@ function buildPart(part) {
   process.stdout.write(`Building the ${part.name}\n`)
   rmSync(stamp, { force: true })
   rmSync(output, { recursive: true, force: true })
-  const { status } = spawnSync(process.execPath, part.command, { cwd: ROOT, stdio: ['ignore', 2, 2], env: { ...process.env, NODE_ENV: 'production' } })
+  const { status } = spawnSync(process.execPath, part.command, {
+    cwd: ROOT,
+    stdio: ['ignore', 2, 2],
+    env: { ...process.env, NODE_ENV: 'production' },
+  })
   if (status !== 0) throw new PlainError(`The ${part.name} could not be built; the reason is above. The database was not touched.`)
   for (const folder of part.copied) copyOtherFiles(folder, output)
   mkdirSync(dirname(stamp), { recursive: true })
@@ -69,7 +73,11 @@ function copyOtherFiles(folder, output) {
 function digestOf(sources) {
   const hash = createHash('sha256')
   for (const source of sources) {
-    for (const file of filesUnder(join(ROOT, source))) hash.update(`${relative(ROOT, file)}\0`).update(readFileSync(file)).update('\0')
+    for (const file of filesUnder(join(ROOT, source)))
+      hash
+        .update(`${relative(ROOT, file)}\0`)
+        .update(readFileSync(file))
+        .update('\0')
   }
   return hash.digest('hex')
 }
@@ -78,5 +86,7 @@ function digestOf(sources) {
 function filesUnder(path) {
   if (!existsSync(path)) return []
   if (!statSync(path).isDirectory()) return [path]
-  return readdirSync(path).sort().flatMap((name) => filesUnder(join(path, name)))
+  return readdirSync(path)
+    .sort()
+    .flatMap((name) => filesUnder(join(path, name)))
 }

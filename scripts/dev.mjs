@@ -9,7 +9,16 @@ import { run } from './plain-error.mjs'
 import { ROOT } from './place.mjs'
 import { findFreePort } from './postgres/postmaster.mjs'
 import { claimCheckout } from './running.mjs'
-import { openDatabaseForCheckout, prepareDatabase, requirePort, serverEnvironment, spawnServer, stopChild, untilAnswering, wantedAddress } from './service.mjs'
+import {
+  openDatabaseForCheckout,
+  prepareDatabase,
+  requirePort,
+  serverEnvironment,
+  spawnServer,
+  stopChild,
+  untilAnswering,
+  wantedAddress,
+} from './service.mjs'
 import { superviseUntilStopped } from './supervise.mjs'
 import { greet } from './greet.mjs'
 
@@ -26,7 +35,13 @@ run(async () => {
   await superviseUntilStopped(cluster, async (whenStopping) => {
     const apiPort = await findFreePort()
     /** @type {NodeJS.ProcessEnv} */
-    const environment = { ...serverEnvironment(url), NODE_ENV: 'development', HOST: '127.0.0.1', PORT: String(apiPort), PUBLIC_URL: process.env.PUBLIC_URL || address }
+    const environment = {
+      ...serverEnvironment(url),
+      NODE_ENV: 'development',
+      HOST: '127.0.0.1',
+      PORT: String(apiPort),
+      PUBLIC_URL: process.env.PUBLIC_URL || address,
+    }
     const { accounts } = await prepareDatabase([TSX, 'server/maintenance/prepare.ts'], environment, whenStopping)
     const server = spawnServer([TSX, 'watch', '--clear-screen=false', 'server/index.ts'], environment)
     whenStopping(() => stopChild(server.child, server.ended))

@@ -10,7 +10,9 @@ const OLDEST_NODE = /** @type {const} */ ([20, 19])
 export function requireNode() {
   const [major = 0, minor = 0] = process.versions.node.split('.').map(Number)
   if (major > OLDEST_NODE[0] || (major === OLDEST_NODE[0] && minor >= OLDEST_NODE[1])) return
-  throw new PlainError(`Node.js ${OLDEST_NODE.join('.')} or newer is needed, this is ${process.versions.node}. Nothing was changed; install a newer one and run this again.`)
+  throw new PlainError(
+    `Node.js ${OLDEST_NODE.join('.')} or newer is needed, this is ${process.versions.node}. Nothing was changed; install a newer one and run this again.`,
+  )
 }
 
 /** Installs the npm packages of the lock file unless they are all there. */
@@ -18,8 +20,14 @@ export function ensurePackages() {
   if (installedMatchLock()) return
   process.stdout.write('Installing npm packages\n')
   // The packages that build the client are "dev" ones, which NODE_ENV=production would leave out.
-  const { status } = spawnSync('npm', ['ci', '--include=dev', '--no-audit', '--no-fund', '--loglevel=error'], { cwd: ROOT, stdio: ['ignore', 2, 2] })
-  if (status !== 0) throw new PlainError('npm could not install the packages; its messages are above. Nothing else was changed. Check the network and run this again.')
+  const { status } = spawnSync('npm', ['ci', '--include=dev', '--no-audit', '--no-fund', '--loglevel=error'], {
+    cwd: ROOT,
+    stdio: ['ignore', 2, 2],
+  })
+  if (status !== 0)
+    throw new PlainError(
+      'npm could not install the packages; its messages are above. Nothing else was changed. Check the network and run this again.',
+    )
 }
 
 /** @typedef {{ packages?: Record<string, { version?: string, optional?: boolean, link?: boolean }> }} Lock */

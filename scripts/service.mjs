@@ -19,7 +19,9 @@ export function wantedAddress() {
   const host = process.env.HOST || '127.0.0.1'
   const port = Number(process.env.PORT || 4180)
   if (!Number.isInteger(port) || port < 1 || port > 65_535) {
-    throw new PlainError(`PORT is "${process.env.PORT}", which is no port number. Nothing was started; set it to a whole number from 1 to 65535.`)
+    throw new PlainError(
+      `PORT is "${process.env.PORT}", which is no port number. Nothing was started; set it to a whole number from 1 to 65535.`,
+    )
   }
   const shown = host === '0.0.0.0' || host === '::' ? 'localhost' : host.includes(':') ? `[${host}]` : host
   return { host, port, address: `http://${shown}:${port}` }
@@ -45,8 +47,10 @@ export async function requirePort(host, port) {
 
 /** @param {string} code @param {string} host @param {number} port */
 function portSentence(code, host, port) {
-  if (code === 'EADDRINUSE') return `Port ${port} is in use by another program. Nothing was started; stop that program or choose another port: PORT=${port + 1} npm start`
-  if (code === 'EACCES') return `This user may not listen on port ${port}. Nothing was started; choose a port above 1023: PORT=4180 npm start`
+  if (code === 'EADDRINUSE')
+    return `Port ${port} is in use by another program. Nothing was started; stop that program or choose another port: PORT=${port + 1} npm start`
+  if (code === 'EACCES')
+    return `This user may not listen on port ${port}. Nothing was started; choose a port above 1023: PORT=4180 npm start`
   return `The server cannot listen on ${host}, port ${port} (${code}). Nothing was started; set HOST and PORT to an address of this machine.`
 }
 
@@ -112,7 +116,9 @@ export async function prepareDatabase(words, environment, whenStopping) {
   const status = await ended
   const line = said.trim().split('\n').at(-1)
   if (status !== 0 || !line) {
-    throw new PlainError('The database could not be brought up to date; the reason is above. Each step either happened whole or not at all; mend the cause and start again.')
+    throw new PlainError(
+      'The database could not be brought up to date; the reason is above. Each step either happened whole or not at all; mend the cause and start again.',
+    )
   }
   return JSON.parse(line)
 }
@@ -143,11 +149,18 @@ export async function untilAnswering(address, ended) {
   void ended.then(() => (gone = true))
   const deadline = Date.now() + 60_000
   while (!gone && Date.now() < deadline) {
-    const answered = await fetch(`${address}/api/health`, { signal: AbortSignal.timeout(5_000) }).then(() => true, () => false)
+    const answered = await fetch(`${address}/api/health`, { signal: AbortSignal.timeout(5_000) }).then(
+      () => true,
+      () => false,
+    )
     if (answered) return
     await pause(100)
   }
-  throw new PlainError(gone ? 'The server ended during its start; the reason is above. The data are safe.' : `The server did not answer at ${address} within a minute. The data are safe; look at its messages above.`)
+  throw new PlainError(
+    gone
+      ? 'The server ended during its start; the reason is above. The data are safe.'
+      : `The server did not answer at ${address} within a minute. The data are safe; look at its messages above.`,
+  )
 }
 
 /**

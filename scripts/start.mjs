@@ -5,7 +5,16 @@
 import { ensurePackages, requireNode } from './packages.mjs'
 import { run } from './plain-error.mjs'
 import { claimCheckout } from './running.mjs'
-import { openDatabaseForCheckout, prepareDatabase, requirePort, serverEnvironment, spawnServer, stopChild, untilAnswering, wantedAddress } from './service.mjs'
+import {
+  openDatabaseForCheckout,
+  prepareDatabase,
+  requirePort,
+  serverEnvironment,
+  spawnServer,
+  stopChild,
+  untilAnswering,
+  wantedAddress,
+} from './service.mjs'
 import { buildWhenStale } from './build.mjs'
 import { superviseUntilStopped } from './supervise.mjs'
 import { greet } from './greet.mjs'
@@ -20,7 +29,11 @@ run(async () => {
   const { url, cluster } = await openDatabaseForCheckout()
   await superviseUntilStopped(cluster, async (whenStopping) => {
     const environment = serverEnvironment(url)
-    const { accounts } = await prepareDatabase(['--enable-source-maps', 'dist/server/server/maintenance/prepare.js'], environment, whenStopping)
+    const { accounts } = await prepareDatabase(
+      ['--enable-source-maps', 'dist/server/server/maintenance/prepare.js'],
+      environment,
+      whenStopping,
+    )
     const { child, ended } = spawnServer(['--enable-source-maps', 'dist/server/server/index.js'], environment)
     whenStopping(() => stopChild(child, ended))
     await untilAnswering(address, ended)

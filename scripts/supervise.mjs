@@ -44,7 +44,10 @@ export async function superviseUntilStopped(cluster, begin) {
     const ended = begin((stop) => stops.push(stop))
     const why = await Promise.race([asked, ended])
     if (why === 'asked') process.stdout.write('\nStopping.\n')
-    else throw new PlainError(`The server ended by itself (status ${why}); its messages are above. The data are safe. Start it again with npm start.`)
+    else
+      throw new PlainError(
+        `The server ended by itself (status ${why}); its messages are above. The data are safe. Start it again with npm start.`,
+      )
   } finally {
     await stopAll()
   }

@@ -61,7 +61,12 @@ async function runVitest(words) {
   const report = join(folder, 'report.json')
   try {
     const status = await spawned(process.execPath, [
-      'node_modules/vitest/vitest.mjs', 'run', '--reporter=default', '--reporter=json', `--outputFile.json=${report}`, ...words,
+      'node_modules/vitest/vitest.mjs',
+      'run',
+      '--reporter=default',
+      '--reporter=json',
+      `--outputFile.json=${report}`,
+      ...words,
     ])
     const counts = readReport(report)
     // A file that cannot be loaded, an error outside any test, or a crash fails no test; it must fail the run.

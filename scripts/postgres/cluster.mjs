@@ -5,7 +5,7 @@ import { PlainError } from '../plain-error.mjs'
 import { requirePostgres } from './binaries.mjs'
 import { ROLE, createCluster, readAccess, writeAccess } from './create.mjs'
 import { asOwner, databaseOwner, makeOwnedFolder, ownerOf } from './owner.mjs'
-import { findFreePort, isAlive, isFreePort, pause, processesOf, readPidFile, servesFolder } from './postmaster.mjs'
+import { answersAt, findFreePort, isAlive, isFreePort, pause, processesOf, readPidFile, servesFolder } from './postmaster.mjs'
 
 /** How long a start may take: recovery after a crash included. */
 const START_LIMIT_MS = 120_000
@@ -46,14 +46,28 @@ export async function ensureCluster({ home, port, durable = true, mayCreateDatab
     createCluster({ dataFolder, binaries, owner, port: port ?? (await findFreePort()), mayCreateDatabases, durable })
   }
   const owner = ownerOf(dataFolder)
-  const running = readPidFile(dataFolder)
-  if (running && servesFolder(running.pid, dataFolder)) {
-    await untilReady(dataFolder, running.pid, join(home, 'postgres.log'))
-    return describe(dataFolder, false)
-  }
+  if (await joinRunning(dataFolder, join(home, 'postgres.log'))) return describe(dataFolder, false)
   await clearStalePidFile(dataFolder)
   await launch({ home, dataFolder, owner, durable, settings })
   return describe(dataFolder, true)
+}
+
+/**
+ * Whether a server of this folder is running and well. One that is starting, stopping or dying is waited for: a killed process
+ * looks alive for a moment, so only an answer at its port counts.
+ * @param {string} dataFolder
+ * @param {string} log
+ * @returns {Promise<boolean>}
+ */
+async function joinRunning(dataFolder, log) {
+  const deadline = Date.now() + START_LIMIT_MS
+  for (;;) {
+    const running = readPidFile(dataFolder)
+    if (!running || !servesFolder(running.pid, dataFolder)) return false
+    if (running.ready && (await answersAt(running.port))) return true
+    if (Date.now() > deadline) throw startFailed(log, 'a server of this folder is running but not ready')
+    await pause(50)
+  }
 }
 
 /**

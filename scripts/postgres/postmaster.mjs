@@ -1,5 +1,5 @@
 import { readFileSync, readdirSync, readlinkSync, realpathSync } from 'node:fs'
-import { createServer } from 'node:net'
+import { connect, createServer } from 'node:net'
 import { join } from 'node:path'
 
 /**
@@ -53,6 +53,28 @@ export function isAlive(pid) {
   } catch (error) {
     return /** @type {NodeJS.ErrnoException} */ (error).code === 'EPERM'
   }
+}
+
+/**
+ * Whether a PostgreSQL server answers at this loopback port: it is asked whether it speaks TLS, which needs no password.
+ * @param {number} port
+ * @returns {Promise<boolean>}
+ */
+export function answersAt(port) {
+  return new Promise((resolve) => {
+    const socket = connect({ port, host: '127.0.0.1', timeout: 2_000 })
+    const settle = (/** @type {boolean} */ answer) => {
+      socket.destroy()
+      resolve(answer)
+    }
+    // The SSLRequest message of the frontend/backend protocol: length 8, code 80877103; the answer is one letter.
+    socket.once('connect', () => socket.write(Buffer.from([0, 0, 0, 8, 4, 210, 22, 47])))
+    socket.once('data', (answer) => settle(/^[SN]/.test(answer.toString('latin1'))))
+    socket
+      .once('error', () => settle(false))
+      .once('timeout', () => settle(false))
+      .once('end', () => settle(false))
+  })
 }
 
 /** @param {number} port @returns {Promise<boolean>} */

@@ -27,11 +27,15 @@ export async function startThrowaway({ durable = false, settings = [] } = {}) {
   const parent = throwawayParent()
   await removeAbandoned(parent)
   const home = join(parent, `vicinage-throwaway-${process.pid}-${randomBytes(4).toString('hex')}`)
-  const keeper = spawn(process.execPath, [fileURLToPath(new URL('throwaway-keeper.mjs', import.meta.url)), JSON.stringify({ home, durable, settings })], {
-    stdio: ['pipe', 'pipe', 'inherit'],
-    detached: true,
-    cwd: '/',
-  })
+  const keeper = spawn(
+    process.execPath,
+    [fileURLToPath(new URL('throwaway-keeper.mjs', import.meta.url)), JSON.stringify({ home, durable, settings })],
+    {
+      stdio: ['pipe', 'pipe', 'inherit'],
+      detached: true,
+      cwd: '/',
+    },
+  )
   const ended = new Promise((resolve) => keeper.once('exit', resolve))
   const line = await new Promise((resolve, reject) => {
     let text = ''

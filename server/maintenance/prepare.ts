@@ -22,11 +22,17 @@ export interface Prepared {
 async function settleDemonstrationAccounts(knex: Knex, password: string): Promise<string[]> {
   const accounts: { id: number; email: string; passwordHash: string }[] = await knex('users')
     .select('id', 'email', 'passwordHash')
-    .whereIn('email', DEMONSTRATION_ACCOUNTS.map(({ email }) => email))
+    .whereIn(
+      'email',
+      DEMONSTRATION_ACCOUNTS.map(({ email }) => email),
+    )
     .where({ state: 'active' })
     .orderBy('id')
   for (const { id, passwordHash } of accounts) {
-    if (!(await verify(passwordHash, password))) await knex('users').where({ id }).update({ passwordHash: await hash(password) })
+    if (!(await verify(passwordHash, password)))
+      await knex('users')
+        .where({ id })
+        .update({ passwordHash: await hash(password) })
   }
   return accounts.map(({ email }) => email)
 }
@@ -34,7 +40,10 @@ async function settleDemonstrationAccounts(knex: Knex, password: string): Promis
 async function prepare(): Promise<Prepared> {
   const config = loadConfig()
   // For a person at a terminal: sentences on standard error, not JSON.
-  const log = pino({ level: config.logLevel }, { write: (line: string) => process.stderr.write(`${(JSON.parse(line) as { msg: string }).msg}\n`) })
+  const log = pino(
+    { level: config.logLevel },
+    { write: (line: string) => process.stderr.write(`${(JSON.parse(line) as { msg: string }).msg}\n`) },
+  )
   const knex = openDatabase({ databaseUrl: config.databaseUrl, purpose: 'upkeep', connections: 4 })
   try {
     const migrated = await migrateToLatest(knex)

@@ -22,7 +22,13 @@ export async function openBrowser(): Promise<TestBrowser> {
     browser,
     complaints,
     newPage: async (options = {}) => {
-      const context = await browser.newContext({ viewport: { width: 1280, height: 800 }, locale: 'en-GB', timezoneId: 'UTC', acceptDownloads: true, ...options })
+      const context = await browser.newContext({
+        viewport: { width: 1280, height: 800 },
+        locale: 'en-GB',
+        timezoneId: 'UTC',
+        acceptDownloads: true,
+        ...options,
+      })
       context.setDefaultTimeout(15_000)
       listenForComplaints(context, complaints)
       return context.newPage()

@@ -27,6 +27,7 @@ export default async function setup(): Promise<(() => Promise<void>) | undefined
 async function dropDatabases(which: (name: string) => boolean): Promise<void> {
   await administer(async (client) => {
     const { rows } = await client.query<{ datname: string }>('select datname from pg_database')
-    for (const { datname } of rows.filter((row) => which(row.datname))) await client.query(`drop database if exists ${datname} with (force)`)
+    for (const { datname } of rows.filter((row) => which(row.datname)))
+      await client.query(`drop database if exists ${datname} with (force)`)
   })
 }
