@@ -1,9 +1,9 @@
 import { ArrowDown, ArrowUp } from 'lucide-react'
 import { Button, Focusable } from 'react-aria-components'
 import { classNames } from '../lib/class-names.ts'
-import { unitText } from '../lib/format.ts'
 import { isNumeric, type DataColumn, type SortState } from './data-column.ts'
 import { Tooltip } from './tooltip.tsx'
+import { Unit } from './unit.tsx'
 
 export interface DataTableHeadProps<Row> {
   columns: readonly DataColumn<Row>[]
@@ -37,6 +37,9 @@ export function DataTableHead<Row>({ columns, sort, onSort }: DataTableHeadProps
   )
 }
 
+/** As tall as a head with a button, so that all stand on one line. */
+const PLAIN_HEAD = 'inline-flex min-h-6 max-w-full items-center gap-1'
+
 interface HeadCellProps<Row> {
   column: DataColumn<Row>
   sorted: SortState['direction'] | undefined
@@ -47,16 +50,16 @@ function HeadCell<Row>({ column, sorted, onSort }: HeadCellProps<Row>) {
   const words = (
     <>
       <span className="truncate">{column.header}</span>
-      {column.unit && <span className="font-normal">{unitText(column.unit)}</span>}
+      {column.unit && <span className="font-normal"><Unit unit={column.unit} /></span>}
     </>
   )
   if (!column.sortable) {
-    const plain = <span className="inline-flex max-w-full items-baseline gap-1">{words}</span>
+    const plain = <span className={PLAIN_HEAD}>{words}</span>
     if (!column.help) return plain
     return (
       <Tooltip text={column.help} placement="bottom">
         <Focusable>
-          <span tabIndex={-1} role="note" className="inline-flex max-w-full items-baseline gap-1">
+          <span tabIndex={-1} role="note" className={PLAIN_HEAD}>
             {words}
           </span>
         </Focusable>

@@ -1,3 +1,4 @@
+import type { ScaleLinear } from 'd3-scale'
 import type { ReactNode } from 'react'
 import { formatMeasure, formatNumber } from '../lib/format.ts'
 import { useWidth } from '../lib/use-width.ts'
@@ -37,6 +38,8 @@ export function DotWhiskerPlot({ title, rows, band, axis, alt, fileName, note, l
   const { scale, ticks } = linearAxis(Math.min(...ends), Math.max(...ends), left, right)
   const bottom = TOP + rows.length * rowHeight
   const height = bottom + AXIS_HEIGHT
+  // Where labels stand above their rows, the band is drawn beside the marks only, so that no word lies on it.
+  const bandPieces = isNarrow ? rows.map((_, index): [number, number] => [TOP + index * rowHeight + 30, TOP + (index + 1) * rowHeight + 2]) : [[TOP - 4, bottom + 4] satisfies [number, number]]
   const axisWords = axis.unit ? `${axis.label} / ${axis.unit}` : axis.label
 
   if (rows.length === 0) return null
@@ -44,8 +47,7 @@ export function DotWhiskerPlot({ title, rows, band, axis, alt, fileName, note, l
     <PlotFrame title={title} fileName={fileName} note={note} level={level} alt={alt ?? inWords(rows, band, axis.label, axis.unit, decimals)} table={<Numbers title={title} rows={rows} unit={axis.unit} decimals={decimals} />}>
       <div ref={frame} className="w-full">
         <svg aria-hidden width={width} height={height} viewBox={`0 0 ${width} ${height}`} className="block max-w-full font-sans">
-          {band && <rect x={scale(band.lo)} y={TOP - 4} width={Math.max(1, scale(band.hi) - scale(band.lo))} height={bottom - TOP + 8} className="fill-accent opacity-15" />}
-          {band && <line x1={scale(band.value)} x2={scale(band.value)} y1={TOP - 8} y2={bottom + 8} strokeWidth={1.6} className="stroke-accent" />}
+          {band && bandPieces.map(([from, to]) => <AdoptedBand key={from} band={band} from={from} to={to} scale={scale} />)}
           {rows.map((row, index) => (
             <DotWhiskerRow key={row.id} row={row} top={TOP + index * rowHeight} height={rowHeight} width={width} isNarrow={isNarrow} scale={scale} labelWidth={left - 12} />
           ))}
@@ -63,6 +65,22 @@ export function DotWhiskerPlot({ title, rows, band, axis, alt, fileName, note, l
         </svg>
       </div>
     </PlotFrame>
+  )
+}
+
+interface AdoptedBandProps {
+  band: { value: number; lo: number; hi: number }
+  from: number
+  to: number
+  scale: ScaleLinear<number, number>
+}
+
+function AdoptedBand({ band, from, to, scale }: AdoptedBandProps) {
+  return (
+    <>
+      <rect x={scale(band.lo)} y={from} width={Math.max(1, scale(band.hi) - scale(band.lo))} height={to - from} className="fill-accent opacity-15" />
+      <line x1={scale(band.value)} x2={scale(band.value)} y1={from} y2={to} strokeWidth={1.6} className="stroke-accent" />
+    </>
   )
 }
 

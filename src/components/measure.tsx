@@ -1,5 +1,6 @@
-import { formatMeasure, formatNumber, MISSING, unitText, type MeasureParts } from '../lib/format.ts'
+import { formatMeasure, formatNumber, MISSING, NBSP, unitText, type MeasureParts } from '../lib/format.ts'
 import { classNames } from '../lib/class-names.ts'
+import { Unit } from './unit.tsx'
 
 export interface MeasureProps extends MeasureParts {
   /** `large`: the adopted value at the head of a sheet. */
@@ -42,16 +43,16 @@ export function Measure({ value, plus, minus, unit, decimals = 2, size = 'text',
       <span aria-hidden className={large ? 'text-2xl' : undefined}>
         {formatNumber(value, decimals)}
       </span>
-      {hasErrors && !apart && <span aria-hidden className={large ? 'ml-1.5 text-lg text-muted' : 'ml-1'}>{`±\u2009${above}`}</span>}
+      {hasErrors && !apart && <span aria-hidden className={large ? 'ml-1.5 text-lg text-muted' : 'ml-1'}>{`±${NBSP}${above}`}</span>}
       {apart && (
-        <span aria-hidden className={classNames('ml-1 inline-flex flex-col text-muted', large ? 'text-base leading-[1.15]' : 'text-[0.75em] leading-[1.12]')}>
+        <span aria-hidden className={classNames('ml-1 inline-flex flex-col text-muted', large ? 'text-base leading-[1.1]' : 'text-[0.75em] leading-[1.12]')}>
           <span>+{above}</span>
           <span>−{below}</span>
         </span>
       )}
       {shownUnit && (
         <span aria-hidden className={classNames('ml-1 text-muted', large && 'text-lg')}>
-          {shownUnit}
+          <Unit unit={shownUnit} />
         </span>
       )}
     </span>

@@ -23,7 +23,7 @@ export function Sheet({ title, actions, children, as: Element = 'section', level
       {(title || actions) && (
         <div className={classNames('flex flex-wrap items-baseline justify-between gap-x-4 gap-y-1', flush ? 'px-4 pt-4 pb-3 sm:px-6' : 'mb-3')}>
           {title ? <Heading className="text-lg">{title}</Heading> : <span />}
-          {actions && <div className="flex flex-wrap items-center gap-2">{actions}</div>}
+          {actions && <div className="-my-1.5 flex flex-wrap items-center gap-2">{actions}</div>}
         </div>
       )}
       {children}

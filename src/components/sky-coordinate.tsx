@@ -1,6 +1,7 @@
 import { Copy } from 'lucide-react'
 import { classNames } from '../lib/class-names.ts'
 import { copyText } from '../lib/clipboard.ts'
+import { NBSP } from '../lib/format.ts'
 import { declinationParts, rightAscensionParts } from '../lib/sexagesimal.ts'
 import { IconButton } from './icon-button.tsx'
 import { Missing } from './measure.tsx'
@@ -28,12 +29,12 @@ export function SkyCoordinate({ ra, dec, copy = true, className }: SkyCoordinate
       <span aria-hidden className="whitespace-nowrap">
         {alpha.units}
         <sup>h</sup>
-        {`\u202f${alpha.minutes}`}
+        <span className="ml-1">{alpha.minutes}</span>
         <sup>m</sup>
-        {`\u202f${alpha.seconds}`}
+        <span className="ml-1">{alpha.seconds}</span>
         <sup>s</sup>
       </span>
-      <span aria-hidden className="whitespace-nowrap">{`${delta.sign}${delta.units}°\u202f${delta.minutes}′\u202f${delta.seconds}″`}</span>
+      <span aria-hidden className="whitespace-nowrap">{`${delta.sign}${delta.units}°${NBSP}${delta.minutes}′${NBSP}${delta.seconds}″`}</span>
       {copy && (
         <IconButton
           label="Copy as decimal degrees, ICRS"

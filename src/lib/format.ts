@@ -4,6 +4,8 @@
 export const MINUS = '\u2212'
 /** U+202F, a thin space that does not break: between value and unit, and between thousands. */
 export const THIN = '\u202f'
+/** A space that does not break, where a thin one would vanish: round ± and within units. */
+export const NBSP = '\u00a0'
 /** What stands for a missing value. */
 export const MISSING = '—'
 
@@ -56,10 +58,10 @@ export function formatMeasure({ value, plus, minus, unit, decimals = 2 }: Measur
   if (up != null && down != null) {
     const above = formatNumber(up, decimals)
     const below = formatNumber(down, decimals)
-    parts.push(above === below ? `±${THIN}${above}` : `+${above}${THIN}${MINUS}${below}`)
+    parts.push(above === below ? `±${NBSP}${above}` : `+${above}${NBSP}${MINUS}${below}`)
   }
   if (unit) parts.push(unit)
-  return parts.join(THIN)
+  return parts.join(NBSP)
 }
 
 const DAY = new Intl.DateTimeFormat('en-GB', { day: 'numeric', month: 'short', year: 'numeric' })
@@ -119,11 +121,11 @@ export function formatBytes(bytes: number): string {
 }
 
 const UNIT_WORDS: Record<string, string> = {
-  'km/s': `km${THIN}s⁻¹`,
+  'km/s': `km${NBSP}s⁻¹`,
   deg: '°',
   arcmin: 'arcmin',
-  'mag/arcsec2': `mag${THIN}arcsec⁻²`,
-  'Jy km/s': `Jy${THIN}km${THIN}s⁻¹`,
+  'mag/arcsec2': `mag${NBSP}arcsec⁻²`,
+  'Jy km/s': `Jy${NBSP}km${NBSP}s⁻¹`,
   'log(solMass)': 'log M☉',
 }
 
