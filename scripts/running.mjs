@@ -1,4 +1,4 @@
-import { mkdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs'
+import { accessSync, constants, mkdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs'
 import { join } from 'node:path'
 import { PlainError } from './plain-error.mjs'
 import { DATA } from './place.mjs'
@@ -11,7 +11,14 @@ const NOTE = join(DATA, 'running.json')
  * @param {string} address
  */
 export function claimCheckout(address) {
-  mkdirSync(DATA, { recursive: true })
+  try {
+    mkdirSync(DATA, { recursive: true })
+    accessSync(DATA, constants.W_OK)
+  } catch {
+    throw new PlainError(
+      `This user may not write to ${DATA}, where the database and its secrets are kept. Nothing was changed. Start as the user who owns this checkout.`,
+    )
+  }
   const note = JSON.stringify({ pid: process.pid, begun: begunAt(process.pid), address })
   for (let attempt = 0; attempt < 3; attempt += 1) {
     try {

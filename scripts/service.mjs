@@ -8,6 +8,8 @@ import { checkoutSecrets } from './secrets.mjs'
 
 /** How long requests in flight may take to end when the server is told to stop. */
 const STOP_LIMIT_MS = 15_000
+/** How the preparation ends when it has printed a sentence about what is wrong. */
+const EXPLAINED = 2
 /** A server whose starter was killed needs a moment to notice and let go of the port. */
 const PORT_PATIENCE_MS = 6_000
 
@@ -106,7 +108,7 @@ export function serverEnvironment(databaseUrl) {
 export async function prepareDatabase(words, environment, whenStopping) {
   const child = spawn(process.execPath, words, {
     cwd: ROOT,
-    env: { ...environment, LOG_LEVEL: 'info' },
+    env: environment,
     stdio: ['ignore', 'pipe', 'inherit'],
   })
   let said = ''
@@ -115,6 +117,7 @@ export async function prepareDatabase(words, environment, whenStopping) {
   whenStopping?.(() => stopChild(child, ended))
   const status = await ended
   const line = said.trim().split('\n').at(-1)
+  if (status === EXPLAINED) throw new PlainError('Nothing was started, and no data were changed.')
   if (status !== 0 || !line) {
     throw new PlainError(
       'The database could not be brought up to date; the reason is above. Each step either happened whole or not at all; mend the cause and start again.',

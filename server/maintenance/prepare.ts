@@ -40,10 +40,7 @@ async function settleDemonstrationAccounts(knex: Knex, password: string): Promis
 async function prepare(): Promise<Prepared> {
   const config = loadConfig()
   // For a person at a terminal: sentences on standard error, not JSON.
-  const log = pino(
-    { level: config.logLevel },
-    { write: (line: string) => process.stderr.write(`${(JSON.parse(line) as { msg: string }).msg}\n`) },
-  )
+  const log = pino({ level: 'info' }, { write: (line: string) => process.stderr.write(`${(JSON.parse(line) as { msg: string }).msg}\n`) })
   const knex = openDatabase({ databaseUrl: config.databaseUrl, purpose: 'upkeep', connections: 4 })
   try {
     const migrated = await migrateToLatest(knex)
@@ -55,10 +52,35 @@ async function prepare(): Promise<Prepared> {
   }
 }
 
+/** Faults that are in the settings or in the database's keeping, not in this program: a sentence for each, by PostgreSQL's or the system's code. */
+const SENTENCES: Readonly<Record<string, string>> = {
+  ECONNREFUSED: 'no server listens at its address; start it, or correct the address',
+  ENOTFOUND: 'its host name is not known; correct the address',
+  ETIMEDOUT: 'its address does not answer; check the network and the address',
+  '28P01': 'it refused the password; correct the address',
+  '28000': 'it refused this user; correct the address or let the user in',
+  '3D000': 'the server has no database of that name; create it first',
+  '42501': 'the role may not do something it must; make it the owner of the database',
+  '53300': 'it has no connection left; free some or allow more',
+}
+
+function sentenceFor(error: unknown): string | null {
+  if (error instanceof ConfigError) return error.message
+  const code = error instanceof Error && 'code' in error ? String(error.code) : ''
+  const reason = SENTENCES[code]
+  return reason === undefined
+    ? null
+    : `The database of DATABASE_URL cannot be used: ${reason}. (${error instanceof Error && error.message ? error.message : code})`
+}
+
+/** The exit status that means: a sentence has been printed, and nothing more needs to be said. */
+const EXPLAINED = 2
+
 try {
   process.stdout.write(`${JSON.stringify(await prepare())}\n`)
 } catch (error) {
-  if (!(error instanceof ConfigError)) throw error
-  process.stderr.write(`${error.message}\n`)
-  process.exitCode = 1
+  const sentence = sentenceFor(error)
+  if (sentence === null) throw error
+  process.stderr.write(`${sentence}\n`)
+  process.exitCode = EXPLAINED
 }
