@@ -2,7 +2,6 @@
  * `npm run dev`: the same site with hot reload. Vite serves the client at PORT and hands /api to the server, which `tsx watch`
  * restarts when a file of it changes.
  */
-import { spawn } from 'node:child_process'
 import { join } from 'node:path'
 import { ensurePackages, requireNode } from './packages.mjs'
 import { run } from './plain-error.mjs'
@@ -45,16 +44,14 @@ run(async () => {
     const { accounts } = await prepareDatabase([TSX, 'server/maintenance/prepare.ts'], environment, whenStopping)
     const server = spawnServer([TSX, 'watch', '--clear-screen=false', 'server/index.ts'], environment)
     whenStopping(() => stopChild(server.child, server.ended))
-    const vite = spawn(process.execPath, [VITE, '--port', String(port), '--host', host, '--clearScreen', 'false', '--logLevel', 'warn'], {
-      cwd: ROOT,
-      env: { ...process.env, NODE_ENV: 'development', API_PORT: String(apiPort) },
-      stdio: ['ignore', 'inherit', 'inherit'],
-      detached: true,
+    const vite = spawnServer([VITE, '--port', String(port), '--host', host, '--clearScreen', 'false', '--logLevel', 'warn'], {
+      ...process.env,
+      NODE_ENV: 'development',
+      API_PORT: String(apiPort),
     })
-    const viteEnded = new Promise((/** @type {(code: number) => void} */ resolve) => vite.once('exit', (code) => resolve(code ?? 1)))
-    whenStopping(() => stopChild(vite, viteEnded))
+    whenStopping(() => stopChild(vite.child, vite.ended))
     await untilAnswering(`http://127.0.0.1:${apiPort}`, server.ended)
     greet({ address, accounts, password: environment.DEMO_PASSWORD ?? '', cluster })
-    return Promise.race([server.ended, viteEnded])
+    return Promise.race([server.ended, vite.ended])
   })
 })
