@@ -1,0 +1,51 @@
+import { useState } from 'react'
+import { useSearchParams } from 'react-router-dom'
+import { changePayloadSchemas } from '../../../core/schema/changes.ts'
+import { Button } from '../../components/button.tsx'
+import type { PickedGalaxy } from '../../components/curation/galaxy-picker.tsx'
+import { ProblemNote } from '../../components/failed-state.tsx'
+import { TextField } from '../../components/text-field.tsx'
+import type { ChangeFormProps } from './change-forms.tsx'
+import { errorAt } from './form-errors.ts'
+import { useGalaxyAsked } from './galaxy-asked.ts'
+import { MeasurementPicker } from './measurement-picker.tsx'
+
+const schema = changePayloadSchemas['measurement.exclude']
+
+/** Takes a measurement out of adoption, with the reason. It stays visible. */
+export function ExcludeForm({ change, onSave, isSaving, error }: ChangeFormProps<'measurement.exclude'>) {
+  const [search] = useSearchParams()
+  const asked = useGalaxyAsked()
+  const before = change ? schema.parse(change.payload) : null
+  const [galaxy, setGalaxy] = useState<PickedGalaxy | null>(change?.galaxy ?? asked)
+  const [id, setId] = useState<number | null>(before?.measurementId ?? (Number(search.get('measurement')) || null))
+  const [reason, setReason] = useState(before?.reason ?? '')
+  const [tried, setTried] = useState(false)
+  const parsed = schema.safeParse({ measurementId: id ?? undefined, reason })
+  const issues = tried && !parsed.success ? parsed.error.issues : []
+  const save = async (): Promise<void> => {
+    setTried(true)
+    if (!parsed.success) return
+    if ((await onSave({ action: 'measurement.exclude', payload: parsed.data })) && !change) {
+      setId(null)
+      setReason('')
+      setTried(false)
+    }
+  }
+  return (
+    <form
+      className="grid gap-4"
+      onSubmit={(event) => {
+        event.preventDefault()
+        void save()
+      }}
+    >
+      {!change && <MeasurementPicker galaxy={galaxy} onGalaxy={setGalaxy} value={id} onChange={(m) => setId(m.id)} error={tried && id === null ? 'Choose the measurement.' : undefined} />}
+      <TextField label="Reason" value={reason} onChange={setReason} error={errorAt(issues, error, 'reason')} help="Shown wherever the measurement is: wrong object; superseded calibration; blended with a star" />
+      {error ? <ProblemNote error={error} safe="What you typed is kept." /> : null}
+      <div>
+        <Button type="submit" kind="primary" isPending={isSaving}>{change ? 'Save' : 'Add to the draft'}</Button>
+      </div>
+    </form>
+  )
+}
