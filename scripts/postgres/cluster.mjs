@@ -1,5 +1,5 @@
 import { spawn } from 'node:child_process'
-import { closeSync, existsSync, openSync, readFileSync, rmSync, statSync } from 'node:fs'
+import { closeSync, existsSync, openSync, readFileSync, renameSync, rmSync, statSync } from 'node:fs'
 import { join } from 'node:path'
 import { PlainError } from '../plain-error.mjs'
 import { requirePostgres } from './binaries.mjs'
@@ -9,6 +9,8 @@ import { answersAt, findFreePort, isAlive, isFreePort, pause, processesOf, readP
 
 /** How long a start may take: recovery after a crash included. */
 const START_LIMIT_MS = 120_000
+/** A longer log is set aside at the next start; one older log is kept. */
+const LOG_LIMIT_BYTES = 10_000_000
 /** How long a clean stop may take before the server is told to leave at once (which is safe, recovery is only slower). */
 const STOP_LIMIT_MS = 30_000
 
@@ -119,6 +121,7 @@ async function launch({ home, dataFolder, owner, durable, settings }) {
   const binaries = requirePostgres(Number(readFileSync(join(dataFolder, 'PG_VERSION'), 'utf8')))
   const log = join(home, 'postgres.log')
   const deadline = Date.now() + START_LIMIT_MS
+  if (existsSync(log) && statSync(log).size > LOG_LIMIT_BYTES) renameSync(log, `${log}.old`)
   const access = readAccess(dataFolder)
   if (!(await isFreePort(access.port))) access.port = await findFreePort()
   for (;;) {
