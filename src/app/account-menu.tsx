@@ -57,7 +57,7 @@ export function AccountMenu() {
       </span>
     </Button>
   ) : (
-    <Button kind="plain" aria-label="Account and settings" className="px-2!">
+    <Button kind="plain" aria-label="Sign in and settings" className="px-2!">
       <CircleUser size={18} aria-hidden />
       <span className="hidden sm:inline">{state === 'loading' ? '' : 'Sign in'}</span>
     </Button>

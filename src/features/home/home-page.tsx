@@ -1,4 +1,5 @@
 import type { ReactNode } from 'react'
+import { GALAXY_CLASSES } from '../../../core/classes.ts'
 import type { Summary } from '../../../core/schema/catalogue.ts'
 import { useSession } from '../../api/session.ts'
 import { useSummary } from '../../api/summary.ts'
@@ -18,7 +19,10 @@ import { SkyInvitation } from './sky-invitation.tsx'
 export default function HomePage() {
   useDocumentTitle('')
   const summary = useSummary()
-  const { user } = useSession()
+  const session = useSession()
+  const { user } = session
+  // What is shown depends on who reads: nothing is filled in before that is known, so that nothing moves.
+  const ready = session.state === 'loading' ? undefined : summary.data
   return (
     <div className="page">
       <PageHeader
@@ -32,11 +36,15 @@ export default function HomePage() {
           Galaxies will be here with their distances, hosts and sources. Begin with a submission: a galaxy, or a paper’s whole table.
         </EmptyState>
       ) : (
-        <Glance summary={summary.data} signedIn={user !== null} />
+        <Glance summary={ready} signedIn={user !== null} />
       )}
     </div>
   )
 }
+
+const RECENT_SHOWN = 5
+/** Two lines of text and the rule below, px. */
+const LINE_HEIGHT = 59
 
 function Glance({ summary, signedIn }: { summary: Summary | undefined; signedIn: boolean }) {
   return (
@@ -44,7 +52,7 @@ function Glance({ summary, signedIn }: { summary: Summary | undefined; signedIn:
       <div className="flex min-w-0 flex-col gap-6">
         <SkyInvitation />
         <div className="grid gap-6 md:grid-cols-2">
-          <Sheet title="What changed lately">{summary ? <Recent recent={summary.recent} /> : <Skeleton lines={5} />}</Sheet>
+          <Sheet title="What changed lately">{summary ? <Recent recent={summary.recent.slice(0, RECENT_SHOWN)} /> : <Skeleton height={RECENT_SHOWN * LINE_HEIGHT} />}</Sheet>
           {signedIn ? (
             <Sheet title="Waiting for you">{summary ? <Waiting waiting={summary.waiting} /> : <Skeleton lines={5} />}</Sheet>
           ) : (
@@ -61,7 +69,7 @@ function Glance({ summary, signedIn }: { summary: Summary | undefined; signedIn:
             <Figure label="sources" value={summary?.sources} to={paths.sources} />
           </dl>
         </Sheet>
-        <Sheet title="By class">{summary ? <ClassCounts counts={summary.byClass} /> : <Skeleton lines={9} />}</Sheet>
+        <Sheet title="By class">{summary ? <ClassCounts counts={summary.byClass} /> : <Skeleton lines={GALAXY_CLASSES.length} />}</Sheet>
         {signedIn && <Sheet title="Newest release">{summary ? <Release release={summary.release} /> : <Skeleton lines={3} />}</Sheet>}
       </div>
     </div>

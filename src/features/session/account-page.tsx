@@ -99,7 +99,7 @@ function DeviceSettings() {
           { id: 'comfortable', label: 'comfortable' },
         ]}
       />
-      <Switch isSelected={single === 'on'} onChange={(on) => setSingle(on ? 'on' : 'off')} help="Such as j and k. Ctrl K and ? in the account menu always work.">
+      <Switch isSelected={single === 'on'} onChange={(on) => setSingle(on ? 'on' : 'off')} help="Such as j and k. Ctrl K stays, and the list of keys is in the account menu.">
         Single-letter keys
       </Switch>
     </Sheet>

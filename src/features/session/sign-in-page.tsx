@@ -5,7 +5,7 @@ import { Link } from '../../components/link.tsx'
 import { PageHeader } from '../../components/page-header.tsx'
 import { Sheet } from '../../components/sheet.tsx'
 import { useDocumentTitle } from '../../lib/document-title.ts'
-import { paths, safeReturn } from '../../paths.ts'
+import { safeReturn } from '../../paths.ts'
 import { SignInForm } from './sign-in-form.tsx'
 
 export default function SignInPage() {
