@@ -12,6 +12,16 @@ function page(load: () => Promise<{ default: ComponentType }>): RouteObject['laz
 /** The pages, one line each; addresses as in src/paths.ts. */
 const pages: RouteObject[] = [
   { index: true, lazy: page(() => import('./features/home/home-page.tsx')) },
+  { path: 'hosts', lazy: page(() => import('./features/hosts/hosts-page.tsx')) },
+  { path: 'hosts/:slug', lazy: page(() => import('./features/hosts/host-page.tsx')) },
+  { path: 'submissions', lazy: page(() => import('./features/submissions/submissions-page.tsx')) },
+  { path: 'submissions/new', lazy: page(() => import('./features/submissions/new-page.tsx')) },
+  { path: 'submissions/:id', lazy: page(() => import('./features/submissions/submission-page.tsx')) },
+  { path: 'sources', lazy: page(() => import('./features/sources/sources-page.tsx')) },
+  { path: 'sources/:id', lazy: page(() => import('./features/sources/source-page.tsx')) },
+  { path: 'scale', lazy: page(() => import('./features/scale/scale-page.tsx')) },
+  { path: 'releases', lazy: page(() => import('./features/releases/releases-page.tsx')) },
+  { path: 'releases/:label', lazy: page(() => import('./features/releases/release-page.tsx')) },
   { path: 'sign-in', lazy: page(() => import('./features/session/sign-in-page.tsx')) },
   { path: 'account', lazy: page(() => import('./features/session/account-page.tsx')) },
   { path: '*', Component: NotFoundPage },
