@@ -10,6 +10,7 @@ import type { Mapping } from '../schema/imports.ts'
 import { measurementInputSchema } from '../schema/measurement.ts'
 import type { MeasurementForm, MeasurementInput } from '../schema/measurement.ts'
 import { anchorNamed } from '../scale/anchors.ts'
+import { labelInSentence } from './measure-words.ts'
 import { readMeasuredValue } from './measured-value.ts'
 import type { MeasuredValue } from './measured-value.ts'
 
@@ -95,7 +96,7 @@ export function rowReader(context: RowContext): (cells: readonly string[]) => Re
     const fromText = q.kind === 'text' && cell('text') !== ''
     const role = fromText ? 'text' : 'value'
     const text = cell(role)
-    if (isMissing(text)) say(nameOf(role), single.has(role) ? `The row gives no ${lower(q.label)}.` : 'No column holds the value: choose it in the mapping.')
+    if (isMissing(text)) say(nameOf(role), single.has(role) ? `The row gives no ${labelInSentence(q.label)}.` : 'No column holds the value: choose it in the mapping.')
     else {
       const names = { both: nameOf('err'), plus: nameOf('err_plus'), minus: nameOf('err_minus'), sys: nameOf('err_sys') }
       const errors = { both: cell('err'), plus: cell('err_plus'), minus: cell('err_minus'), sys: cell('err_sys'), names }
@@ -184,7 +185,7 @@ function readMeasurement(
   else {
     const value = readMeasuredValue(at.text)
     if (value.kind !== 'value') {
-      say(at.name, value.kind === 'unreadable' ? value.why : `The row gives no ${lower(q.label)}.`)
+      say(at.name, value.kind === 'unreadable' ? value.why : `The row gives no ${labelInSentence(q.label)}.`)
       return undefined
     }
     const unit = at.unit || value.unit || constants.unit || ''
@@ -243,8 +244,4 @@ function joinNotes(notes: readonly { name: string; text: string }[]): string | n
 
 function isMissing(text: string): boolean {
   return readMeasuredValue(text).kind === 'missing'
-}
-
-function lower(label: string): string {
-  return /^[A-Z][a-z]/.test(label) ? label.charAt(0).toLowerCase() + label.slice(1) : label
 }

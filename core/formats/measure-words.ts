@@ -52,3 +52,8 @@ export function canonicalWords(key: QuantityKey, m: Omit<MeasureToPrint, 'unit'>
   const q = quantity(key)
   return measureWords({ ...m, unit: q.unit }, q.decimals)
 }
+
+/** A quantity's label in the middle of a sentence: "distance modulus", but "Hubble stage T", "B magnitude", "H I flux". */
+export function labelInSentence(label: string): string {
+  return /^[A-Z][a-z]/.test(label) && !label.startsWith('Hubble') ? label.charAt(0).toLowerCase() + label.slice(1) : label
+}

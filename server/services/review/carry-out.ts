@@ -1,0 +1,34 @@
+/** What an approval does to the catalogue, up to but without its commit: the approval commits it, the preview rolls it back. */
+import type { Knex } from 'knex'
+import { StateConflict } from '../../http/errors.ts'
+import { applyChanges } from '../changes/apply.ts'
+import type { Applied } from '../changes/apply.ts'
+import { conflictsOf } from '../changes/conflicts.ts'
+import { currentRevision } from '../changes/current.ts'
+import { presentChange, vocabularyOf } from '../changes/present.ts'
+import type { StoredChange } from '../changes/types.ts'
+import { computeRevision } from '../revision/compute.ts'
+import type { RevisionPlan } from '../revision/compute.ts'
+
+export interface CarriedOut {
+  /** The catalogue it was done to. */
+  before: number
+  revision: number
+  applied: Applied
+  plan: RevisionPlan
+}
+
+/** Needs the catalogue's lock. @throws StateConflict when the ground has moved under a change */
+export async function carryOut(trx: Knex.Transaction, submission: { author: number }, changes: readonly StoredChange[]): Promise<CarriedOut> {
+  const vocabulary = await vocabularyOf(trx, changes)
+  const subjects = new Map(changes.map((c) => [c.id, presentChange(c, vocabulary).subject]))
+  const conflicts = await conflictsOf(trx, changes, subjects, vocabulary)
+  if (conflicts.length > 0) {
+    throw new StateConflict('The catalogue has moved since this submission was made. Nothing was changed: return it to its author with what differs.', conflicts)
+  }
+  const before = await currentRevision(trx)
+  const revision = before + 1
+  const applied = await applyChanges(trx, submission, changes, revision)
+  const plan = await computeRevision(trx, { revision, touched: applied.touched, scaleChanged: applied.scaleChanged })
+  return { before, revision, applied, plan }
+}
