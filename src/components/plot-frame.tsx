@@ -27,8 +27,8 @@ export function PlotFrame({ title, alt, fileName, children, note, table, level =
   function save(kind: 'svg' | 'png'): void {
     const svg = picture.current?.querySelector('svg')
     if (!svg) return
-    if (kind === 'svg') saveSvg(svg, fileName)
-    else savePng(svg, fileName).catch((error: unknown) => notify(`The picture was not saved: ${error instanceof Error ? error.message : 'unknown reason'}. The SVG may work.`, { tone: 'stop' }))
+    const saving = kind === 'svg' ? saveSvg(svg, fileName, title) : savePng(svg, fileName, title)
+    saving.catch((error: unknown) => notify(`The picture was not saved: ${error instanceof Error ? error.message : 'unknown reason'}. Nothing else is lost; try the other format.`, { tone: 'stop' }))
   }
 
   return (
