@@ -1,0 +1,77 @@
+/** Who disturbs whom: the search over all neighbours. */
+import type { Neighbourhood } from './neighbourhood.ts'
+
+/** Two galaxies at one point still have a finite influence: closer than this they count as so far apart, Mpc. */
+const CLOSEST_MPC = 1e-4
+
+export interface Disturbers {
+  /** Index of the neighbour with the largest M★/d³ over all, and that value (Msun/Mpc³); −1 and 0 without any. */
+  index: number
+  indexPull: number
+  /** The same among those at least the mass ratio times as massive. */
+  main: number
+  mainPull: number
+}
+
+/** M★ / d³ of galaxy j at galaxy i, Msun/Mpc³; its logarithm plus the constant is the term of the tidal index. */
+export function pull(n: Neighbourhood, j: number, i: number): number {
+  return at(n.mass, j) / separationOf(n, i, j) ** 3
+}
+
+/** 3-D separation of two galaxies by index, Mpc. */
+export function separationOf(n: Neighbourhood, i: number, j: number): number {
+  return Math.max(CLOSEST_MPC, Math.hypot(at(n.x, i) - at(n.x, j), at(n.y, i) - at(n.y, j), at(n.z, i) - at(n.z, j)))
+}
+
+/**
+ * Whether galaxy j may be the main disturber of galaxy i. Over all neighbours the largest companion would become the host of its host; asking
+ * for more mass makes hosts a forest, since mass rises along every chain. Equal masses, possible with a ratio of 1, fall by id.
+ */
+export function mayHost(n: Neighbourhood, j: number, i: number, massRatio: number): boolean {
+  const mj = at(n.mass, j)
+  const mi = at(n.mass, i)
+  return mj > 0 && mj >= massRatio * mi && (mj > mi || at(n.ids, j) < at(n.ids, i))
+}
+
+/**
+ * The disturbers of one galaxy, among all.
+ *
+ * @param i - its index
+ * @param massRatio - what a main disturber has to outweigh it by, at least 1
+ */
+export function disturbersOf(n: Neighbourhood, i: number, massRatio: number): Disturbers {
+  const { x, y, z, mass, size } = n
+  const xi = at(x, i)
+  const yi = at(y, i)
+  const zi = at(z, i)
+  const least = massRatio * at(mass, i)
+  const found: Disturbers = { index: -1, indexPull: 0, main: -1, mainPull: 0 }
+  for (let j = 0; j < size; j++) {
+    const m = at(mass, j)
+    if (j === i || m <= 0) continue
+    const dx = at(x, j) - xi
+    const dy = at(y, j) - yi
+    const dz = at(z, j) - zi
+    const d2 = dx * dx + dy * dy + dz * dz
+    // Most neighbours are too far or too light: a bound without roots comes first. (m/d³ > p is m² > p² d⁶.)
+    const d6 = d2 * d2 * d2
+    const m2 = m * m
+    const beatsIndex = m2 >= found.indexPull * found.indexPull * d6
+    const beatsMain = m >= least && m2 >= found.mainPull * found.mainPull * d6
+    if (!beatsIndex && !beatsMain) continue
+    const p = pull(n, j, i)
+    if (p > found.indexPull) {
+      found.index = j
+      found.indexPull = p
+    }
+    if (p > found.mainPull && mayHost(n, j, i, massRatio)) {
+      found.main = j
+      found.mainPull = p
+    }
+  }
+  return found
+}
+
+function at(list: Float64Array | Int32Array, i: number): number {
+  return list[i] ?? NaN
+}
