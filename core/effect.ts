@@ -1,0 +1,100 @@
+/** What a change of the catalogue does: two states in, the list of differences that matter out. */
+import { COLUMNS, type CatalogueRow, type CatalogueValue } from './columns.ts'
+
+export interface RowChange {
+  galaxyId: number
+  /** null for a galaxy that is new. */
+  before: CatalogueRow | null
+  after: CatalogueRow
+}
+
+export interface GalaxyEffect {
+  slug: string
+  name: string
+  kind: 'added' | 'changed'
+  changes: { column: string; label: string; unit: string; before: CatalogueValue; after: CatalogueValue }[]
+}
+
+export interface SystemEffect {
+  slug: string
+  name: string
+  before: number
+  after: number
+  gained: string[]
+  lost: string[]
+}
+
+export interface CatalogueEffect {
+  galaxies: GalaxyEffect[]
+  systems: SystemEffect[]
+  counts: { galaxiesAdded: number; galaxiesChanged: number; hostsChanged: number }
+}
+
+/** Follow from others that are listed, or say nothing about the galaxy. */
+const UNTOLD: ReadonlySet<string> = new Set(['slug', 'revision', 'updated_at', 'glon', 'glat', 'sgl', 'sgb', 'distance_lo', 'distance_hi', 'n_sources', 'n_distance_all', 'host_sep_lo', 'host_sep_hi', 'v_cmb'])
+const TOLD = COLUMNS.filter((c) => !UNTOLD.has(c.key))
+
+/**
+ * The effect of a set of changed rows. A number counts as different when it would print differently, at the decimals of its column; rows
+ * that print alike are left out. The effect of nothing is nothing.
+ *
+ * @param membersBefore - satellites of each host (by slug) before
+ * @param nameOf - the name of a host by its slug
+ */
+export function effectOfRows(rows: readonly RowChange[], membersBefore: (slug: string) => number, nameOf: (slug: string) => string): CatalogueEffect {
+  const galaxies = rows.flatMap((row): GalaxyEffect[] => {
+    const changes = differences(row)
+    if (changes.length === 0) return []
+    return [{ slug: String(row.after.slug), name: String(row.after.name), kind: row.before === null ? 'added' : 'changed', changes }]
+  })
+  const systems = systemsOf(rows, membersBefore, nameOf)
+  return {
+    galaxies: galaxies.sort(byWeight),
+    systems,
+    counts: {
+      galaxiesAdded: rows.filter((r) => r.before === null).length,
+      galaxiesChanged: galaxies.filter((g) => g.kind === 'changed').length,
+      hostsChanged: rows.filter((r) => r.before !== null && r.before.host !== r.after.host).length,
+    },
+  }
+}
+
+function differences({ before, after }: RowChange): GalaxyEffect['changes'] {
+  return TOLD.flatMap((column) => {
+    const was = before?.[column.key] ?? null
+    const is = after[column.key] ?? null
+    if (printed(was, column.decimals) === printed(is, column.decimals)) return []
+    return [{ column: column.key, label: column.label, unit: column.unit, before: was, after: is }]
+  })
+}
+
+function printed(value: CatalogueValue, decimals: number): string {
+  if (typeof value !== 'number') return String(value)
+  const text = value.toFixed(decimals)
+  return Number(text) === 0 ? (0).toFixed(decimals) : text
+}
+
+function systemsOf(rows: readonly RowChange[], membersBefore: (slug: string) => number, nameOf: (slug: string) => string): SystemEffect[] {
+  const systems = new Map<string, { gained: string[]; lost: string[] }>()
+  const of = (slug: string): { gained: string[]; lost: string[] } => {
+    const found = systems.get(slug) ?? { gained: [], lost: [] }
+    systems.set(slug, found)
+    return found
+  }
+  for (const { before, after } of rows) {
+    const was = before?.host ?? null
+    const is = after.host ?? null
+    if (was === is) continue
+    if (was !== null) of(String(was)).lost.push(String(after.name))
+    if (is !== null) of(String(is)).gained.push(String(after.name))
+  }
+  return [...systems].map(([slug, { gained, lost }]) => {
+    const before = membersBefore(slug)
+    return { slug, name: nameOf(slug), before, after: before + gained.length - lost.length, gained: gained.sort(), lost: lost.sort() }
+  })
+}
+
+/** New galaxies first, then those with most that changes, then by name. */
+function byWeight(a: GalaxyEffect, b: GalaxyEffect): number {
+  return Number(b.kind === 'added') - Number(a.kind === 'added') || b.changes.length - a.changes.length || a.name.localeCompare(b.name, 'en')
+}

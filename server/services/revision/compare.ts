@@ -1,0 +1,82 @@
+/** Only what differs is written: comparing what was computed with what stands. */
+import type { Knex } from 'knex'
+import type { Adopted } from '../../../core/adoption/adopted.ts'
+import { COLUMNS, type CatalogueRow } from '../../../core/columns.ts'
+import type { QuantityKey } from '../../../core/quantities.ts'
+import type { Computed } from './adopt-galaxies.ts'
+import type { PlannedAdopted } from './plan.ts'
+
+/** Stamped by the writing, so they say nothing about a difference. */
+const STAMPS: ReadonlySet<string> = new Set(['revision', 'updated_at'])
+export const COMPUTED_COLUMNS = COLUMNS.filter((c) => !STAMPS.has(c.key)).map((c) => c.key)
+
+export interface StoredRow extends CatalogueRow {
+  galaxy: number
+  main_disturber_galaxy: number | null
+  index_disturber_galaxy: number | null
+}
+
+/** The rows that stand for these galaxies, by galaxy id. */
+export async function standingRows(trx: Knex, ids: readonly number[]): Promise<Map<number, StoredRow>> {
+  if (ids.length === 0) return new Map()
+  const { rows } = (await trx.raw(
+    `select galaxy, main_disturber_galaxy, index_disturber_galaxy, ${COMPUTED_COLUMNS.join(', ')} from catalogue_rows where rev_to is null and galaxy = any(?)`,
+    [[...ids]],
+  )) as { rows: StoredRow[] }
+  return new Map(rows.map((row) => [row.galaxy, row]))
+}
+
+export function sameRow(a: CatalogueRow, b: CatalogueRow): boolean {
+  return COMPUTED_COLUMNS.every((key) => (a[key] ?? null) === (b[key] ?? null))
+}
+
+interface StoredAdopted {
+  galaxy: number
+  quantity: QuantityKey
+  value: number | null
+  textValue: string | null
+  errPlus: number | null
+  errMinus: number | null
+  errSys: number | null
+  sentence: string
+  reasons: unknown
+  overrideReason: string | null
+}
+
+/** Which adopted values of these galaxies are new, different, or gone. */
+export async function adoptedDifferences(trx: Knex, computed: readonly Computed[]): Promise<PlannedAdopted[]> {
+  const ids = computed.map((c) => c.galaxy.id)
+  const stored = (await trx('adoptedValues')
+    .whereNull('revTo')
+    .whereRaw('galaxy = any(?)', [ids])
+    .select('galaxy', 'quantity', 'value', 'textValue', 'errPlus', 'errMinus', 'errSys', 'sentence', 'reasons', 'overrideReason')) as StoredAdopted[]
+  const standing = new Map(stored.map((s) => [`${s.galaxy} ${s.quantity}`, s]))
+  const planned: PlannedAdopted[] = []
+  for (const { galaxy, adopted } of computed) {
+    for (const [quantity, after] of adopted) {
+      const key = `${galaxy.id} ${quantity}`
+      const before = standing.get(key)
+      standing.delete(key)
+      if (!before || !sameAdopted(before, after)) planned.push({ galaxyId: galaxy.id, quantity, after })
+    }
+  }
+  for (const gone of standing.values()) planned.push({ galaxyId: gone.galaxy, quantity: gone.quantity, after: null })
+  return planned
+}
+
+function sameAdopted(before: StoredAdopted, after: Adopted): boolean {
+  return (
+    before.value === after.value && before.textValue === after.textValue && before.errPlus === after.errPlus && before.errMinus === after.errMinus &&
+    before.errSys === after.errSys && before.sentence === after.sentence && before.overrideReason === after.override && sameJson(before.reasons, after.reasons)
+  )
+}
+
+/** jsonb gives the keys of an object in an order of its own. */
+function sameJson(a: unknown, b: unknown): boolean {
+  if (Array.isArray(a) && Array.isArray(b)) return a.length === b.length && a.every((item, i) => sameJson(item, b[i]))
+  if (typeof a === 'object' && typeof b === 'object' && a !== null && b !== null) {
+    const keys = Object.keys(a)
+    return keys.length === Object.keys(b).length && keys.every((key) => sameJson((a as Record<string, unknown>)[key], (b as Record<string, unknown>)[key]))
+  }
+  return a === b
+}

@@ -1,0 +1,46 @@
+/** What the computation reads: the versioned tables as they stand inside a transaction. */
+import type { Knex } from 'knex'
+import type { Chosen, Scale } from '../../../core/adoption/adopted.ts'
+import type { Anchor, Galaxy, Measurement } from '../../../core/catalogue/types.ts'
+import { policySchema } from '../../../core/scale/policy.ts'
+
+/** The adopted anchors and the policy. @throws Error when the catalogue has no policy yet */
+export async function loadScale(trx: Knex): Promise<Scale> {
+  const anchors = (await trx('anchors').whereNull('revTo').select('key', 'label', 'kind', 'methods', 'value', 'err', 'source')) as Anchor[]
+  const policy = (await trx('policies').whereNull('revTo').first('document')) as { document: unknown } | undefined
+  if (!policy) throw new Error('the catalogue has no adoption policy; it was never laid')
+  return { anchors, policy: policySchema.parse(policy.document) }
+}
+
+export async function loadGalaxies(trx: Knex, ids: readonly number[]): Promise<Galaxy[]> {
+  const rows = (await trx('galaxyVersions')
+    .whereNull('revTo')
+    .whereRaw('galaxy = any(?)', [[...ids]])
+    .select('galaxy', 'id', 'slug', 'designation', 'status', 'class', 'ra', 'dec', 'note')) as (Omit<Galaxy, 'id' | 'versionId'> & { galaxy: number; id: number })[]
+  return rows.map(({ galaxy, id, ...rest }) => ({ ...rest, id: galaxy, versionId: id }))
+}
+
+/** All measurements held of these galaxies, with what their sources are called. */
+export async function loadMeasurements(trx: Knex, galaxyIds: readonly number[]): Promise<Measurement[]> {
+  const { rows } = (await trx.raw(
+    `select m.lineage as id, m.id as "versionId", m.galaxy as "galaxyId", m.quantity, m.value, m.err_plus as "errPlus", m.err_minus as "errMinus",
+            m.err_sys as "errSys", m.text_value as "textValue", m.limit_flag as "limitFlag", m.method, m.anchor,
+            m.anchor_value_assumed as "anchorValueAssumed", m.convention, m.published, m.source as "sourceId", s.label as "sourceLabel",
+            s.year as "sourceYear", m.locator, m.note, m.excluded_reason as "excludedReason", m.supersedes
+       from measurements m join sources s on s.id = m.source
+      where m.rev_to is null and m.galaxy = any(?)`,
+    [[...galaxyIds]],
+  )) as { rows: Measurement[] }
+  return rows
+}
+
+/** Overrides by galaxy and quantity: `"12 distance_modulus"`. */
+export async function loadOverrides(trx: Knex, galaxyIds: readonly number[]): Promise<Map<string, Chosen>> {
+  const rows = (await trx('overrides').whereNull('revTo').whereRaw('galaxy = any(?)', [[...galaxyIds]]).select('galaxy', 'about', 'choice', 'reason')) as {
+    galaxy: number
+    about: string
+    choice: { measurements?: number[] }
+    reason: string
+  }[]
+  return new Map(rows.flatMap((r) => (r.choice.measurements ? [[`${r.galaxy} ${r.about}`, { measurements: r.choice.measurements, reason: r.reason }] as const] : [])))
+}

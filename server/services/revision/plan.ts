@@ -1,0 +1,29 @@
+/** What a revision will write, worked out before anything is written. */
+import type { Adopted } from '../../../core/adoption/adopted.ts'
+import type { CatalogueRow } from '../../../core/columns.ts'
+import type { QuantityKey } from '../../../core/quantities.ts'
+
+export interface PlannedRow {
+  galaxyId: number
+  before: CatalogueRow | null
+  /** Every column but `revision` and `updated_at`, which are the writing's. */
+  after: CatalogueRow
+  mainDisturber: number | null
+  indexDisturber: number | null
+}
+
+export interface PlannedAdopted {
+  galaxyId: number
+  quantity: QuantityKey
+  /** null when there is nothing any more that could be adopted. */
+  after: Adopted | null
+}
+
+export interface RevisionPlan {
+  revision: number
+  rows: PlannedRow[]
+  adopted: PlannedAdopted[]
+  /** Satellites of each host, by slug, before; and what hosts are called. */
+  members: ReadonlyMap<string, number>
+  names: ReadonlyMap<string, string>
+}
