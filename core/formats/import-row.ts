@@ -11,7 +11,7 @@ import { measurementInputSchema } from '../schema/measurement.ts'
 import type { MeasurementForm, MeasurementInput } from '../schema/measurement.ts'
 import { anchorNamed } from '../scale/anchors.ts'
 import { labelInSentence } from './measure-words.ts'
-import { readMeasuredValue } from './measured-value.ts'
+import { isMissingValue, readMeasuredValue } from './measured-value.ts'
 import type { MeasuredValue } from './measured-value.ts'
 
 export interface RowProblem {
@@ -83,7 +83,7 @@ export function rowReader(context: RowContext): (cells: readonly string[]) => Re
       for (const column of wide) {
         const q = quantity(column.role.slice('value:'.length))
         const text = cells[column.at]?.trim() ?? ''
-        if (isMissing(text)) continue
+        if (isMissingValue(text)) continue
         const err = cell(`err:${q.key}`)
         take(q, { role: column.role, name: column.name, unit: column.unit, text, errors: { both: err, plus: '', minus: '', sys: '', names: { both: nameOf(`err:${q.key}`), plus: null, minus: null, sys: null } } })
       }
@@ -96,7 +96,7 @@ export function rowReader(context: RowContext): (cells: readonly string[]) => Re
     const fromText = q.kind === 'text' && cell('text') !== ''
     const role = fromText ? 'text' : 'value'
     const text = cell(role)
-    if (isMissing(text)) say(nameOf(role), single.has(role) ? `The row gives no ${labelInSentence(q.label)}.` : 'No column holds the value: choose it in the mapping.')
+    if (isMissingValue(text)) say(nameOf(role), single.has(role) ? `The row gives no ${labelInSentence(q.label)}.` : 'No column holds the value: choose it in the mapping.')
     else {
       const names = { both: nameOf('err'), plus: nameOf('err_plus'), minus: nameOf('err_minus'), sys: nameOf('err_sys') }
       const errors = { both: cell('err'), plus: cell('err_plus'), minus: cell('err_minus'), sys: cell('err_sys'), names }
@@ -120,8 +120,8 @@ interface Errors {
 
 function takePosition(row: ReadRow, cell: Cell, nameOf: NameOf, say: Say): void {
   const [ra, dec] = [cell('ra'), cell('dec')]
-  if (isMissing(ra) && isMissing(dec)) return
-  if (isMissing(ra) || isMissing(dec)) return say(nameOf(isMissing(ra) ? 'ra' : 'dec'), 'A position needs both right ascension and declination.')
+  if (isMissingValue(ra) && isMissingValue(dec)) return
+  if (isMissingValue(ra) || isMissingValue(dec)) return say(nameOf(isMissingValue(ra) ? 'ra' : 'dec'), 'A position needs both right ascension and declination.')
   const parts = (text: string): number => text.split(/[^\d.]+/).filter((part) => part !== '').length
   if (parts(ra) !== parts(dec)) return say(nameOf('dec'), `Right ascension "${ra}" and declination "${dec}" are not written alike: both in degrees, or both with minutes and seconds.`)
   const read = readPosition(`${ra} ${dec}`)
@@ -131,7 +131,7 @@ function takePosition(row: ReadRow, cell: Cell, nameOf: NameOf, say: Say): void 
 }
 
 function readClass(row: ReadRow, text: string): void {
-  if (isMissing(text)) return
+  if (isMissingValue(text)) return
   row.galaxyClass = GALAXY_CLASSES.find((c) => c === text.toLowerCase() || classLabel(c) === text.toLowerCase()) ?? classFromMorphology(text)
 }
 
@@ -153,15 +153,15 @@ interface Shared {
 function readShared(context: RowContext, cell: Cell, nameOf: NameOf, say: Say): Shared {
   const { constants } = context.mapping
   const methodText = cell('method')
-  const method = isMissing(methodText) ? undefined : methodNamed(methodText)
-  if (!isMissing(methodText) && !method) say(nameOf('method'), `"${methodText}" is no distance method that the catalogue knows.`)
+  const method = isMissingValue(methodText) ? undefined : methodNamed(methodText)
+  if (!isMissingValue(methodText) && !method) say(nameOf('method'), `"${methodText}" is no distance method that the catalogue knows.`)
   const anchorText = cell('anchor')
-  const anchor = isMissing(anchorText) ? undefined : anchorNamed(context.anchors, anchorText)
-  if (!isMissing(anchorText) && !anchor) say(nameOf('anchor'), `The scale has no anchor "${anchorText}".`)
+  const anchor = isMissingValue(anchorText) ? undefined : anchorNamed(context.anchors, anchorText)
+  if (!isMissingValue(anchorText) && !anchor) say(nameOf('anchor'), `The scale has no anchor "${anchorText}".`)
   const assumedText = cell('anchor_value_assumed')
   const assumed = readMeasuredValue(assumedText)
   if (assumed.kind === 'unreadable') say(nameOf('anchor_value_assumed'), assumed.why)
-  const useConstant = isMissing(anchorText)
+  const useConstant = isMissingValue(anchorText)
   return {
     method: (method?.key as RowMeasurement['method']) ?? constants.method,
     anchor: anchor?.key ?? (useConstant ? constants.anchor : null),
@@ -240,8 +240,4 @@ function joinNotes(notes: readonly { name: string; text: string }[]): string | n
   const given = notes.filter((n) => n.text !== '')
   const said = given.map((n) => (/^(notes?|comments?|remarks?)$/i.test(n.name) ? n.text : `${n.name.replace(/_/g, ' ')}: ${n.text}`))
   return said.length === 0 ? null : said.join('; ')
-}
-
-function isMissing(text: string): boolean {
-  return readMeasuredValue(text).kind === 'missing'
 }
