@@ -63,7 +63,7 @@ export async function problemOf(response: Response): Promise<ApiProblem> {
       type: 'about:blank',
       title: gateway ? 'The server is not ready' : `The server answered ${response.status}`,
       status: response.status,
-      detail: gateway ? 'It may be starting. Nothing was changed; try again in a few seconds.' : 'Nothing was changed. Try again; if it stays so, tell the steward.',
+      detail: gateway ? 'The server may be starting. Nothing was changed; try again in a few seconds.' : 'Nothing was changed. Try again; if it stays so, tell the steward.',
     },
     retryAfter,
   )

@@ -1,7 +1,10 @@
 import { CircleAlert } from 'lucide-react'
+import { useLocation } from 'react-router-dom'
 import { ApiProblem } from '../api/problem.ts'
 import { copyText } from '../lib/clipboard.ts'
+import { paths } from '../paths.ts'
 import { Button } from './button.tsx'
+import { Link } from './link.tsx'
 
 export interface FailedStateProps {
   error: unknown
@@ -29,6 +32,8 @@ function wordsOf(error: unknown): Words {
 export function FailedState({ error, onRetry, safe, title }: FailedStateProps) {
   const words = wordsOf(error)
   const { instance } = words
+  const location = useLocation()
+  const mustSignIn = error instanceof ApiProblem && error.status === 401
   return (
     <div role="alert" className="rounded-lg border border-line border-l-4 border-l-stop bg-sheet px-6 py-5">
       <p className="flex items-center gap-2 font-serif text-lg font-semibold">
@@ -38,8 +43,13 @@ export function FailedState({ error, onRetry, safe, title }: FailedStateProps) {
       <p className="prose-measure mt-1">{words.detail}</p>
       {safe && <p className="prose-measure mt-1 text-muted">{safe}</p>}
       <ProblemList errors={words.errors} />
-      {(onRetry || instance) && (
+      {(onRetry || instance || mustSignIn) && (
         <div className="mt-4 flex flex-wrap items-center gap-3">
+          {mustSignIn && (
+            <Link look="primary" to={paths.signInFrom(location.pathname + location.search)}>
+              Sign in
+            </Link>
+          )}
           {onRetry && <Button onPress={onRetry}>Try again</Button>}
           {instance && (
             <Button kind="plain" size="small" onPress={() => void copyText(instance, 'the request’s number')}>

@@ -72,7 +72,7 @@ export function ToastRegion() {
       <div role="status" aria-live="polite" className="sr-only">
         {spoken}
       </div>
-      <div data-no-print className="pointer-events-none fixed right-4 bottom-4 left-4 z-40 flex flex-col items-end gap-2 sm:left-auto">
+      <section aria-label="Notices" data-no-print className="pointer-events-none fixed right-4 bottom-4 left-4 z-40 flex flex-col items-end gap-2 sm:left-auto">
         {notices.map((notice) => {
           const tone = TONES[notice.tone ?? 'plain']
           return (
@@ -96,7 +96,7 @@ export function ToastRegion() {
             </div>
           )
         })}
-      </div>
+      </section>
     </>
   )
 }
