@@ -31,8 +31,8 @@ export async function addGalaxies(
   sourceIds: readonly number[],
   enteredBy: number,
 ): Promise<number[]> {
-  const made = (await trx('galaxies').insert(invented.map(() => ({}))).returning('id')) as { id: number }[]
-  const ids = made.map((row) => row.id)
+  const made = (await trx.raw('insert into galaxies (created_at) select now() from generate_series(1, ?) returning id', [invented.length])) as { rows: { id: number }[] }
+  const ids = made.rows.map((row) => row.id)
   const versions = invented.map(({ galaxy: g }, i) => ({
     galaxy: ids[i], designation: g.designation, slug: slugOf(g.designation), status: g.absV > -7 ? 'candidate' : 'confirmed', ra: g.ra, dec: g.dec,
     class: g.class, note: null, revFrom: revision,

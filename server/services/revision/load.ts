@@ -12,6 +12,12 @@ export async function loadScale(trx: Knex): Promise<Scale> {
   return { anchors, policy: policySchema.parse(policy.document) }
 }
 
+/** Ids of all galaxies that hold now, rising. */
+export async function allGalaxies(trx: Knex): Promise<number[]> {
+  const rows = (await trx('galaxyVersions').whereNull('revTo').orderBy('galaxy').select('galaxy')) as { galaxy: number }[]
+  return rows.map((row) => row.galaxy)
+}
+
 export async function loadGalaxies(trx: Knex, ids: readonly number[]): Promise<Galaxy[]> {
   const rows = (await trx('galaxyVersions')
     .whereNull('revTo')

@@ -5,9 +5,9 @@ import type { OwnColumns } from '../../../core/derive/own.ts'
 import { relationOf, relationWord, type Relation } from '../../../core/derive/relation.ts'
 import { adoptGalaxies } from './adopt-galaxies.ts'
 import { adoptedDifferences, sameRow, standingRows } from './compare.ts'
-import { loadScale } from './load.ts'
+import { allGalaxies, loadScale } from './load.ts'
 import type { PlannedRow } from './plan.ts'
-import { writeAdopted, writeRows } from './write-revision.ts'
+import { writeAdopted, writeRows } from './write.ts'
 
 const CHUNK = 2000
 
@@ -23,7 +23,7 @@ export interface RebuildOptions {
  */
 export async function rebuildCatalogue(trx: Knex, revision: number, { onProgress }: RebuildOptions = {}): Promise<number> {
   const scale = await loadScale(trx)
-  const ids = ((await trx('galaxyVersions').whereNull('revTo').orderBy('galaxy').select('galaxy')) as { galaxy: number }[]).map((r) => r.galaxy)
+  const ids = await allGalaxies(trx)
   const own = new Map<number, OwnColumns>()
   for (let i = 0; i < ids.length; i += CHUNK) {
     const computed = await adoptGalaxies(trx, ids.slice(i, i + CHUNK), scale)

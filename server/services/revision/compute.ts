@@ -9,34 +9,32 @@ import { affectedBy } from '../../../core/derive/affected.ts'
 import { neighbourFrom, withChanges, type Neighbour, type Neighbourhood, type Place } from '../../../core/derive/neighbourhood.ts'
 import type { OwnColumns } from '../../../core/derive/own.ts'
 import { relationOf, relationWord, type Relation } from '../../../core/derive/relation.ts'
-import { effectOfRows, type CatalogueEffect } from '../../../core/effect.ts'
 import { adoptGalaxies } from './adopt-galaxies.ts'
 import { adoptedDifferences, sameRow, standingRows, type StoredRow } from './compare.ts'
-import { loadScale } from './load.ts'
+import { allGalaxies, loadScale } from './load.ts'
 import { surroundingsAt, type Surroundings } from './neighbourhood-cache.ts'
 import type { PlannedRow, RevisionPlan } from './plan.ts'
+
+export type { RevisionPlan } from './plan.ts'
 
 export interface Touched {
   /** The revision that would be made: one more than the newest. */
   revision: number
   /** Galaxies whose own record, names or measurements changed in this transaction. */
-  touched: readonly number[]
+  touched: Iterable<number>
+  /** Anchors or policy changed, which touches every galaxy. */
+  scaleChanged?: boolean
 }
 
-export async function computeRevision(trx: Knex, { revision, touched }: Touched): Promise<RevisionPlan> {
+export async function computeRevision(trx: Knex, { revision, touched, scaleChanged }: Touched): Promise<RevisionPlan> {
   const scale = await loadScale(trx)
   const surroundings = await surroundingsAt(trx, revision - 1)
-  const computed = await adoptGalaxies(trx, [...new Set(touched)], scale)
+  const ids = scaleChanged ? await allGalaxies(trx) : [...new Set(touched)]
+  const computed = await adoptGalaxies(trx, ids, scale)
   const adopted = await adoptedDifferences(trx, computed)
   const own = new Map(computed.map((c) => [c.galaxy.id, c.own]))
   const rows = await place(trx, own, surroundings, scale)
   return { revision, rows, adopted, ...membersOf(surroundings) }
-}
-
-/** The effect of a plan, as an approver reads it. */
-export function effectOf(plan: RevisionPlan): CatalogueEffect {
-  const nameOf = new Map(plan.rows.map((r) => [String(r.after.slug), String(r.after.name)]))
-  return effectOfRows(plan.rows, (slug) => plan.members.get(slug) ?? 0, (slug) => nameOf.get(slug) ?? plan.names.get(slug) ?? slug)
 }
 
 /** Rows of everybody whose own columns or place among the others would differ. */
