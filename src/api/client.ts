@@ -25,12 +25,15 @@ export function setCsrfToken(token: string): void {
   csrfToken = token
 }
 
-const signedOutListeners = new Set<() => void>()
+const refusalListeners = new Set<(status: 401 | 403) => void>()
 
-/** Calls back when the server says 401 to something other than signing in: the session has ended. Returns the way to stop. */
-export function onSignedOut(listener: () => void): () => void {
-  signedOutListeners.add(listener)
-  return () => signedOutListeners.delete(listener)
+/**
+ * Calls back when the server refuses something other than signing in: 401, nobody is signed in any more; 403, not allowed, or the
+ * session behind the token is gone. Returns the way to stop.
+ */
+export function onRefused(listener: (status: 401 | 403) => void): () => void {
+  refusalListeners.add(listener)
+  return () => refusalListeners.delete(listener)
 }
 
 function withSearch(path: string, query: Query | URLSearchParams | undefined): string {
@@ -54,7 +57,8 @@ async function request(path: string, init: RequestInit): Promise<Response> {
   if (response.ok) return response
   const problem = await problemOf(response)
   const signingIn = path === '/api/session' && init.method === 'POST'
-  if (problem.status === 401 && !signingIn) for (const listener of signedOutListeners) listener()
+  const { status } = problem
+  if ((status === 401 || status === 403) && !signingIn) for (const listener of refusalListeners) listener(status)
   throw problem
 }
 

@@ -1,9 +1,9 @@
 import { useQueryClient } from '@tanstack/react-query'
 import { lazy, Suspense, useEffect, useState } from 'react'
 import type { Session } from '../../core/schema/session.ts'
-import { onSignedOut } from '../api/client.ts'
+import { onRefused } from '../api/client.ts'
 import { keys } from '../api/keys.ts'
-import { useSession } from '../api/session.ts'
+import { sessionQuery, useSession } from '../api/session.ts'
 import { Dialog } from '../components/dialog.tsx'
 import { notify } from '../components/toast.tsx'
 
@@ -19,10 +19,13 @@ export function SignInAgain() {
   const [lost, setLost] = useState<Session['user']>(null)
   useEffect(
     () =>
-      onSignedOut(() => {
+      onRefused((status) => {
         const user = client.getQueryData<Session>(keys.session)?.user ?? null
-        if (user) setLost(user)
-        else void client.invalidateQueries({ queryKey: keys.session })
+        if (status === 401 && user) setLost(user)
+        // Whether the session is gone or only not allowed to: the server knows. A new token comes with the answer.
+        else client.fetchQuery({ ...sessionQuery, staleTime: 0 }).then((session) => {
+          if (user && !session.user) setLost(user)
+        }, () => undefined)
       }),
     [client],
   )

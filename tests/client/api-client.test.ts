@@ -2,7 +2,7 @@ import { createServer, type IncomingMessage, type Server, type ServerResponse } 
 import type { AddressInfo } from 'node:net'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { z } from 'zod'
-import { ApiProblem, fieldError, getJson, onSignedOut, sendJson, setCsrfToken } from '../../src/api/client.ts'
+import { ApiProblem, fieldError, getJson, onRefused, sendJson, setCsrfToken } from '../../src/api/client.ts'
 
 let server: Server
 let base: string
@@ -86,13 +86,13 @@ describe('reading', () => {
   })
 
   it('tells when the session has ended', async () => {
-    let told = 0
-    const stop = onSignedOut(() => (told += 1))
+    const told: number[] = []
+    const stop = onRefused((status) => told.push(status))
     await problem(getJson(`${base}/ended`, named))
     await problem(getJson(`${base}/refused`, named))
     stop()
     await problem(getJson(`${base}/ended`, named))
-    expect(told).toBe(1)
+    expect(told).toEqual([401])
   })
 })
 
