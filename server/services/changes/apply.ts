@@ -8,6 +8,7 @@ import type { StoredChange } from './types.ts'
 export interface Applied {
   /** Galaxies whose measurements, names or own fields moved. */
   touched: number[]
+  scaleChanged: boolean
   /** The galaxy of each change that added one or spoke of an added one, by change. */
   galaxies: ReadonlyMap<number, number>
   /** How many versions of measurements began or ended. */
@@ -40,7 +41,7 @@ export async function applyChanges(trx: Knex.Transaction, submission: { author: 
   const added = await applyNewMeasurements(application, changesOf(changes, 'measurement.add'))
   const replaced = await applyReplacements(application, changesOf(changes, 'measurement.replace'))
   const excluded = await applyExclusions(application, changesOf(changes, 'measurement.exclude'))
-  return { touched: [...application.touched].sort((a, b) => a - b), galaxies: application.galaxies, measurements: added + replaced + excluded }
+  return { touched: [...application.touched].sort((a, b) => a - b), scaleChanged: false, galaxies: application.galaxies, measurements: added + replaced + excluded }
 }
 
 /** The galaxy that a change is about: the one recorded with it, or one that another change has just added. */

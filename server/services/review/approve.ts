@@ -2,7 +2,7 @@
 import type { SubmissionAnswer } from '../../../core/schema/submissions.ts'
 import type { Reader, Services } from '../../http/route.ts'
 import { record } from '../audit.ts'
-import { writeRevision } from '../revision/write-revision.ts'
+import { writeRevision } from '../revision/write.ts'
 import { answerOf } from '../submissions/answer.ts'
 import { changesOfSubmissions, findSubmission, personOf } from '../submissions/load.ts'
 import { requireTransition } from '../submissions/move.ts'

@@ -7,7 +7,7 @@ import { conflictsOf } from '../changes/conflicts.ts'
 import { currentRevision } from '../changes/current.ts'
 import { presentChange, vocabularyOf } from '../changes/present.ts'
 import type { StoredChange } from '../changes/types.ts'
-import { computeRevision } from '../revision/compute-revision.ts'
+import { computeRevision } from '../revision/compute.ts'
 import type { RevisionPlan } from '../revision/plan.ts'
 
 export interface CarriedOut {
@@ -29,6 +29,6 @@ export async function carryOut(trx: Knex.Transaction, submission: { author: numb
   const before = await currentRevision(trx)
   const revision = before + 1
   const applied = await applyChanges(trx, submission, changes, revision)
-  const plan = await computeRevision(trx, { revision, touched: applied.touched })
+  const plan = await computeRevision(trx, { revision, touched: applied.touched, scaleChanged: applied.scaleChanged })
   return { before, revision, applied, plan }
 }

@@ -2,7 +2,7 @@
 import type { Effect } from '../../../core/schema/submissions.ts'
 import { StateConflict } from '../../http/errors.ts'
 import type { Reader, Services } from '../../http/route.ts'
-import { effectOf } from '../revision/compute-revision.ts'
+import { effectOf } from '../revision/effect.ts'
 import { contentHash, contentOf } from '../submissions/content.ts'
 import { changesOfSubmissions, findSubmission } from '../submissions/load.ts'
 import { carryOut } from './carry-out.ts'
