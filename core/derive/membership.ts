@@ -30,13 +30,13 @@ function holds(separation: number, hostMass: number, sphere: number): boolean {
  * Membership of a galaxy in the system of its main disturber.
  *
  * Both moduli are drawn from their errors; the systematic parts move together, by one number a draw, since a wrong scale moves all galaxies
- * alike. Masses are held. The generator is seeded by the policy and the two galaxies, so that a result does not depend on what else is computed.
+ * alike. Masses are held. The generator is seeded by the policy and the slugs of the two galaxies, so that a result does not depend on what else is computed.
  */
 export function membershipOf(galaxy: Neighbour, host: Neighbour, policy: Policy['host']): Membership {
   const sphere = sphereOf(host.mass, policy)
   const separation = Math.hypot(galaxy.x - host.x, galaxy.y - host.y, galaxy.z - host.z)
   const isSatellite = holds(separation, host.mass, sphere)
-  const draw = random(policy.seed, streamOf(galaxy.id, host.id))
+  const draw = random(policy.seed, streamOf(galaxy.slug, host.slug))
   const toGalaxy = unit(galaxy)
   const toHost = unit(host)
   const separations = new Float64Array(policy.draws)
@@ -72,7 +72,12 @@ function quantile(sorted: Float64Array, p: number): number {
   return low + (position - below) * ((sorted[below + 1] ?? low) - low)
 }
 
-/** A stream of its own for every ordered pair. */
-function streamOf(a: number, b: number): number {
-  return (Math.imul(a, 0x9e3779b1) ^ Math.imul(b + 0x7f4a7c15, 0x85ebca6b)) >>> 0
+/**
+ * A stream of its own for every ordered pair, by FNV-1a over the slugs: the database's numbers would not do, since a galaxy that is only
+ * foreseen gets another number when it is made.
+ */
+function streamOf(galaxy: string, host: string): number {
+  let hash = 0x811c9dc5
+  for (const character of `${galaxy} ${host}`) hash = Math.imul(hash ^ (character.codePointAt(0) ?? 0), 0x01000193)
+  return hash >>> 0
 }
