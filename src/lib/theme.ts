@@ -3,7 +3,7 @@ import { localSetting } from './local-setting.ts'
 /** What the reader chose; `system` follows the device. */
 export type ThemeChoice = 'system' | 'paper' | 'night'
 
-/** The same key and words as public/theme-early.js, which applies the choice before the first paint. */
+/** The same key and words as public/early.js, which applies the choice before the first paint. */
 export const themeSetting = localSetting<ThemeChoice>('theme', ['system', 'paper', 'night'])
 
 const PAPER_SURFACE = '#f6f2e9'

@@ -52,11 +52,15 @@ function Glance({ summary, signedIn }: { summary: Summary | undefined; signedIn:
       <div className="flex min-w-0 flex-col gap-6">
         <SkyInvitation />
         <div className="grid gap-6 md:grid-cols-2">
-          <Sheet title="What changed lately">{summary ? <Recent recent={summary.recent.slice(0, RECENT_SHOWN)} /> : <Skeleton height={RECENT_SHOWN * LINE_HEIGHT} />}</Sheet>
+          <Sheet title="What changed lately">
+            <Room height={RECENT_SHOWN * LINE_HEIGHT}>{summary && <Recent recent={summary.recent.slice(0, RECENT_SHOWN)} />}</Room>
+          </Sheet>
           {signedIn ? (
-            <Sheet title="Waiting for you">{summary ? <Waiting waiting={summary.waiting} /> : <Skeleton lines={5} />}</Sheet>
+            <Sheet title="Waiting for you">
+              <Room height={2 * LINE_HEIGHT}>{summary && <Waiting waiting={summary.waiting} />}</Room>
+            </Sheet>
           ) : (
-            <Sheet title="Newest release">{summary ? <Release release={summary.release} /> : <Skeleton lines={5} />}</Sheet>
+            <NewestRelease summary={summary} />
           )}
         </div>
       </div>
@@ -70,9 +74,24 @@ function Glance({ summary, signedIn }: { summary: Summary | undefined; signedIn:
           </dl>
         </Sheet>
         <Sheet title="By class">{summary ? <ClassCounts counts={summary.byClass} /> : <Skeleton lines={GALAXY_CLASSES.length} />}</Sheet>
-        {signedIn && <Sheet title="Newest release">{summary ? <Release release={summary.release} /> : <Skeleton lines={3} />}</Sheet>}
+        {signedIn && <NewestRelease summary={summary} />}
       </div>
     </div>
+  )
+}
+
+/** Room for what comes, so that nothing below moves when it is there. */
+function Room({ height, children }: { height: number; children: ReactNode }) {
+  return <div style={{ minHeight: height }}>{children ?? <Skeleton height={height} />}</div>
+}
+
+const RELEASE_HEIGHT = 124
+
+function NewestRelease({ summary }: { summary: Summary | undefined }) {
+  return (
+    <Sheet title="Newest release">
+      <Room height={RELEASE_HEIGHT}>{summary && <Release release={summary.release} />}</Room>
+    </Sheet>
   )
 }
 
