@@ -6,6 +6,6 @@ if (process.channel) {
   process.channel.unref()
   process.once('disconnect', () => {
     process.kill(process.pid, 'SIGTERM')
-    setTimeout(() => process.exit(1), 10_000).unref()
+    setTimeout(() => process.exit(1), 20_000).unref()
   })
 }
