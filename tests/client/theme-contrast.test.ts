@@ -53,6 +53,25 @@ function seenWith(colour: string, matrix: [Rgb, Rgb, Rgb]): Rgb {
   return [clip(matrix[0]), clip(matrix[1]), clip(matrix[2])]
 }
 
+const TO_XYZ: [Rgb, Rgb, Rgb] = [
+  [0.4124564, 0.3575761, 0.1804375],
+  [0.2126729, 0.7151522, 0.072175],
+  [0.0193339, 0.119192, 0.9503041],
+]
+const WHITE: Rgb = [0.95047, 1, 1.08883]
+
+/** CIE 1976 L*a*b* under D65. */
+function lab(rgb: Rgb): Rgb {
+  const root = (i: 0 | 1 | 2): number => {
+    const t = (TO_XYZ[i][0] * rgb[0] + TO_XYZ[i][1] * rgb[1] + TO_XYZ[i][2] * rgb[2]) / WHITE[i]
+    return t > 0.008856 ? Math.cbrt(t) : 7.787 * t + 16 / 116
+  }
+  const [x, y, z] = [root(0), root(1), root(2)]
+  return [116 * y - 16, 500 * (x - y), 200 * (y - z)]
+}
+
+const difference = (a: Rgb, b: Rgb): number => Math.hypot(...lab(a).map((value, i) => value - (lab(b)[i] ?? 0)))
+
 const THEMES = { paper: tokensOf(':root'), night: tokensOf(":root[data-theme='night']") }
 const TEXTS = ['ink', 'muted', 'accent', 'accent-strong', 'good', 'caution', 'stop']
 const MARKS = ['edge', 'focus', 'class-spiral', 'class-early', 'class-spheroidal', 'class-irregular', 'class-compact', 'class-unknown']
@@ -88,6 +107,16 @@ describe.each(Object.entries(THEMES))('%s', (_name, tokens) => {
 
   it.each(MARKS)('%s can be told from every surface', (mark) => {
     for (const surface of ['paper', 'sheet']) expect(contrast(token(mark), token(surface)), surface).toBeGreaterThanOrEqual(3)
+  })
+
+  it('no two class colours are alike, also for those who see fewer colours', () => {
+    const classes = MARKS.filter((mark) => mark.startsWith('class-'))
+    const views: [string, (colour: string) => Rgb][] = [['all colours', linear], ...Object.entries(DEFICIENCIES).map(([name, matrix]): [string, (colour: string) => Rgb] => [name, (colour) => seenWith(colour, matrix)])]
+    for (const [name, see] of views) {
+      for (const [i, a] of classes.entries()) {
+        for (const b of classes.slice(i + 1)) expect(difference(see(token(a)), see(token(b))), `${a} and ${b}, ${name}`).toBeGreaterThanOrEqual(25)
+      }
+    }
   })
 
   it('the ramp runs one way, also for those who see fewer colours', () => {
