@@ -44,7 +44,7 @@ export function DataTableRow<Row>({ row, index, columns, height, isTabStop, isSe
               'border-b border-line px-3 font-normal whitespace-nowrap',
               isVirtual && 'overflow-hidden text-ellipsis',
               isNumeric(column) ? 'text-right figures' : 'text-left',
-              position === 0 && 'sticky left-0 z-10 border-r border-r-line',
+              position === 0 && 'sticky left-0 z-10 border-r border-r-line max-sm:max-w-[44vw] max-sm:overflow-hidden max-sm:text-ellipsis',
               isSelected ? 'bg-accent-soft' : 'bg-sheet group-hover:bg-well group-focus-visible:bg-well',
               isSelected && position === 0 && 'shadow-[inset_3px_0_0_var(--accent)]',
             )}

@@ -139,7 +139,7 @@ export function DataTable<Row>(props: DataTableProps<Row>) {
           toolbar={toolbar}
           showTools={showTools}
           count={isLoading && isEmpty ? 'Loading …' : (countText ?? formatCounted(shown.length, 'row'))}
-          onCopy={isEmpty ? undefined : () => void copyText(rowsToTsv(columns, shown), `${formatCounted(shown.length, 'row')} with tabs between`)}
+          onCopy={isEmpty ? undefined : () => void copyText(rowsToTsv(columns, shown), `${formatCounted(shown.length, 'row')}, tab-separated`)}
           onSave={isEmpty || !fileName ? undefined : () => saveBlob(new Blob([rowsToTsv(columns, shown)], { type: 'text/tab-separated-values' }), `${fileName}.tsv`)}
         />
       )}
