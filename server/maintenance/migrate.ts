@@ -47,3 +47,9 @@ async function holdingTheLock<T>(knex: Knex, work: () => Promise<T>): Promise<T>
     return work()
   })
 }
+
+/** Names of the migrations that the database lacks. */
+export async function pendingMigrations(knex: Knex): Promise<string[]> {
+  const [, pending] = (await knex.migrate.list(settings)) as [unknown, string[]]
+  return pending
+}

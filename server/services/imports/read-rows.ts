@@ -39,7 +39,7 @@ export interface RowOutcome {
   problems: RowProblem[]
 }
 
-/** Rows that are left out or drafted already are read too, and compared with no others. */
+/** Rows that are left out are read too, and compared with no others. */
 export async function readRows(knex: Knex, headers: readonly string[], mapping: Mapping, rows: readonly RowToRead[]): Promise<RowOutcome[]> {
   const anchors = (await knex('anchors').select('key', 'label').whereNull('revTo')) as Pick<Anchor, 'key' | 'label'>[]
   const read = rows.map((row) => row.raw).map(rowReader({ headers, mapping, anchors }))
@@ -95,8 +95,9 @@ async function markDuplicates(knex: Knex, outcomes: readonly RowOutcome[]): Prom
   const galaxies = outcomes.flatMap((o) => (o.match?.kind === 'held' ? o.match.id : []))
   for (const m of await measurementsOfGalaxies(knex, galaxies)) held.add(sameness(`${m.galaxyId}`, `${m.sourceId}`, m))
   const seen = new Map<string, number>()
-  for (const o of outcomes) {
-    if (o.row.leftOut !== null || o.row.change !== null || o.match === undefined || o.match.kind === 'none' || o.source.kind === 'none') continue
+  // What is drafted already counts first, wherever it stands.
+  for (const o of [...outcomes.filter((o) => o.row.change !== null), ...outcomes.filter((o) => o.row.change === null)]) {
+    if (o.row.leftOut !== null || o.match === undefined || o.match.kind === 'none' || o.source.kind === 'none') continue
     const galaxy = o.match.kind === 'held' ? `${o.match.id}` : o.match.key
     const source = o.source.kind === 'held' ? `${o.source.id}` : o.source.key
     for (const m of o.read.measurements) {
@@ -104,6 +105,10 @@ async function markDuplicates(knex: Knex, outcomes: readonly RowOutcome[]): Prom
       const same = sameness(galaxy, source, { quantity: m.quantity, value: stated.value as number | null, textValue: m.textValue, method: m.method })
       const words = measurementWords(m)
       const first = seen.get(same)
+      if (o.row.change !== null) {
+        seen.set(same, o.row.number)
+        continue
+      }
       if (o.match.kind === 'held' && held.has(same)) o.problems.push({ column: null, message: `The catalogue holds this measurement already: ${o.match.name}, ${words}. Leave the row out.` })
       else if (first !== undefined) o.problems.push({ column: null, message: `The same measurement as row ${first}: ${words}. Leave one of them out.` })
       else seen.set(same, o.row.number)

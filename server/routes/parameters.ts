@@ -1,0 +1,10 @@
+/** Parameters that many addresses have. */
+import { z } from 'zod'
+
+/** The largest integer that an id can be in the database. */
+const LARGEST_ID = 2_147_483_647
+
+export const idNumber = z.coerce.number().int().positive().max(LARGEST_ID)
+
+/** `/:id` */
+export const one = z.object({ id: idNumber })
