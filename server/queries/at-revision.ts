@@ -36,7 +36,7 @@ export async function readRevision(knex: Knex, reader: Pick<Reader, 'permissions
   const found = await one(
     knex,
     `SELECT (SELECT max(number) FROM revisions) AS newest, revision, label FROM releases
-     ORDER BY published_at DESC, revision DESC LIMIT 1`,
+     ORDER BY revision DESC, published_at DESC LIMIT 1`,
     [],
   )
   if (!found) throw new NotFound('No release is published yet, so there is nothing to read without signing in. Nothing is wrong: come back after the first release, or sign in.')
@@ -68,24 +68,35 @@ function asRead({ newest, revision, label }: Found): ReadRevision {
 /** A piece of SQL with its values, in knex's notation (`?`). */
 export interface Fragment {
   sql: string
-  values: readonly Knex.RawBinding[]
+  bindings: readonly Knex.RawBinding[]
 }
 
-/** Holds at the revision: for a WHERE clause over a versioned table (alias without quotes, or none). */
-export function holdsAt(revision: Pick<ReadRevision, 'number' | 'current'>, alias = ''): Fragment {
-  const at = alias === '' ? '' : `${alias}.`
-  if (revision.current) return { sql: `${at}rev_to IS NULL`, values: [] }
-  return { sql: `${at}rev_from <= ? AND (${at}rev_to IS NULL OR ${at}rev_to > ?)`, values: [revision.number, revision.number] }
+/** A condition of a versioned table under an alias (none: the table's own columns). */
+export interface Holds {
+  sql: (alias?: string) => string
+  bindings: readonly Knex.RawBinding[]
+}
+
+type At = Pick<ReadRevision, 'number' | 'current'>
+
+/** Holds at the revision: for a WHERE clause over a versioned table. */
+export function holdsAt(revision: At): Holds {
+  const of = (alias?: string): string => (alias === undefined ? '' : `${alias}.`)
+  if (revision.current) return { sql: (alias) => `${of(alias)}rev_to IS NULL`, bindings: [] }
+  return {
+    sql: (alias) => `(${of(alias)}rev_from <= ? AND (${of(alias)}rev_to IS NULL OR ${of(alias)}rev_to > ?))`,
+    bindings: [revision.number, revision.number],
+  }
 }
 
 /**
  * The same as disjoint parts that each fit an index: what holds still, and what was closed since. A past revision then costs what the newest
  * costs, plus what changed after it.
  */
-export function partsAt(revision: Pick<ReadRevision, 'number' | 'current'>): Fragment[] {
-  if (revision.current) return [{ sql: 'rev_to IS NULL', values: [] }]
+export function partsAt(revision: At): Fragment[] {
+  if (revision.current) return [{ sql: 'rev_to IS NULL', bindings: [] }]
   return [
-    { sql: 'rev_to IS NULL AND rev_from <= ?', values: [revision.number] },
-    { sql: 'rev_to > ? AND rev_from <= ?', values: [revision.number, revision.number] },
+    { sql: 'rev_to IS NULL AND rev_from <= ?', bindings: [revision.number] },
+    { sql: 'rev_to > ? AND rev_from <= ?', bindings: [revision.number, revision.number] },
   ]
 }
