@@ -1,0 +1,20 @@
+import { adopt } from '../adoption/adopt.ts'
+import { statedError } from '../adoption/eligible.ts'
+import { quantity } from '../quantities.ts'
+import { canonicalOf, othersOf, scaledOf } from './canonical.ts'
+import type { MeasurementCheck } from './check.ts'
+
+/** How far it lies from what the rest says, in standard deviations of both. */
+export const agreement: MeasurementCheck = (proposed, surroundings) => {
+  const q = quantity(proposed.measurement.quantity)
+  const scaled = scaledOf(proposed, surroundings)
+  const own = canonicalOf(proposed)
+  const known = adopt(q.key, othersOf(proposed, surroundings), surroundings.scale)
+  if (scaled === null || own === null || known === null || known.value === null) return null
+  const error = Math.hypot(statedError(own) ?? 0, known.errPlus ?? 0, known.errSys ?? 0)
+  if (error <= 0) return null
+  const z = Math.abs(scaled - known.value) / error
+  const words = `${z.toFixed(1)} σ from the ${known.value.toFixed(q.decimals)}${q.unit ? ` ${q.unit}` : ''} of the other ${known.nUsed === 1 ? 'value' : `${known.nUsed} values`}`
+  if (z <= surroundings.scale.policy.tension) return { check: 'agreement', level: 'ok', sentence: `${words}.` }
+  return { check: 'agreement', level: 'warn', sentence: `${words}: look at the source again, and say in the note why it should be believed.` }
+}
