@@ -51,7 +51,9 @@ function unmarkedUtf16(bytes: Uint8Array): 'utf-16le' | 'utf-16be' | undefined {
   let even = 0
   let odd = 0
   head.forEach((byte, i) => {
-    if (byte === 0) i % 2 === 0 ? (even += 1) : (odd += 1)
+    if (byte !== 0) return
+    if (i % 2 === 0) even += 1
+    else odd += 1
   })
   const half = head.length / 2
   if (odd > half * 0.8 && even === 0) return 'utf-16le'
