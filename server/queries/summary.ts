@@ -8,17 +8,16 @@ import { holdsAt, type ReadRevision } from './at-revision.ts'
 const RECENT = 6
 
 export async function summaryAt(knex: Knex, reader: Reader, revision: ReadRevision): Promise<Summary> {
-  const r = holdsAt(revision, 'r')
-  const m = holdsAt(revision, 'm')
+  const at = holdsAt(revision)
   const counts = (await knex.raw(
-    `select (select count(*)::int from measurements m where ${m.sql}) as measurements,
-            (select count(distinct m.source)::int from measurements m where ${m.sql}) as sources,
-            (select count(*)::int from catalogue_rows r where ${r.sql} and r.host_relation = 'host') as hosts`,
-    [...m.values, ...m.values, ...r.values],
+    `select (select count(*)::int from measurements m where ${at.sql('m')}) as measurements,
+            (select count(distinct m.source)::int from measurements m where ${at.sql('m')}) as sources,
+            (select count(*)::int from catalogue_rows r where ${at.sql('r')} and r.host_relation = 'host') as hosts`,
+    [...at.bindings, ...at.bindings, ...at.bindings],
   )) as { rows: Pick<Summary, 'measurements' | 'sources' | 'hosts'>[] }
   const classes = (await knex.raw(
-    `select r.class, count(*)::int as count from catalogue_rows r where ${r.sql} and r.status <> 'withdrawn' group by 1 order by 2 desc, 1`,
-    [...r.values],
+    `select r.class, count(*)::int as count from catalogue_rows r where ${at.sql('r')} and r.status <> 'withdrawn' group by 1 order by 2 desc, 1`,
+    [...at.bindings],
   )) as { rows: Summary['byClass'] }
   const [found] = counts.rows
   if (!found) throw new Error('the catalogue could not be counted')

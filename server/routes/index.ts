@@ -1,6 +1,7 @@
 /** Every route of the application. */
 import type { Route } from '../http/route.ts'
 import { auditRoutes } from './audit.ts'
+import { galaxyRoutes } from './galaxies.ts'
 import { healthRoutes } from './health.ts'
 import { importRoutes } from './imports.ts'
 import { openApiRoutes } from './openapi.ts'
@@ -15,6 +16,7 @@ export const routes: Route[] = [
   ...healthRoutes,
   ...sessionRoutes,
   ...summaryRoutes,
+  ...galaxyRoutes,
   ...sourceRoutes,
   ...scaleRoutes,
   ...submissionRoutes,

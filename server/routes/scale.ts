@@ -9,16 +9,14 @@ export const scaleRoutes: Route[] = [
     method: 'get', path: '/api/scale', summary: 'Adopted anchors, and the policy', permission: 'catalogue.read', query: z.strictObject({ at: z.string().max(40).optional() }), answer: scaleSchema,
     handle: async ({ knex, reader, query }) => {
       const revision = await readRevision(knex, reader, query.at)
-      const m = holdsAt(revision, 'm')
-      const a = holdsAt(revision, 'a')
-      const p = holdsAt(revision, 'p')
+      const at = holdsAt(revision)
       const anchors = (await knex.raw(
         `select a.key, a.label, a.kind, a.methods, a.value, a.err, a.source,
-                (select count(*)::int from measurements m where m.anchor = a.key and ${m.sql}) as measurements
-           from anchors a where ${a.sql} order by a.label`,
-        [...m.values, ...a.values],
+                (select count(*)::int from measurements m where m.anchor = a.key and ${at.sql('m')}) as measurements
+           from anchors a where ${at.sql('a')} order by a.label`,
+        [...at.bindings, ...at.bindings],
       )) as { rows: unknown[] }
-      const policy = (await knex.raw(`select document from policies p where ${p.sql}`, [...p.values])) as { rows: { document: unknown }[] }
+      const policy = (await knex.raw(`select document from policies p where ${at.sql('p')}`, [...at.bindings])) as { rows: { document: unknown }[] }
       return { revision: revision.number, anchors: anchors.rows, policy: policy.rows[0]?.document ?? null }
     },
   }),
