@@ -27,8 +27,8 @@ const VITE = join(ROOT, 'node_modules/vite/bin/vite.js')
 run(async () => {
   requireNode()
   const { host, port, address } = wantedAddress()
-  claimCheckout(address)
-  await requirePort(host, port)
+  const { afterCrash } = claimCheckout(address)
+  await requirePort(host, port, afterCrash)
   ensurePackages()
   const { url, cluster } = await openDatabaseForCheckout()
   await superviseUntilStopped(cluster, async (whenStopping) => {

@@ -9,6 +9,7 @@ const NOTE = join(DATA, 'running.json')
 /**
  * Notes that this checkout is being served, so that a second start says so at once. A note whose process is gone counts for nothing.
  * @param {string} address
+ * @returns {{ afterCrash: boolean }} whether such a note was found
  */
 export function claimCheckout(address) {
   try {
@@ -24,7 +25,7 @@ export function claimCheckout(address) {
     try {
       writeFileSync(NOTE, note, { flag: 'wx' })
       process.once('exit', () => rmSync(NOTE, { force: true }))
-      return
+      return { afterCrash: attempt > 0 }
     } catch (error) {
       if (/** @type {NodeJS.ErrnoException} */ (error).code !== 'EEXIST') throw error
     }

@@ -11,7 +11,7 @@ const STOP_LIMIT_MS = 15_000
 /** How the preparation ends when it has printed a sentence about what is wrong. */
 const EXPLAINED = 2
 /** A server whose starter was killed needs a moment to notice and let go of the port. */
-const PORT_PATIENCE_MS = 6_000
+const PORT_PATIENCE_MS = 20_000
 
 /**
  * Where to serve, from HOST and PORT.
@@ -33,9 +33,10 @@ export function wantedAddress() {
  * Refuses, before any long work, a port that cannot be listened on.
  * @param {string} host
  * @param {number} port
+ * @param {boolean} afterCrash whether the last start of this checkout was killed, and its server may still be closing
  */
-export async function requirePort(host, port) {
-  const deadline = Date.now() + PORT_PATIENCE_MS
+export async function requirePort(host, port, afterCrash) {
+  const deadline = Date.now() + (afterCrash ? PORT_PATIENCE_MS : 0)
   for (;;) {
     const code = await tryToListen(host, port)
     if (code === null) return

@@ -22,8 +22,8 @@ import { greet } from './greet.mjs'
 run(async () => {
   requireNode()
   const { host, port, address } = wantedAddress()
-  claimCheckout(address)
-  await requirePort(host, port)
+  const { afterCrash } = claimCheckout(address)
+  await requirePort(host, port, afterCrash)
   ensurePackages()
   buildWhenStale()
   const { url, cluster } = await openDatabaseForCheckout()
