@@ -119,13 +119,13 @@ describe('approval', () => {
     await blocker.raw('LOCK TABLE reviews IN ACCESS EXCLUSIVE MODE')
     const asked = verdict(approver, waiting)
     let cut = 0
-    for (let i = 0; i < 100 && cut === 0; i += 1) {
+    for (let i = 0; i < 400 && cut === 0; i += 1) {
       await new Promise((done) => setTimeout(done, 30))
-      const { rows } = (await blocker.raw(
-        `SELECT pid FROM pg_stat_activity WHERE datname = current_database() AND wait_event_type = 'Lock' AND query LIKE '%insert into "reviews"%'`,
+      const { rows } = (await knex.raw(
+        `SELECT pid FROM pg_stat_activity WHERE datname = current_database() AND pid <> pg_backend_pid() AND wait_event_type = 'Lock' AND query LIKE '%insert into "reviews"%'`,
       )) as { rows: { pid: number }[] }
       for (const { pid } of rows) {
-        await blocker.raw('SELECT pg_terminate_backend(?)', [pid])
+        await knex.raw('SELECT pg_terminate_backend(?)', [pid])
         cut += 1
       }
     }
@@ -165,7 +165,7 @@ describe('a review', () => {
     const { approver, steward, otherApprover, ground, knex } = desk()
     const { slug } = await galaxy('Nobody decides alone')
     for (const author of [approver, steward]) {
-      const own = await submit(author, await draft(author, 'Mine', [measurementAdd({ slug }, modulus(ground.source))]))
+      const own = await submit(author, await draft(author, 'Mine', [measurementAdd({ slug }, modulus(ground.source, 27 + author.id / 100))]))
       expect(own).toMatchObject({ may: { review: false }, mayNot: expect.stringContaining('your own submission') as string })
       const before = await footprint(knex)
       for (const event of ['approve', 'return', 'reject']) {
@@ -264,6 +264,27 @@ describe('a conflict', () => {
     ;(await verdict(approver, theirs)).ok(200)
     const refused = await verdict(approver, mine)
     expect([refused.status, refused.problem().conflicts?.[0]]).toEqual([409, expect.objectContaining({ field: 'Designation', yours: 'Twice Found', by: otherCurator.name })])
+  })
+})
+
+describe('a check that stops', () => {
+  it('keeps a submission from being submitted, and from being approved when it came about since', async () => {
+    const { curator, otherCurator, approver, ground, knex } = desk()
+    const { slug } = await galaxy('Entered twice')
+    const change = measurementAdd({ slug }, modulus(ground.source, 27.31))
+    const mine = await submit(curator, await draft(curator, 'Mine', [change]))
+    ;(await verdict(approver, await submit(otherCurator, await draft(otherCurator, 'Theirs', [change])))).ok(200)
+    const before = await footprint(knex)
+    const refused = await verdict(approver, mine)
+    expect([refused.status, refused.problem().conflicts?.[0]]).toEqual([409, expect.objectContaining({ subject: 'Entered twice, distance modulus', theirs: expect.stringContaining('has this very value') as string })])
+    expect(await footprint(knex)).toBe(before)
+
+    const late = await draft(curator, 'Late', [change, galaxyAdd('entered TWICE', 11, 20)])
+    expect(late).toMatchObject({ cautions: expect.any(Number) as number })
+    expect(late.items.map((i) => i.checks.filter((c) => c.level === 'stop').length)).toEqual([1, 1])
+    const stopped = await curator.post(`/api/submissions/${late.id}/submit`, { lockVersion: late.lockVersion })
+    expect([stopped.status, stopped.problem().errors?.map((e) => e.path)]).toEqual([400, late.items.map((i) => `changes.${i.id}`)])
+    expect((await curator.get(`/api/submissions/${late.id}`)).ok<SubmissionAnswer>(200).state).toBe('draft')
   })
 })
 

@@ -133,6 +133,7 @@ describe('bad input', () => {
     const id = first?.lineage ?? 0
     const made = await draft(curator, 'Bad input', galaxyAdd('Good one', 1, 1), { action: 'measurement.exclude', payload: { measurementId: id, reason: 'blended' } })
     const good = made.items[0]?.id ?? 0
+    await curator.post(`/api/submissions/${made.id}/changes`, measurementAdd({ slug }, modulus(ground.source, 27.77)))
     const m = (more: object) => measurementAdd({ slug }, { ...modulus(ground.source), ...more })
     const amend = (set: object, reason = 'because it is') => ({ action: 'galaxy.amend', payload: { galaxy: { slug }, set, reason } })
     const table: [string, unknown, string, string][] = [
@@ -151,6 +152,8 @@ describe('bad input', () => {
       ['a value of no anchor', m({ anchorValueAssumed: 18.5 }), 'payload.measurement.anchor', 'Name the anchor'],
       ['a text for a number', m({ textValue: 'Sb' }), 'payload.measurement.textValue', 'is a number'],
       ['superseding what is none', m({ supersedes: 999_999 }), 'payload.measurement.supersedes', 'no such measurement'],
+      ['a measurement that it adds already', m({ value: 27.77, note: 'again' }), 'payload.measurement.value', 'already adds'],
+      ['a designation of another galaxy', amend({ designation: 'KESTREL B' }), 'payload.set.designation', 'already names Kestrel B'],
       ['right ascension out of range', galaxyAdd('Far', 400, 1), 'payload.ra', '0 to 360'],
       ['declination out of range', galaxyAdd('Far', 40, -91), 'payload.dec', '−90 to +90'],
       ['a designation of signs only', galaxyAdd('***', 40, 1), 'payload.designation', 'letter or digit'],

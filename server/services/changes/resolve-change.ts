@@ -1,7 +1,7 @@
 /** Checks a proposed change against the catalogue as it stands and records the version it is made from. */
 import type { Knex } from 'knex'
 import { nameKey } from '../../../core/names.ts'
-import type { ChangeInput } from '../../../core/schema/changes.ts'
+import type { ChangeInput, ChangePayload } from '../../../core/schema/changes.ts'
 import type { MeasurementInput } from '../../../core/schema/measurement.ts'
 import { BadInput } from '../../http/errors.ts'
 import type { FieldError } from '../../http/errors.ts'
@@ -27,6 +27,9 @@ export async function resolveChange(knex: Knex, input: ChangeInput, siblings: re
     case 'measurement.add': {
       galaxy = await referredGalaxy(knex, input.payload.galaxy, siblings, say)
       await checkMeasurement(knex, input.payload.measurement, galaxy, say)
+      if (siblings.some((c) => c.action === 'measurement.add' && sameMeasurement(c.payload, input.payload))) {
+        say('payload.measurement.value', 'This submission already adds that measurement.')
+      }
       break
     }
     case 'measurement.replace':
@@ -63,9 +66,7 @@ export async function resolveChange(knex: Knex, input: ChangeInput, siblings: re
       const moved = Object.entries(input.payload.set).filter(([, value]) => value !== undefined)
       for (const [field] of moved) base.fields[field] = now[field as GalaxyField]
       if (moved.every(([field, value]) => value === now[field as GalaxyField])) say('payload.set', `${held.designation} holds these values already.`)
-      if (input.payload.set.designation !== undefined && nameKey(input.payload.set.designation) === '') {
-        say('payload.set.designation', 'A designation needs at least one letter or digit.')
-      }
+      if (input.payload.set.designation !== undefined) await checkDesignation(knex, input.payload.set.designation, held.id, say)
       break
     }
     case 'name.add': {
@@ -119,6 +120,19 @@ async function checkMeasurement(knex: Knex, m: MeasurementInput, galaxy: number 
     else if (older.quantity !== m.quantity) say('payload.measurement.supersedes', 'A measurement can only supersede one of the same quantity.')
     else if (older.id === replaced?.id) say('payload.measurement.supersedes', 'A measurement cannot supersede itself.')
   }
+}
+
+/** One published value of one galaxy from one source, whatever is noted beside it. */
+function sameMeasurement(a: ChangePayload<'measurement.add'>, b: ChangePayload<'measurement.add'>): boolean {
+  const told = ({ galaxy, measurement: m }: typeof a): string => JSON.stringify([galaxy, m.quantity, m.sourceId, m.value, m.textValue, m.unit, m.method, m.limitFlag])
+  return told(a) === told(b)
+}
+
+async function checkDesignation(knex: Knex, name: string, galaxy: number, say: Say): Promise<void> {
+  if (nameKey(name) === '') return say('payload.set.designation', 'A designation needs at least one letter or digit.')
+  const other = (await namesByKey(knex, [nameKey(name)])).find((n) => n.galaxy !== galaxy)
+  const owner = other && (await galaxiesById(knex, [other.galaxy])).get(other.galaxy)
+  if (other) say('payload.set.designation', `"${name}" already names ${owner?.designation ?? 'another galaxy'}, and one name cannot mean two galaxies.`)
 }
 
 function checkNewNames(payload: { designation: string; names: readonly string[] }, say: Say): void {

@@ -1,10 +1,12 @@
 /** Which galaxies of the catalogue the rows of a table mean: by any name, then by position, and never silently. */
 import type { Knex } from 'knex'
-import { separation, unitVector } from '../../../core/astro/sphere.ts'
+import { separation } from '../../../core/astro/sphere.ts'
 import { nameKey } from '../../../core/names.ts'
 import type { ReadRow } from '../../../core/formats/import-row.ts'
 import { galaxiesById, namesByKey } from '../changes/current.ts'
 import type { HeldGalaxy } from '../changes/current.ts'
+import { galaxiesNear } from '../changes/near.ts'
+import type { Place } from '../changes/near.ts'
 
 /** Two entries closer than this are taken for one galaxy, degrees. */
 const SAME_PLACE_DEG = 1 / 60
@@ -15,11 +17,6 @@ export type GalaxyMatch =
   | { kind: 'held'; id: number; slug: string; name: string; byPositionArcsec: number | null }
   | { kind: 'new'; key: string; name: string; byPositionArcsec: number | null }
   | { kind: 'none'; problem: string }
-
-interface Place {
-  ra: number
-  dec: number
-}
 
 /** A match for each row; a row without a name has none. */
 export async function matchGalaxies(knex: Knex, rows: readonly ReadRow[], addGalaxies: boolean): Promise<(GalaxyMatch | undefined)[]> {
@@ -36,7 +33,8 @@ export async function matchGalaxies(knex: Knex, rows: readonly ReadRow[], addGal
     const known = owners.get(n.nameKey) ?? []
     if (owner && !known.includes(owner)) owners.set(n.nameKey, [...known, owner])
   }
-  const near = await nearest(knex, new Map([...places].flatMap(([key, place]) => (place && !owners.has(key) ? [[key, place] as const] : []))))
+  const strange = new Map([...places].flatMap(([key, place]) => (place && !owners.has(key) ? [[key, place] as const] : [])))
+  const near = await galaxiesNear(knex, strange, SAME_PLACE_DEG)
   const fresh = new NewGalaxies()
 
   return rows.map((row): GalaxyMatch | undefined => {
@@ -47,8 +45,8 @@ export async function matchGalaxies(knex: Knex, rows: readonly ReadRow[], addGal
     const own = row.ra !== null && row.dec !== null ? { ra: row.ra, dec: row.dec } : null
     const named = owners.get(key)
     if (named) return matchNamed(row.galaxy, named, own ?? place)
-    const by = near.get(key)
-    if (by) return { kind: 'held', id: by.galaxy.id, slug: by.galaxy.slug, name: by.galaxy.designation, byPositionArcsec: by.arcsec }
+    const by = near.get(key)?.[0]
+    if (by) return { kind: 'held', id: by.galaxy, slug: by.slug, name: by.name, byPositionArcsec: by.separationArcsec }
     if (!place) return { kind: 'none', problem: `The catalogue knows no galaxy "${row.galaxy}", and the table gives no position to add it with.` }
     if (!addGalaxies) return { kind: 'none', problem: `The catalogue knows no galaxy "${row.galaxy}". Let the import add galaxies, or correct the name.` }
     if (own && separationDeg(own, place) > SAME_PLACE_DEG) {
@@ -86,30 +84,6 @@ class NewGalaxies {
     this.known.set(key, match)
     return match
   }
-}
-
-/** The nearest galaxy of the catalogue to each place, where one is close enough to be the same. */
-async function nearest(knex: Knex, places: ReadonlyMap<string, Place>): Promise<Map<string, { galaxy: HeldGalaxy; arcsec: number }>> {
-  if (places.size === 0) return new Map()
-  const entries = [...places].map(([key, place]) => ({ key, vector: unitVector(place.ra, place.dec) }))
-  const chord = 2 * Math.sin(((SAME_PLACE_DEG / 2) * Math.PI) / 180)
-  const { rows } = (await knex.raw(
-    `SELECT p.key, r.galaxy, r.unit_vector <-> cube(ARRAY[p.x, p.y, p.z]) AS chord
-     FROM unnest(?::text[], ?::float8[], ?::float8[], ?::float8[]) AS p (key, x, y, z)
-     CROSS JOIN LATERAL (
-       SELECT galaxy, unit_vector FROM catalogue_rows
-       WHERE rev_to IS NULL AND unit_vector <@ cube_enlarge(cube(ARRAY[p.x, p.y, p.z]), ?, 3)
-       ORDER BY unit_vector <-> cube(ARRAY[p.x, p.y, p.z]) LIMIT 1) AS r`,
-    [entries.map((e) => e.key), entries.map((e) => e.vector[0]), entries.map((e) => e.vector[1]), entries.map((e) => e.vector[2]), chord],
-  )) as { rows: { key: string; galaxy: number; chord: number }[] }
-  const held = await galaxiesById(knex, rows.map((r) => r.galaxy))
-  return new Map(
-    rows.flatMap((r) => {
-      const galaxy = held.get(r.galaxy)
-      const degrees = (2 * Math.asin(Math.min(1, r.chord / 2)) * 180) / Math.PI
-      return galaxy && degrees <= SAME_PLACE_DEG ? [[r.key, { galaxy, arcsec: degrees * 3600 }] as const] : []
-    }),
-  )
 }
 
 function separationDeg(a: Place, b: Place): number {

@@ -7,6 +7,7 @@ import { conflictsOf } from '../changes/conflicts.ts'
 import { currentRevision } from '../changes/current.ts'
 import { presentChange, vocabularyOf } from '../changes/present.ts'
 import type { StoredChange } from '../changes/types.ts'
+import { checksOf, stopsIn } from '../submissions/checks-context.ts'
 import { computeRevision } from '../revision/compute.ts'
 import type { RevisionPlan } from '../revision/plan.ts'
 
@@ -25,6 +26,14 @@ export async function carryOut(trx: Knex.Transaction, submission: { author: numb
   const conflicts = await conflictsOf(trx, changes, subjects, vocabulary)
   if (conflicts.length > 0) {
     throw new StateConflict('The catalogue has moved since this submission was made. Nothing was changed: return it to its author with what differs.', conflicts)
+  }
+  // What the checks would not have let pass may have come about since: the same value, entered by somebody else.
+  const stops = stopsIn(changes, await checksOf(trx, changes, vocabulary), subjects)
+  if (stops.length > 0) {
+    throw new StateConflict(
+      'The catalogue has moved since this submission was made, and a check now stops it. Nothing was changed: return it to its author with what is named here.',
+      stops.map((s) => ({ change: s.change, subject: s.subject, field: 'Check', base: null, theirs: s.sentence, yours: null, by: null, revision: null })),
+    )
   }
   const before = await currentRevision(trx)
   const revision = before + 1

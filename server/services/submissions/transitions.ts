@@ -8,7 +8,7 @@ import { currentRevision } from '../changes/current.ts'
 import { presentChange, vocabularyOf } from '../changes/present.ts'
 import { announce } from '../review/announce.ts'
 import { answerOf } from './answer.ts'
-import { checksOf } from './checks-context.ts'
+import { checksOf, stopsIn } from './checks-context.ts'
 import { contentHash, contentOf } from './content.ts'
 import { changesOfSubmissions, findSubmission, personOf } from './load.ts'
 import { noteEditor, requireLockVersion, requireTransition } from './move.ts'
@@ -28,12 +28,9 @@ export async function submit(services: Services, reader: Reader, id: number, loc
     if (conflicts.length > 0) {
       throw new StateConflict('The catalogue has moved under this submission. It stays as it is: keep theirs or yours where they differ, then submit it again.', conflicts)
     }
-    const checks = await checksOf(trx, changes, vocabulary)
-    const stops = changes.flatMap((c) =>
-      (checks.get(c.id) ?? []).filter((check) => check.level === 'stop').map((check) => ({ path: `changes.${c.id}`, message: `${subjects.get(c.id) ?? ''}: ${check.sentence}` })),
-    )
+    const stops = stopsIn(changes, await checksOf(trx, changes, vocabulary), subjects)
     if (stops.length > 0) {
-      throw new BadInput(`${stops.length === 1 ? 'One check stops' : `${stops.length} checks stop`} this submission. It stays a draft: mend or remove what is named here, then submit it again.`, stops)
+      throw new BadInput(`${stops.length === 1 ? 'One check stops' : `${stops.length} checks stop`} this submission. It stays a draft: mend or remove what is named here, then submit it again.`, stops.map((s) => ({ path: `changes.${s.change}`, message: `${s.subject}: ${s.sentence}` })))
     }
 
     const content = contentOf(row, changes)
