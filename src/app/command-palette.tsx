@@ -6,9 +6,12 @@ import { useResolve } from '../api/resolve.ts'
 import { useSession } from '../api/session.ts'
 import { ClassMark } from '../components/class-mark.tsx'
 import { KeyHint } from '../components/key-hint.tsx'
+import { useSettled } from '../lib/use-settled.ts'
 import { useAvailableActions } from './actions/use-actions.ts'
 import { PAGES } from './pages.ts'
 import { paletteGroups, type PaletteEntry } from './palette-entries.ts'
+
+const TYPING_PAUSE_MS = 120
 
 export interface CommandPaletteProps {
   isOpen: boolean
@@ -33,7 +36,7 @@ function PaletteContent({ onDone }: { onDone: () => void }) {
   const navigate = useNavigate()
   const { permissions } = useSession()
   const actions = useAvailableActions()
-  const found = useResolve(typed)
+  const found = useResolve(useSettled(typed, TYPING_PAUSE_MS))
   const pages = PAGES.filter((page) => !page.needs || permissions.includes(page.needs))
   const matches = typed.trim().length >= 2 ? (found.data?.matches ?? []) : []
   const groups = paletteGroups(typed, matches, pages, actions)
