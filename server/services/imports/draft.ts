@@ -1,9 +1,12 @@
 /** Good rows become the changes of a draft; bad ones stay for mending, and the next draft takes up only what no draft has yet. */
 import type { Knex } from 'knex'
+import { raw } from 'objection'
 import { nameKey } from '../../../core/names.ts'
 import type { ChangeInput, GalaxyRef } from '../../../core/schema/changes.ts'
 import { BadInput, StateConflict } from '../../http/errors.ts'
 import type { Reader, Services } from '../../http/route.ts'
+import { ImportModel } from '../../models/import.ts'
+import { SubmissionModel } from '../../models/submission.ts'
 import { record } from '../audit.ts'
 import { currentRevision } from '../changes/current.ts'
 import { insertMany } from '../changes/insert-many.ts'
@@ -40,8 +43,10 @@ export async function draftOfImport(services: Services, reader: Reader, id: numb
     if (last && last.state !== 'draft') await requireNothingPending(trx, last, ready)
     const submission = last?.state === 'draft' ? last.id : await insertDraft(trx, person, input)
     const changes = await writeChanges(trx, id, submission, ready, person)
-    await trx('imports').where({ id }).update({ submission })
-    await trx('submissions').where({ id: submission }).update({ updatedAt: trx.fn.now(), lockVersion: trx.raw('lock_version + 1') })
+    await ImportModel.query(trx).findById(id).patch({ submission })
+    await SubmissionModel.query(trx)
+      .findById(submission)
+      .patch({ updatedAt: raw('now()'), lockVersion: raw('lock_version + 1') })
     await record(trx, person, 'import.draft', `import:${id}`, { submission, changes, rows: ready.length })
     return { submission, changes, left: open.length - ready.length }
   })

@@ -6,6 +6,8 @@ import { folderStore } from '../../gateways/file-store.ts'
 import { BadInput, NotFound, StateConflict } from '../../http/errors.ts'
 import type { FieldError } from '../../http/errors.ts'
 import type { Reader, Services } from '../../http/route.ts'
+import { ImportModel } from '../../models/import.ts'
+import { ImportRowModel } from '../../models/import-row.ts'
 import { record } from '../audit.ts'
 import { sourcesById } from '../changes/current.ts'
 import { insertMany } from '../changes/insert-many.ts'
@@ -28,13 +30,10 @@ export async function createImport(services: Services, reader: Reader, upload: U
   const stored = await store.put(upload.bytes)
   try {
     return await services.knex.transaction(async (trx) => {
-      const [made] = (await trx('imports')
-        .insert({
-          owner: person.id, fileName: fileName(upload.name), format: table.format, bytes: stored.bytes, sha256: stored.sha256, storeKey: stored.key,
-          headers: JSON.stringify(table.headers), mapping: JSON.stringify(guessMapping(table.headers, table.rows.slice(0, 50))),
-        })
-        .returning('id')) as { id: number }[]
-      if (!made) throw new Error('the import was not inserted')
+      const made = await ImportModel.query(trx).insert({
+        owner: person.id, fileName: fileName(upload.name), format: table.format, bytes: stored.bytes, sha256: stored.sha256, storeKey: stored.key,
+        headers: table.headers, mapping: guessMapping(table.headers, table.rows.slice(0, 50)),
+      })
       await insertMany(trx, 'importRows', table.rows.map((raw, i) => ({ import: made.id, number: i + 1, raw: JSON.stringify(raw) })))
       const kept = await findImport(trx, made.id, reader)
       await reread(trx, kept, await rowsOf(trx, made.id))
@@ -71,7 +70,7 @@ export async function patchMapping(services: Services, reader: Reader, id: numbe
     const before = await findImport(trx, id, reader, true)
     await checkMapping(trx, before, mapping)
     const kept = { ...before, mapping }
-    await trx('imports').where({ id }).update({ mapping: JSON.stringify(mapping) })
+    await ImportModel.query(trx).findById(id).patch({ mapping })
     await reread(trx, kept, await rowsOf(trx, id))
     return answerOfImport(trx, kept)
   })
@@ -152,7 +151,7 @@ export async function patchRow(
     if (patch.cells?.some((cell) => cell.includes('\u0000'))) throw new BadInput('The row was not changed.', [{ path: 'cells', message: 'A cell holds a NUL character.' }])
     row.raw = patch.cells?.map((cell) => cell.trim()) ?? row.raw
     row.leftOut = patch.leftOut === undefined ? row.leftOut : patch.leftOut
-    await trx('importRows').where({ import: id, number }).update({ raw: JSON.stringify(row.raw), leftOut: row.leftOut })
+    await ImportRowModel.query(trx).findById([id, number]).patch({ raw: row.raw, leftOut: row.leftOut })
     await reread(trx, kept, rows)
     return answerOfImport(trx, kept)
   })

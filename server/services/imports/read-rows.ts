@@ -1,4 +1,5 @@
 /** Reads all rows of a table under its mapping against the catalogue as it stands: what each would become, and its problems in words. */
+import { setImmediate as nextTurn } from 'node:timers/promises'
 import type { Knex } from 'knex'
 import { labelInSentence, measureWords } from '../../../core/formats/measure-words.ts'
 import { columnName, rowReader } from '../../../core/formats/import-row.ts'
@@ -42,7 +43,7 @@ export interface RowOutcome {
 /** Rows that are left out are read too, and compared with no others. */
 export async function readRows(knex: Knex, headers: readonly string[], mapping: Mapping, rows: readonly RowToRead[]): Promise<RowOutcome[]> {
   const anchors = (await knex('anchors').select('key', 'label').whereNull('revTo')) as Pick<Anchor, 'key' | 'label'>[]
-  const read = rows.map((row) => row.raw).map(rowReader({ headers, mapping, anchors }))
+  const read = await readAll(rows, rowReader({ headers, mapping, anchors }))
   const matches = await matchGalaxies(knex, read, mapping.addGalaxies)
   const sources = await matchSources(knex, read.map((r) => r.source))
   const constant = await constantSource(knex, mapping.constants.sourceId)
@@ -62,6 +63,18 @@ export async function readRows(knex: Knex, headers: readonly string[], mapping: 
   })
   await markDuplicates(knex, outcomes)
   return outcomes
+}
+
+const ROWS_AT_A_TIME = 2000
+
+/** A large table must not keep everybody else waiting: others get their turn every so many rows. */
+async function readAll(rows: readonly RowToRead[], reader: (cells: readonly string[]) => ReadRow): Promise<ReadRow[]> {
+  const read: ReadRow[] = []
+  for (const [i, row] of rows.entries()) {
+    if (i > 0 && i % ROWS_AT_A_TIME === 0) await nextTurn()
+    read.push(reader(row.raw))
+  }
+  return read
 }
 
 function parsedOf(read: ReadRow, match: GalaxyMatch | undefined, source: SourceMatch): ParsedRow {

@@ -1,6 +1,10 @@
 /** Approval: one transaction, one lock, one revision. */
+import { raw } from 'objection'
 import type { SubmissionAnswer } from '../../../core/schema/submissions.ts'
 import type { Reader, Services } from '../../http/route.ts'
+import { ReviewModel } from '../../models/review.ts'
+import { RevisionModel } from '../../models/revision.ts'
+import { SubmissionModel } from '../../models/submission.ts'
 import { record } from '../audit.ts'
 import { writeRevision } from '../revision/write.ts'
 import { answerOf } from '../submissions/answer.ts'
@@ -29,11 +33,11 @@ export async function approve(services: Services, reader: Reader, id: number, de
       const changes = await changesOfSubmissions(trx, [id])
       const { revision, applied, plan } = await carryOut(trx, row, changes)
       await writeRevision(trx, plan)
-      await trx('revisions').insert({ number: revision, submission: id, approvedBy: person.id, summary: row.title })
-      await trx('reviews').insert({ submission: id, version: row.version, contentHash: decision.contentHash, reviewer: person.id, verdict: 'approved', note: decision.note })
-      await trx('submissions').where({ id }).update({
-        state: 'approved', revision, decidedBy: person.id, decidedAt: trx.fn.now(), decisionNote: decision.note === '' ? null : decision.note,
-        updatedAt: trx.fn.now(), lockVersion: row.lockVersion + 1,
+      await RevisionModel.query(trx).insert({ number: revision, submission: id, approvedBy: person.id, summary: row.title })
+      await ReviewModel.query(trx).insert({ submission: id, version: row.version, contentHash: decision.contentHash, reviewer: person.id, verdict: 'approved', note: decision.note })
+      await SubmissionModel.query(trx).findById(id).patch({
+        state: 'approved', revision, decidedBy: person.id, decidedAt: raw('now()'), decisionNote: decision.note === '' ? null : decision.note,
+        updatedAt: raw('now()'), lockVersion: row.lockVersion + 1,
       })
       await nameAddedGalaxies(trx, applied.galaxies)
       await record(trx, person.id, 'submission.approve', `submission:${id}`, { revision, version: row.version, contentHash: decision.contentHash, changes: changes.length })

@@ -1,7 +1,10 @@
 /** Returning and rejecting. */
+import { raw } from 'objection'
 import type { SubmissionAnswer } from '../../../core/schema/submissions.ts'
 import { StateConflict } from '../../http/errors.ts'
 import type { Reader, Services } from '../../http/route.ts'
+import { ReviewModel } from '../../models/review.ts'
+import { SubmissionModel } from '../../models/submission.ts'
 import { record } from '../audit.ts'
 import { answerOf } from '../submissions/answer.ts'
 import { findSubmission, personOf } from '../submissions/load.ts'
@@ -21,9 +24,9 @@ export async function refuse(services: Services, reader: Reader, id: number, eve
     await requireTransition(trx, row, event, reader)
     requireHash(row, decision.contentHash)
     const person = personOf(reader)
-    await trx('reviews').insert({ submission: id, version: row.version, contentHash: decision.contentHash, reviewer: person.id, verdict: state, note: decision.note })
-    await trx('submissions').where({ id }).update({
-      state, decidedBy: person.id, decidedAt: trx.fn.now(), decisionNote: decision.note, updatedAt: trx.fn.now(), lockVersion: row.lockVersion + 1,
+    await ReviewModel.query(trx).insert({ submission: id, version: row.version, contentHash: decision.contentHash, reviewer: person.id, verdict: state, note: decision.note })
+    await SubmissionModel.query(trx).findById(id).patch({
+      state, decidedBy: person.id, decidedAt: raw('now()'), decisionNote: decision.note, updatedAt: raw('now()'), lockVersion: row.lockVersion + 1,
     })
     await record(trx, person.id, action, `submission:${id}`, { version: row.version, note: decision.note })
     await announce(trx, { kind: 'submission', submission: id, state })

@@ -1,9 +1,12 @@
 /** Making, renaming and removing submissions, and their changes. */
 import type { Knex } from 'knex'
+import { raw } from 'objection'
 import type { ChangeInput } from '../../../core/schema/changes.ts'
 import type { SubmissionAnswer } from '../../../core/schema/submissions.ts'
 import { BadInput, NotFound, StateConflict } from '../../http/errors.ts'
 import type { Reader, Services } from '../../http/route.ts'
+import { ChangeModel } from '../../models/change.ts'
+import { SubmissionModel } from '../../models/submission.ts'
 import { record } from '../audit.ts'
 import { currentRevision } from '../changes/current.ts'
 import { resolveChange } from '../changes/resolve-change.ts'
@@ -22,10 +25,7 @@ export async function createSubmission(services: Services, reader: Reader, input
 
 /** A new draft, within a transaction. */
 export async function insertDraft(trx: Knex.Transaction, author: number, input: { title: string; summary: string }): Promise<number> {
-  const [row] = (await trx('submissions')
-    .insert({ author, title: input.title, summary: input.summary, baseRevision: await currentRevision(trx) })
-    .returning('id')) as { id: number }[]
-  if (!row) throw new Error('the draft was not inserted')
+  const row = await SubmissionModel.query(trx).insert({ author, title: input.title, summary: input.summary, baseRevision: await currentRevision(trx) })
   await noteEditor(trx, row.id, author)
   return row.id
 }
@@ -38,9 +38,9 @@ export async function patchSubmission(
 ): Promise<SubmissionAnswer> {
   await editing(services, id, reader, async (trx, row) => {
     requireLockVersion(row, patch.lockVersion, patch)
-    await trx('submissions')
-      .where({ id })
-      .update({ title: patch.title ?? row.title, summary: patch.summary ?? row.summary })
+    await SubmissionModel.query(trx)
+      .findById(id)
+      .patch({ title: patch.title ?? row.title, summary: patch.summary ?? row.summary })
   })
   return answerOf(services.knex, id, reader)
 }
@@ -50,7 +50,7 @@ export async function removeSubmission(services: Services, reader: Reader, id: n
   await services.knex.transaction(async (trx) => {
     const row = await findSubmission(trx, id, reader, true)
     await requireTransition(trx, row, 'remove', reader)
-    await trx('submissions').where({ id }).delete()
+    await SubmissionModel.query(trx).deleteById(id)
     await record(trx, personOf(reader).id, 'submission.remove', `submission:${id}`, { title: row.title })
   })
 }
@@ -61,7 +61,7 @@ export async function addChange(services: Services, reader: Reader, id: number, 
     if (siblings.length >= MOST_CHANGES) throw new BadInput(`A submission holds at most ${MOST_CHANGES} changes. Begin another one.`)
     const resolved = await resolveChange(trx, input, siblings)
     const position = Math.max(0, ...siblings.map((c) => c.position)) + 1
-    await trx('changes').insert({ submission: id, position, ...columnsOf(resolved) })
+    await ChangeModel.query(trx).insert({ submission: id, position, ...attributesOf(resolved) })
   })
   return answerOf(services.knex, id, reader)
 }
@@ -76,7 +76,9 @@ export async function patchChange(services: Services, reader: Reader, id: number
       throw new BadInput('A change keeps its kind. Remove it and add another one instead.', [{ path: 'action', message: `This change is ${old.action}.` }])
     }
     const resolved = await resolveChange(trx, input, all.filter((c) => c.id !== change))
-    await trx('changes').where({ id: change }).update({ ...columnsOf(resolved), updatedAt: trx.fn.now() })
+    await ChangeModel.query(trx)
+      .findById(change)
+      .patch({ ...attributesOf(resolved), updatedAt: raw('now()') })
   })
   return answerOf(services.knex, id, reader)
 }
@@ -92,12 +94,16 @@ export async function removeChange(services: Services, reader: Reader, id: numbe
         `${leaning.length} other ${leaning.length === 1 ? 'change speaks' : 'changes speak'} of the galaxy that this one adds (number ${numbers}${leaning.length > 8 ? ' ...' : ''}). Remove those first. Nothing was changed.`,
       )
     }
-    await trx('changes').where({ id: change }).delete()
+    await ChangeModel.query(trx).deleteById(change)
   })
   return answerOf(services.knex, id, reader)
 }
 
-/** A change as the table holds it. */
+function attributesOf({ input, base, galaxy }: ResolvedChange): { action: ChangeInput['action']; payload: object; base: object | null; galaxy: number | null } {
+  return { action: input.action, payload: input.payload, base, galaxy }
+}
+
+/** A change as the table holds it, for inserting many. */
 export function columnsOf(resolved: ResolvedChange): Record<string, unknown> {
   const { input, base, galaxy } = resolved
   return { action: input.action, payload: JSON.stringify(input.payload), base: base === null ? null : JSON.stringify(base), galaxy }

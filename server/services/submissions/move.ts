@@ -1,9 +1,11 @@
 /** The one way by which anything happens to a submission: lock it, ask the table of states, act, note who wrote in it. */
 import type { Knex } from 'knex'
+import { raw } from 'objection'
 import { mayAct, refusal, refusalOf, transition } from '../../../core/submission/state-machine.ts'
 import type { SubmissionEvent, Transition } from '../../../core/submission/state-machine.ts'
 import { Forbidden, StateConflict } from '../../http/errors.ts'
 import type { Reader, Services } from '../../http/route.ts'
+import { SubmissionModel } from '../../models/submission.ts'
 import { findSubmission, personOf, standingOf } from './load.ts'
 import type { SubmissionRow } from './load.ts'
 
@@ -30,7 +32,7 @@ export async function editing<T>(services: Services, id: number, reader: Reader,
     await requireTransition(trx, row, 'edit', reader)
     const result = await work(trx, row)
     await noteEditor(trx, id, personOf(reader).id)
-    await trx('submissions').where({ id }).update({ updatedAt: trx.fn.now(), lockVersion: row.lockVersion + 1 })
+    await SubmissionModel.query(trx).findById(id).patch({ updatedAt: raw('now()'), lockVersion: row.lockVersion + 1 })
     return result
   })
 }

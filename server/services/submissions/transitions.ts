@@ -1,7 +1,12 @@
 /** The author's moves, and remarks. */
+import { raw } from 'objection'
 import type { SubmissionAnswer } from '../../../core/schema/submissions.ts'
 import { BadInput, NotFound, StateConflict } from '../../http/errors.ts'
 import type { Reader, Services } from '../../http/route.ts'
+import { ChangeModel } from '../../models/change.ts'
+import { RemarkModel } from '../../models/remark.ts'
+import { SubmissionModel } from '../../models/submission.ts'
+import { SubmissionVersionModel } from '../../models/submission-version.ts'
 import { record } from '../audit.ts'
 import { conflictsOf } from '../changes/conflicts.ts'
 import { currentRevision } from '../changes/current.ts'
@@ -37,10 +42,10 @@ export async function submit(services: Services, reader: Reader, id: number, loc
     const hash = contentHash(content)
     const person = personOf(reader)
     const version = row.version + 1
-    await trx('submissionVersions').insert({ submission: id, version, contentHash: hash, content: JSON.stringify(content), submittedBy: person.id })
+    await SubmissionVersionModel.query(trx).insert({ submission: id, version, contentHash: hash, content, submittedBy: person.id })
     await noteEditor(trx, id, person.id)
-    await trx('submissions').where({ id }).update({
-      state: 'submitted', version, contentHash: hash, submittedAt: trx.fn.now(), updatedAt: trx.fn.now(), baseRevision: await currentRevision(trx),
+    await SubmissionModel.query(trx).findById(id).patch({
+      state: 'submitted', version, contentHash: hash, submittedAt: raw('now()'), updatedAt: raw('now()'), baseRevision: await currentRevision(trx),
       decidedBy: null, decidedAt: null, decisionNote: null, lockVersion: row.lockVersion + 1,
     })
     await record(trx, person.id, 'submission.submit', `submission:${id}`, { version, contentHash: hash })
@@ -54,7 +59,7 @@ export async function withdraw(services: Services, reader: Reader, id: number, l
     const row = await findSubmission(trx, id, reader, true)
     await requireTransition(trx, row, 'withdraw', reader)
     requireLockVersion(row, lockVersion)
-    await trx('submissions').where({ id }).update({ state: 'withdrawn', decidedBy: null, decidedAt: trx.fn.now(), updatedAt: trx.fn.now(), lockVersion: row.lockVersion + 1 })
+    await SubmissionModel.query(trx).findById(id).patch({ state: 'withdrawn', decidedBy: null, decidedAt: raw('now()'), updatedAt: raw('now()'), lockVersion: row.lockVersion + 1 })
     await record(trx, personOf(reader).id, 'submission.withdraw', `submission:${id}`, {})
     await announce(trx, { kind: 'submission', submission: id, state: 'withdrawn' })
   })
@@ -66,10 +71,10 @@ export async function remark(services: Services, reader: Reader, id: number, inp
   await services.knex.transaction(async (trx) => {
     await findSubmission(trx, id, reader)
     if (input.change !== null) {
-      const change = (await trx('changes').select('id').where({ id: input.change, submission: id }).first()) as { id: number } | undefined
+      const change = await ChangeModel.query(trx).findOne({ id: input.change, submission: id })
       if (!change) throw new NotFound(`Submission ${id} has no change ${input.change}.`)
     }
-    await trx('remarks').insert({ submission: id, change: input.change, author: personOf(reader).id, body: input.body })
+    await RemarkModel.query(trx).insert({ submission: id, change: input.change, author: personOf(reader).id, body: input.body })
   })
   return answerOf(services.knex, id, reader)
 }
