@@ -3,6 +3,7 @@ import type { Route } from '../http/route.ts'
 import { auditRoutes } from './audit.ts'
 import { galaxyRoutes } from './galaxies.ts'
 import { healthRoutes } from './health.ts'
+import { hostRoutes } from './hosts.ts'
 import { importRoutes } from './imports.ts'
 import { openApiRoutes } from './openapi.ts'
 import { releaseRoutes } from './releases.ts'
@@ -17,6 +18,7 @@ export const routes: Route[] = [
   ...sessionRoutes,
   ...summaryRoutes,
   ...galaxyRoutes,
+  ...hostRoutes,
   ...sourceRoutes,
   ...scaleRoutes,
   ...submissionRoutes,

@@ -8,3 +8,8 @@ export const idNumber = z.coerce.number().int().positive().max(LARGEST_ID)
 
 /** `/:id` */
 export const one = z.object({ id: idNumber })
+
+/** `?at=`: a release label, or a revision number. */
+export const atQuery = z.strictObject({
+  at: z.string().regex(/^[0-9A-Za-z][0-9A-Za-z.-]{0,39}$/, 'Give a revision number or the label of a release.').optional(),
+})
