@@ -113,6 +113,7 @@ export async function up(knex: Knex): Promise<void> {
       resolved_at timestamptz
     );
     CREATE INDEX remarks_submission ON remarks (submission, id);
+    CREATE INDEX remarks_change ON remarks (change) WHERE change IS NOT NULL;
 
     CREATE TABLE revisions (
       number integer PRIMARY KEY CHECK (number > 0),
@@ -153,6 +154,8 @@ export async function up(knex: Knex): Promise<void> {
       PRIMARY KEY (import, number)
     );
     CREATE INDEX import_rows_bad ON import_rows (import, number) WHERE problems <> '[]';
+    -- Removing a change looks for the row that it came from.
+    CREATE INDEX import_rows_change ON import_rows (change) WHERE change IS NOT NULL;
   `)
 }
 

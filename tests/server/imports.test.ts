@@ -171,6 +171,26 @@ describe('rows', () => {
     expect((await rows(again.id))[0]?.problems[0]?.message).toContain('The catalogue holds this measurement already: Mended A')
   })
 
+  it('are free again when their draft is removed, and wait for a galaxy that is under review', async () => {
+    const { curator } = desk()
+    const made = await upload(`${HEAD}Freed,130,5,velocity,10,1,,,Ref+2020\nFreed,130,5,B magnitude,bright,,,,Ref+2020\n`)
+    const first = (await makeDraft(made.id)).ok<{ submission: number; changes: number }>(201)
+    ;(await curator.delete(`/api/submissions/${first.submission}`)).ok(204)
+    expect((await curator.get(`/api/imports/${made.id}`)).ok<ImportAnswer>(200).submission).toBeNull()
+    const second = (await makeDraft(made.id)).ok<{ submission: number; changes: number }>(201)
+    expect(second.changes).toBe(first.changes)
+    const draft = (await curator.get(`/api/submissions/${second.submission}`)).ok<SubmissionAnswer>(200)
+    ;(await curator.post(`/api/submissions/${second.submission}/submit`, { lockVersion: draft.lockVersion })).ok(200)
+    const cells = (await rows(made.id))[1]?.raw.map((cell) => (cell === 'bright' ? '14.2' : cell))
+    ;(await curator.patch(`/api/imports/${made.id}/rows/2`, { cells })).ok(200)
+    const early = await makeDraft(made.id)
+    expect([early.status, early.problem().detail]).toEqual([409, expect.stringContaining('adds Freed and waits for review')])
+    const { approver } = desk()
+    const waiting = (await curator.get(`/api/submissions/${second.submission}`)).ok<SubmissionAnswer>(200)
+    ;(await approver.post(`/api/submissions/${second.submission}/approve`, { contentHash: waiting.contentHash })).ok(200)
+    expect((await makeDraft(made.id)).ok<{ changes: number; left: number }>(201)).toMatchObject({ changes: 1, left: 0 })
+  })
+
   it('find galaxies by any name, then by position, and say so', async () => {
     const { curator } = desk()
     const known = (await curator.post('/api/submissions', { title: 'Known ones' })).ok<SubmissionAnswer>(201)

@@ -25,13 +25,13 @@ export async function carryOut(trx: Knex.Transaction, submission: { author: numb
   const subjects = new Map(changes.map((c) => [c.id, presentChange(c, vocabulary).subject]))
   const conflicts = await conflictsOf(trx, changes, subjects, vocabulary)
   if (conflicts.length > 0) {
-    throw new StateConflict('The catalogue has moved since this submission was made. Nothing was changed: return it to its author with what differs.', conflicts)
+    throw new StateConflict('The catalogue has moved since this submission was made. Nothing was changed: where the two differ, its author has to keep one or the other.', conflicts)
   }
   // What the checks would not have let pass may have come about since: the same value, entered by somebody else.
   const stops = stopsIn(changes, await checksOf(trx, changes, vocabulary), subjects)
   if (stops.length > 0) {
     throw new StateConflict(
-      'The catalogue has moved since this submission was made, and a check now stops it. Nothing was changed: return it to its author with what is named here.',
+      'A check stops this submission as the catalogue stands now. Nothing was changed: its author has to mend or remove what is named here.',
       stops.map((s) => ({ change: s.change, subject: s.subject, field: 'Check', base: null, theirs: s.sentence, yours: null, by: null, revision: null })),
     )
   }
