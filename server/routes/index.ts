@@ -1,6 +1,7 @@
 /** Every route of the application. */
 import type { Route } from '../http/route.ts'
 import { auditRoutes } from './audit.ts'
+import { exportRoutes } from './export.ts'
 import { galaxyRoutes } from './galaxies.ts'
 import { healthRoutes } from './health.ts'
 import { hostRoutes } from './hosts.ts'
@@ -18,6 +19,7 @@ export const routes: Route[] = [
   ...sessionRoutes,
   ...summaryRoutes,
   ...galaxyRoutes,
+  ...exportRoutes,
   ...hostRoutes,
   ...sourceRoutes,
   ...scaleRoutes,
