@@ -41,7 +41,7 @@ function requirePermission(route: AnyRoute, request: Request): void {
 
 function answerWith(route: AnyRoute, services: Services): RequestHandler {
   return async (request: Request, response: Response) => {
-    if (route.body) requireShallow(request.body)
+    if (route.body) requireSound(request.body)
     const context: AnyContext = {
       ...services, request, response, reader: readerOf(request.user),
       params: parsePart(route.params, request.params, 'params'),
@@ -87,11 +87,17 @@ function uploadReader({ field, maxBytes }: { field: string; maxBytes: number }):
   }
 }
 
-/** @throws BadInput for a value nested deeper than any of ours */
-function requireShallow(value: unknown, depth = 0): void {
-  if (depth > DEEPEST) throw new BadInput('The body is nested too deeply. Nothing was changed.')
+/** NUL, which PostgreSQL's texts cannot hold, and halves of a surrogate pair, which are no character. */
+const UNSTORABLE = /\0|\p{Surrogate}/u
+
+/** @throws BadInput for a value nested deeper than any of ours, or a text that cannot be stored */
+function requireSound(value: unknown, path: readonly string[] = []): void {
+  if (path.length > DEEPEST) throw new BadInput('The body is nested too deeply. Nothing was changed.')
+  if (typeof value === 'string' && UNSTORABLE.test(value)) {
+    throw new BadInput('A text holds a character that cannot be stored. Nothing was changed.', [{ path: path.join('.'), message: 'This holds a NUL or half a character. Type it again.' }])
+  }
   if (typeof value !== 'object' || value === null) return
-  for (const member of Object.values(value)) requireShallow(member, depth + 1)
+  for (const [key, member] of Object.entries(value)) requireSound(member, [...path, key])
 }
 
 /** An address that exists, asked in a way that it has not. */
