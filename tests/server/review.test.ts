@@ -65,6 +65,8 @@ describe('approval', () => {
 
     const approved = (await verdict(approver, waiting, 'approve', 'Well done')).ok<SubmissionAnswer>(200)
     expect(approved).toMatchObject({ state: 'approved', revision: before.n + 1, decisionNote: 'Well done', decidedBy: approver.name })
+    const audited = (await knex('auditLog').where({ subject: `submission:${waiting.id}` }).orderBy('id').select('actor', 'action')) as unknown[]
+    expect(audited).toEqual([{ actor: curator.id, action: 'submission.submit' }, { actor: approver.id, action: 'submission.approve' }])
     await expectForetold(effect)
     const changed = (await knex.raw('SELECT slug FROM catalogue_rows WHERE rev_from = ? ORDER BY slug', [before.n + 1])) as { rows: { slug: string }[] }
     expect(effect.galaxies.map((g) => g.slug).sort()).toEqual(changed.rows.map((r) => r.slug))

@@ -176,6 +176,10 @@ describe('bad input', () => {
     }
     const turned = await curator.patch(`/api/submissions/${made.id}/changes/${good}`, amend({ class: 'spiral' }))
     expect([turned.status, turned.problem().errors?.[0]?.path]).toEqual([400, 'action'])
+    for (const text of ['A\u0000', 'A\ud800', '\udc00']) {
+      expect([text, (await curator.post(`/api/submissions/${made.id}/changes`, galaxyAdd(text))).status]).toEqual([text, 400])
+      expect([text, (await curator.post('/api/submissions', { title: text })).status]).toEqual([text, 400])
+    }
     for (const body of [{}, { title: '' }, { title: 'x'.repeat(161) }, { title: 'Fine', state: 'approved' }, { title: 'Fine', author: 1 }]) {
       expect([body, (await curator.post('/api/submissions', body)).status]).toEqual([body, 400])
     }
