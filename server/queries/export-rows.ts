@@ -1,5 +1,5 @@
 /** All rows of a filter, as a stream that reads no faster than it is read. */
-import { Readable } from 'node:stream'
+import type { Readable } from 'node:stream'
 import type { Knex } from 'knex'
 import type { Client } from 'pg'
 import QueryStream from 'pg-query-stream'
