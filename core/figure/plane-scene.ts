@@ -1,0 +1,76 @@
+/** A supergalactic section: galaxies of a cube seen along one of its axes, distances to scale. */
+import RBush from 'rbush'
+import { dotMark, hitOf, inDrawingOrder, markSize, type PlacedGalaxy } from './dots.ts'
+import type { SceneOptions } from './furniture.ts'
+import type { FigureGalaxy } from './galaxy.ts'
+import { placeLabels } from './labels.ts'
+import { layOut } from './layout.ts'
+import { observerMarks } from './observer.ts'
+import { planeAxes } from './plane-axes.ts'
+import { ringMarks, scaleBar, zoneMarks } from './plane-ground.ts'
+import { planeHeight, planeMap } from './plane-map.ts'
+import type { FigureRecipe } from './recipe.ts'
+import type { Box, Mark, Scene } from './scene.ts'
+import { styleOf } from './style.ts'
+import { textBox } from './text-metrics.ts'
+import { AXES_OF, galaxyCount, projectionWords, titleOf } from './words.ts'
+import { zoneWedges } from './zone.ts'
+
+/** Galaxies with a position inside of the cube; one without a distance has no place in space. */
+function withinCube(galaxies: readonly FigureGalaxy[], { plane }: FigureRecipe): FigureGalaxy[] {
+  const { sgx, sgy, sgz } = plane.centre ?? { sgx: 0, sgy: 0, sgz: 0 }
+  const near = (value: number | null, middle: number): boolean => value !== null && Math.abs(value - middle) <= plane.radius
+  return galaxies.filter((galaxy) => near(galaxy.sgx, sgx) && near(galaxy.sgy, sgy) && near(galaxy.sgz, sgz))
+}
+
+export function planeScene(galaxies: readonly FigureGalaxy[], recipe: FigureRecipe, { bare = false, releaseLabel = '' }: SceneOptions = {}): Scene {
+  const style = styleOf(recipe)
+  const shown = withinCube(galaxies, recipe)
+  const [acrossAxis, upAxis] = AXES_OF[recipe.plane.axes]
+  const wedges = recipe.plane.zoneOfAvoidance && zoneWedges(acrossAxis, upAxis).length > 0
+  const layout = layOut({
+    recipe,
+    style,
+    context: { releaseLabel, count: shown.length, of: galaxies.length },
+    mapHeight: (width) => planeHeight(width, style),
+    content: { classes: new Set(shown.map((galaxy) => galaxy.class)), zone: wedges, supergalacticPlane: false, observer: true },
+    bare,
+  })
+  const map = planeMap(recipe, layout.map, style)
+  const placed = inDrawingOrder(
+    shown.map((galaxy): PlacedGalaxy => ({ galaxy, x: map.x(galaxy[map.across] ?? 0), y: map.y(galaxy[map.up] ?? 0), size: markSize(galaxy.absV, recipe.size, style) })),
+  )
+  const tree = new RBush<Box>()
+  tree.load(placed.map(({ x, y, size }) => ({ minX: x - size / 2, minY: y - size / 2, maxX: x + size / 2, maxY: y + size / 2 })))
+  const bar = scaleBar(map, recipe, style)
+  const here = { x: map.x(0), y: map.y(0) }
+  const hereBox: Box = { minX: here.x - 1.4 * style.mark, minY: here.y - 1.4 * style.mark, maxX: here.x + 1.4 * style.mark, maxY: here.y + 1.4 * style.mark }
+  const rings = recipe.plane.rings ? ringMarks(map, recipe, style, (box) => tree.search(box).length, [bar.box, hereBox]) : { circles: [], labels: [] }
+  const labels = placeLabels({ galaxies: placed, obstacles: [bar.box, hereBox, ...rings.labels.map(textBox)], holds: map.holds }, recipe, style)
+
+  const clip = [map.outline]
+  const ground: Mark[] = [{ kind: 'path', subpaths: clip, fill: style.colours.sheet }]
+  if (wedges) ground.push({ kind: 'group', name: 'zone of avoidance', clip, marks: zoneMarks(map, style) })
+  ground.push({ kind: 'group', name: 'rings of distance', clip, marks: rings.circles })
+  return {
+    widthMm: layout.widthMm,
+    heightMm: layout.heightMm,
+    title: titleOf(recipe),
+    description: `${galaxyCount(shown.length)} in supergalactic ${acrossAxis.toUpperCase()} and ${upAxis.toUpperCase()}, ${projectionWords(recipe)}.`,
+    background: style.colours.paper,
+    marks: [
+      ...layout.above,
+      { kind: 'group', name: 'map', marks: ground },
+      { kind: 'group', name: 'distances', marks: rings.labels },
+      { kind: 'group', name: 'observer', clip, marks: observerMarks(here.x, here.y, style) },
+      { kind: 'group', name: 'galaxies', clip, marks: placed.map((one) => dotMark(one, recipe, style)) },
+      planeAxes(map, recipe, style),
+      { kind: 'group', name: 'outline', marks: [{ kind: 'path', subpaths: clip, stroke: { colour: style.colours.ink, width: style.outline } }] },
+      { kind: 'group', name: 'scale bar', marks: bar.marks },
+      { kind: 'group', name: 'names', marks: labels },
+      ...layout.below,
+    ],
+    hits: placed.map(hitOf),
+    map: map.box,
+  }
+}

@@ -1,0 +1,50 @@
+/** Widths of texts in the shipped fonts, so that every painter lays a figure out alike. Kerning is left out: it moves a word by less than 2 %. */
+import { FONT_ADVANCES } from './font-metrics.ts'
+import { FACES, type Box, type Face, type TextMark } from './scene.ts'
+
+/** Parts of an em, both families: the height of capitals, and how far letters reach above and below the baseline. */
+export const CAP_HEIGHT = 0.66
+const ASCENT = 0.74
+const DESCENT = 0.22
+
+/** For a letter that is not in the table, em/1000. */
+const AVERAGE = 600
+
+const tables = new Map<Face, Map<number, number>>(
+  FACES.map((face) => {
+    const widths = new Map<number, number>()
+    for (const [first, run] of FONT_ADVANCES[face]) for (const [i, width] of run.split(' ').entries()) widths.set(first + i, Number(width))
+    return [face, widths]
+  }),
+)
+
+/** Width of a text. @param size - em, mm @returns mm */
+export function textWidth(text: string, face: Face, size: number): number {
+  const widths = tables.get(face)
+  let sum = 0
+  for (const letter of text) sum += widths?.get(letter.codePointAt(0) ?? 0) ?? AVERAGE
+  return (sum / 1000) * size
+}
+
+/** The rectangle that an upright text covers, its halo left out. */
+export function textBox(mark: Pick<TextMark, 'x' | 'y' | 'text' | 'face' | 'size' | 'anchor'>): Box {
+  const width = textWidth(mark.text, mark.face, mark.size)
+  const minX = mark.anchor === 'start' ? mark.x : mark.anchor === 'end' ? mark.x - width : mark.x - width / 2
+  return { minX, minY: mark.y - ASCENT * mark.size, maxX: minX + width, maxY: mark.y + DESCENT * mark.size }
+}
+
+/** Breaks a text into lines no wider than a measure; a longer word has a line of its own. @param measure - mm */
+export function wrapText(text: string, face: Face, size: number, measure: number): string[] {
+  return text.split('\n').flatMap((paragraph) => {
+    const lines: string[] = []
+    let line = ''
+    for (const word of paragraph.split(/[ \t]+/).filter((part) => part !== '')) {
+      const longer = line === '' ? word : `${line} ${word}`
+      if (line !== '' && textWidth(longer, face, size) > measure) {
+        lines.push(line)
+        line = word
+      } else line = longer
+    }
+    return line === '' ? lines : [...lines, line]
+  })
+}
