@@ -1,15 +1,14 @@
 /** The whole server as one Express application. */
-import { randomUUID } from 'node:crypto'
 import { existsSync } from 'node:fs'
 import { join } from 'node:path'
 import compression from 'compression'
 import express, { type ErrorRequestHandler, type Express, type RequestHandler } from 'express'
-import { pinoHttp } from 'pino-http'
 import { sessionLayer } from './auth/sessions.ts'
 import { NotFound } from './http/errors.ts'
 import { mountRoutes } from './http/mount.ts'
 import { asAnswer, sendProblem } from './http/problem.ts'
 import type { Services } from './http/route.ts'
+import { requestLog } from './log.ts'
 import { routes } from './routes/index.ts'
 import { securityHeaders } from './security/headers.ts'
 import { DEFAULT_LIMITS, type Limits } from './security/limits.ts'
@@ -48,23 +47,6 @@ export function createApp(services: Services, { limits = DEFAULT_LIMITS, clientF
 const noStore: RequestHandler = (_request, response, next) => {
   response.setHeader('cache-control', 'private, no-store')
   next()
-}
-
-function requestLog({ log }: Services): RequestHandler {
-  return pinoHttp({
-    logger: log,
-    genReqId: (_request, response) => {
-      const id = randomUUID()
-      response.setHeader('x-request-id', id)
-      return id
-    },
-    // Addresses and times only: no cookies, no tokens, no bodies.
-    serializers: {
-      req: (request: { id: string; method: string; url: string }) => ({ id: request.id, method: request.method, url: request.url }),
-      res: (response: { statusCode: number }) => ({ status: response.statusCode }),
-    },
-    customLogLevel: (_request, response, error) => (error || response.statusCode >= 500 ? 'error' : response.statusCode >= 400 ? 'info' : 'debug'),
-  })
 }
 
 const YEAR_S = 365 * 24 * 3600

@@ -11,6 +11,11 @@ export const figureInputSchema = z.strictObject({
   recipe: z.unknown(),
 })
 
+/** PATCH /api/figures/:id: what is left out stays as it is. */
+export const figurePatchSchema = z
+  .strictObject({ title: figureInputSchema.shape.title.optional(), shared: z.boolean().optional(), recipe: z.unknown() })
+  .refine((patch) => Object.values(patch).some((v) => v !== undefined), 'Change at least one field.')
+
 export const figureSchema = z.object({
   id: z.int(),
   title: z.string(),
@@ -22,5 +27,6 @@ export const figureSchema = z.object({
 })
 export const figureListSchema = z.object({ figures: z.array(figureSchema) })
 
+export type FigurePatch = z.infer<typeof figurePatchSchema>
 export type FigureInput = z.infer<typeof figureInputSchema>
 export type Figure = z.infer<typeof figureSchema>

@@ -16,6 +16,8 @@ export const releaseSchema = z.object({
   publishedAt: z.string(),
   galaxies: z.int(),
   measurements: z.int(),
+  /** An earlier release of the very same revision: nothing changed in between. */
+  sameAs: z.string().nullable(),
 })
 
 export const releaseListSchema = z.object({ releases: z.array(releaseSchema), current: z.object({ revision: z.int(), unreleased: z.int() }).nullable() })

@@ -1,11 +1,12 @@
 /** Sessions in PostgreSQL, by cookie. A visitor has none: reading sets no cookie. */
 import { randomBytes } from 'node:crypto'
 import connectPgSimple from 'connect-pg-simple'
-import type { RequestHandler } from 'express'
+import type { CookieOptions, RequestHandler } from 'express'
 import session from 'express-session'
 import passport from 'passport'
 import { Strategy as LocalStrategy } from 'passport-local'
 import pg from 'pg'
+import type { Config } from '../config.ts'
 import type { Services } from '../http/route.ts'
 import { personById, personWith, type Person } from './people.ts'
 
@@ -22,15 +23,27 @@ declare global {
   namespace Express {
     // eslint-disable-next-line @typescript-eslint/no-empty-object-type -- passport's user is our person
     interface User extends Person {}
+    interface Request {
+      /** The person whom the e-mail address and password of the body let in, or null. */
+      personOfBody?: () => Promise<Person | null>
+    }
   }
 }
 
-export const SESSION_COOKIE = 'vicinage.sid'
 /** A session ends after so long without a request, and in any case after the longer time. */
 export const IDLE_MS = 2 * 3600_000
 export const ABSOLUTE_MS = 12 * 3600_000
 
 const STORE_CONNECTIONS = 4
+
+/** Over https the prefix makes the browser refuse a cookie that another host or an unsafe page has set. */
+export function sessionCookieName({ cookieSecure }: Config): string {
+  return cookieSecure ? '__Host-vicinage.sid' : 'vicinage.sid'
+}
+
+export function sessionCookieOptions({ cookieSecure }: Config): CookieOptions {
+  return { path: '/', httpOnly: true, sameSite: 'lax', secure: cookieSecure }
+}
 
 export interface SessionLayer {
   /** To be used in this order. */
@@ -42,6 +55,7 @@ export function sessionLayer({ knex, config, log }: Services, now: () => number 
   const pool = new pg.Pool({ connectionString: config.databaseUrl, max: STORE_CONNECTIONS })
   pool.on('error', (error) => log.warn({ err: error }, 'a connection of the session store was lost'))
   const Store = connectPgSimple(session)
+  const cookieName = sessionCookieName(config)
   const auth = new passport.Passport()
   auth.use(new LocalStrategy({ usernameField: 'email' }, (email, password, done) => {
     personWith(knex, email, password).then((person) => done(null, person ?? false), done)
@@ -51,7 +65,7 @@ export function sessionLayer({ knex, config, log }: Services, now: () => number 
     personById(knex, id).then((person) => done(null, person ?? false), done)
   })
   const sessions = session({
-    name: SESSION_COOKIE,
+    name: cookieName,
     secret: config.sessionSecret,
     store: new Store({ pool, tableName: 'sessions', pruneSessionInterval: 15 * 60, errorLog: (...words: unknown[]) => log.warn({ words }, 'session store') }),
     genid: () => randomBytes(32).toString('base64url'),
@@ -63,17 +77,26 @@ export function sessionLayer({ knex, config, log }: Services, now: () => number 
   })
   // A reader without a cookie has no session to look for; most reads are such.
   const whenAsked = (handler: RequestHandler): RequestHandler => (request, response, next) => {
-    const needed = request.method !== 'GET' || (request.headers.cookie?.includes(`${SESSION_COOKIE}=`) ?? false)
+    const needed = (request.method !== 'GET' && request.method !== 'HEAD') || (request.headers.cookie?.includes(`${cookieName}=`) ?? false)
     if (needed) handler(request, response, next)
     else next()
   }
+  // A session that names somebody but not since when is none that signing in has finished.
   const absoluteLimit: RequestHandler = (request, _response, next) => {
-    const started = request.session.startedAt
-    if (started === undefined || now() - started < ABSOLUTE_MS) return next()
+    const { startedAt, passport: signedIn } = request.session as typeof request.session & { passport?: unknown }
+    if (startedAt === undefined ? signedIn === undefined : now() - startedAt < ABSOLUTE_MS) return next()
     request.session.regenerate(next)
   }
+  const offerPasswords: RequestHandler = (request, response, next) => {
+    request.personOfBody = () =>
+      new Promise((resolve, reject) => {
+        const decided = (error: unknown, person: Person | false | null | undefined): void => (error ? reject(error as Error) : resolve(person || null))
+        ;(auth.authenticate('local', { session: false }, decided) as RequestHandler)(request, response, reject)
+      })
+    next()
+  }
   return {
-    handlers: [sessions, absoluteLimit, auth.initialize(), auth.session()].map(whenAsked),
+    handlers: [sessions, absoluteLimit, auth.initialize(), auth.session(), offerPasswords].map(whenAsked),
     close: () => pool.end(),
   }
 }

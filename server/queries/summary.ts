@@ -28,7 +28,7 @@ export async function summaryAt(knex: Knex, reader: Reader, revision: ReadRevisi
 }
 
 async function newestRelease(knex: Knex): Promise<Summary['release']> {
-  const { rows } = (await knex.raw('select label, title, published_at as "publishedAt", revision from releases order by published_at desc, revision desc limit 1')) as {
+  const { rows } = (await knex.raw('select label, title, published_at as "publishedAt", revision from releases order by revision desc, published_at desc limit 1')) as {
     rows: { label: string; title: string; publishedAt: Date; revision: number }[]
   }
   const [release] = rows

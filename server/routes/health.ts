@@ -1,19 +1,12 @@
 /** For those who keep the server running. */
-import { collectDefaultMetrics, Gauge, Histogram, Registry } from 'prom-client'
 import { z } from 'zod'
 import { HttpError } from '../http/errors.ts'
+import { catalogueRevision, registry } from '../http/metrics.ts'
 import { route, type Route } from '../http/route.ts'
 import { pendingMigrations } from '../maintenance/migrate.ts'
 import { catalogueAtHand } from '../queries/catalogue-at-hand.ts'
 
-const registry = new Registry()
-collectDefaultMetrics({ register: registry, prefix: 'vicinage_' })
-
-export const requestSeconds = new Histogram({
-  name: 'vicinage_http_request_seconds', help: 'Time to answer a request, by route', labelNames: ['route', 'method', 'status'], registers: [registry],
-  buckets: [0.002, 0.005, 0.01, 0.025, 0.05, 0.1, 0.25, 0.5, 1, 2.5, 5, 10],
-})
-const revision = new Gauge({ name: 'vicinage_catalogue_revision', help: 'Number of the current revision', registers: [registry] })
+const notReady = (detail: string): HttpError => new HttpError(503, 'Not ready', detail, { kind: 'not-ready', headers: { 'retry-after': '5' } })
 
 export const healthRoutes: Route[] = [
   route({
@@ -25,16 +18,17 @@ export const healthRoutes: Route[] = [
     answer: z.object({ status: z.literal('ready'), database: z.literal('answers'), migrations: z.literal('up to date') }),
     handle: async ({ knex }) => {
       const pending = await pendingMigrations(knex).catch(() => {
-        throw new HttpError(503, 'Not ready', 'The database does not answer. Nothing is lost; try again in a moment.', { kind: 'not-ready', headers: { 'retry-after': '5' } })
+        throw notReady('The database does not answer. Nothing is lost; try again in a moment.')
       })
-      if (pending.length > 0) throw new HttpError(503, 'Not ready', `The database lacks ${pending.length} migrations.`, { kind: 'not-ready', headers: { 'retry-after': '5' } })
+      if (pending.length > 0) throw notReady(`The database lacks ${pending.length} migrations. Nothing is lost; start the server anew, which brings it up to date.`)
       return { status: 'ready', database: 'answers', migrations: 'up to date' }
     },
   }),
   route({
-    method: 'get', path: '/api/metrics', summary: 'Measurements in Prometheus text', permission: 'session.use',
+    method: 'get', path: '/metrics', summary: 'Measurements in Prometheus text: request times by route, the revision', permission: 'session.use',
     handle: async ({ knex, response }) => {
-      revision.set((await catalogueAtHand(knex)).revision)
+      catalogueRevision.set((await catalogueAtHand(knex)).revision)
+      response.setHeader('cache-control', 'no-store')
       response.type(registry.contentType).send(await registry.metrics())
       return undefined
     },

@@ -2,6 +2,7 @@
 import type { Route } from '../http/route.ts'
 import { auditRoutes } from './audit.ts'
 import { exportRoutes } from './export.ts'
+import { figureRoutes } from './figures.ts'
 import { galaxyRoutes } from './galaxies.ts'
 import { healthRoutes } from './health.ts'
 import { hostRoutes } from './hosts.ts'
@@ -26,6 +27,7 @@ export const routes: Route[] = [
   ...submissionRoutes,
   ...importRoutes,
   ...releaseRoutes,
+  ...figureRoutes,
   ...auditRoutes,
   ...openApiRoutes(() => routes),
 ]

@@ -1,12 +1,12 @@
 /** The scale: anchors and adoption policy. */
-import { z } from 'zod'
 import { scaleSchema } from '../../core/schema/catalogue.ts'
 import { route, type Route } from '../http/route.ts'
 import { holdsAt, readRevision } from '../queries/at-revision.ts'
+import { atQuery } from './parameters.ts'
 
 export const scaleRoutes: Route[] = [
   route({
-    method: 'get', path: '/api/scale', summary: 'Adopted anchors, and the policy', permission: 'catalogue.read', query: z.strictObject({ at: z.string().max(40).optional() }), answer: scaleSchema,
+    method: 'get', path: '/api/scale', summary: 'Adopted anchors, and the policy', permission: 'catalogue.read', query: atQuery, answer: scaleSchema,
     handle: async ({ knex, reader, query }) => {
       const revision = await readRevision(knex, reader, query.at)
       const at = holdsAt(revision)

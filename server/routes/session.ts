@@ -17,7 +17,7 @@ export const sessionRoutes: Route[] = [
   route({
     method: 'post', path: '/api/session', summary: 'Sign in', permission: 'session.use', limit: 'sign-in', body: signInSchema, answer: sessionSchema,
     handle: async (context) => {
-      const person = await signIn(context, context.request, context.body)
+      const person = await signIn(context, context.request, context.body.email)
       return sessionOf(context, readerOf(person), context.request.session.csrfToken ?? '')
     },
   }),

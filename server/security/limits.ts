@@ -2,8 +2,8 @@
 import type { RequestHandler } from 'express'
 import { ipKeyGenerator, rateLimit } from 'express-rate-limit'
 import type { Limit } from '../http/route.ts'
-import { sendProblem } from '../http/problem.ts'
 import { HttpError } from '../http/errors.ts'
+import { sendProblem } from '../http/problem.ts'
 
 export type Limits = Readonly<Record<Limit, { most: number; perSeconds: number }>>
 
@@ -24,6 +24,8 @@ export function limiters(limits: Limits): Readonly<Record<Limit, RequestHandler>
       limit: most,
       standardHeaders: 'draft-7',
       legacyHeaders: false,
+      // Many people may sign in from one address; only what is refused counts against it.
+      skipSuccessfulRequests: kind === 'sign-in',
       keyGenerator: (request) => (request.user && kind !== 'sign-in' ? `user:${request.user.id}` : ipKeyGenerator(request.ip ?? 'unknown')),
       handler: (request, response) => {
         const wait = Number(response.getHeader('retry-after')) || perSeconds

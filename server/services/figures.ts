@@ -1,11 +1,17 @@
 /** Keeping recipes for maps. */
-import { figureRecipeSchema } from '../../core/figure/recipe.ts'
-import type { Figure, FigureInput } from '../../core/schema/figures.ts'
+import { z } from 'zod'
+import { figureRecipeSchema, type FigureRecipe } from '../../core/figure/recipe.ts'
+import type { Figure, FigureInput, FigurePatch } from '../../core/schema/figures.ts'
 import { Forbidden, NotFound } from '../http/errors.ts'
 import type { Reader, Services } from '../http/route.ts'
 import { FigureModel } from '../models/figure.ts'
 import { record } from './audit.ts'
 import { personOf } from './submissions/load.ts'
+
+/** @throws ZodError whose paths begin with `recipe` */
+function recipeOf(recipe: unknown): FigureRecipe {
+  return z.object({ recipe: figureRecipeSchema }).parse({ recipe }).recipe
+}
 
 function mayEdit(figure: FigureModel, reader: Reader): boolean {
   return reader.user !== null && (figure.owner === reader.user.id || reader.user.roles.includes('steward'))
@@ -38,16 +44,17 @@ async function visible({ knex }: Services, reader: Reader, id: number): Promise<
 /** @throws ZodError naming what is wrong with the recipe */
 export async function keepFigure(services: Services, reader: Reader, input: FigureInput): Promise<Figure> {
   const person = personOf(reader)
-  const recipe = figureRecipeSchema.parse(input.recipe)
+  const recipe = recipeOf(input.recipe)
   const made = await FigureModel.query(services.knex).insert({ owner: person.id, title: input.title, shared: input.shared, recipe })
   return figureById(services, reader, made.id)
 }
 
 /** @throws NotFound; Forbidden for somebody else's; ZodError */
-export async function changeFigure(services: Services, reader: Reader, id: number, input: FigureInput): Promise<Figure> {
+export async function changeFigure(services: Services, reader: Reader, id: number, { title, shared, recipe }: FigurePatch): Promise<Figure> {
   await requireOwn(services, reader, id)
-  const recipe = figureRecipeSchema.parse(input.recipe)
-  await FigureModel.query(services.knex).findById(id).patch({ title: input.title, shared: input.shared, recipe, updatedAt: new Date() })
+  await FigureModel.query(services.knex)
+    .findById(id)
+    .patch({ ...(title !== undefined && { title }), ...(shared !== undefined && { shared }), ...(recipe !== undefined && { recipe: recipeOf(recipe) }), updatedAt: new Date() })
   return figureById(services, reader, id)
 }
 

@@ -1,4 +1,5 @@
 /** Publishing: a label on the current revision, exact for ever. */
+import type { Knex } from 'knex'
 import type { Release, ReleaseInput } from '../../core/schema/releases.ts'
 import { HttpError, NotFound } from '../http/errors.ts'
 import type { Reader, Services } from '../http/route.ts'
@@ -25,10 +26,10 @@ export async function publish(services: Services, reader: Reader, input: Release
 }
 
 /** @throws NotFound */
-export async function releaseByLabel(services: Services, label: string): Promise<Release> {
-  const release = await ReleaseModel.query(services.knex).findById(label).withGraphFetched('publisher')
+export async function releaseByLabel({ knex }: Services, label: string): Promise<Release> {
+  const [release] = await releases(knex, 'where r.label = ?', [label])
   if (!release) throw new NotFound(`There is no release "${label}". The list is at /releases.`)
-  return presented(services, release)
+  return release
 }
 
 export interface ReleaseList {
@@ -37,25 +38,44 @@ export interface ReleaseList {
 }
 
 /** Newest first; for the signed-in, also how far the catalogue has moved since. */
-export async function listReleases(services: Services, reader: Reader): Promise<ReleaseList> {
-  const models = await ReleaseModel.query(services.knex).withGraphFetched('publisher').orderBy('revision', 'desc').orderBy('publishedAt', 'desc')
-  const releases = await Promise.all(models.map((m) => presented(services, m)))
-  if (!reader.user) return { releases, current: null }
-  const newest = (await services.knex('revisions').max('number as number').first()) as { number: number | null } | undefined
+export async function listReleases({ knex }: Services, reader: Reader): Promise<ReleaseList> {
+  const found = await releases(knex, '', [])
+  if (!reader.user) return { releases: found, current: null }
+  const newest = (await knex('revisions').max('number as number').first()) as { number: number | null } | undefined
   const revision = newest?.number ?? 0
-  return { releases, current: { revision, unreleased: revision - (releases[0]?.revision ?? 0) } }
+  return { releases: found, current: { revision, unreleased: revision - (found[0]?.revision ?? 0) } }
 }
 
-async function presented({ knex }: Services, release: ReleaseModel): Promise<Release> {
-  const at = [release.revision, release.revision]
+type ReleaseRow = Omit<Release, 'publishedAt' | 'galaxies' | 'measurements'> & { publishedAt: Date }
+
+async function releases(knex: Knex, where: string, bindings: string[]): Promise<Release[]> {
   const { rows } = (await knex.raw(
-    `select (select count(*)::int from catalogue_rows where status <> 'withdrawn' and rev_from <= ? and (rev_to is null or rev_to > ?)) as galaxies,
-            (select count(*)::int from measurements where rev_from <= ? and (rev_to is null or rev_to > ?)) as measurements`,
-    [...at, ...at],
-  )) as { rows: { galaxies: number; measurements: number }[] }
-  const counts = rows[0] ?? { galaxies: 0, measurements: 0 }
-  return {
-    label: release.label, revision: release.revision, title: release.title, notes: release.notes, publishedBy: release.publisher?.name ?? null,
-    publishedAt: release.publishedAt.toISOString(), ...counts,
-  }
+    `select r.label, r.revision, r.title, r.notes, u.name as "publishedBy", r.published_at as "publishedAt",
+            (select e.label from releases e where e.revision = r.revision and e.published_at < r.published_at order by e.published_at desc limit 1) as "sameAs"
+       from releases r left join users u on u.id = r.published_by ${where} order by r.revision desc, r.published_at desc`,
+    bindings,
+  )) as { rows: ReleaseRow[] }
+  const counts = await countsAt(knex, rows.map((row) => row.revision))
+  return rows.map((row) => ({ ...row, publishedAt: row.publishedAt.toISOString(), ...(counts.get(row.revision) ?? { galaxies: 0, measurements: 0 }) }))
+}
+
+type Counts = Pick<Release, 'galaxies' | 'measurements'>
+
+/** What each revision holds never changes, so it is counted once for each database handle. */
+const counted = new WeakMap<object, Map<number, Counts>>()
+
+async function countsAt(knex: Knex, revisions: readonly number[]): Promise<ReadonlyMap<number, Counts>> {
+  const known = counted.get(knex) ?? new Map<number, Counts>()
+  counted.set(knex, known)
+  const missing = [...new Set(revisions)].filter((revision) => !known.has(revision))
+  if (missing.length === 0) return known
+  const { rows } = (await knex.raw(
+    `select r.number,
+            (select count(*)::int from catalogue_rows where status <> 'withdrawn' and rev_from <= r.number and (rev_to is null or rev_to > r.number)) as galaxies,
+            (select count(*)::int from measurements where rev_from <= r.number and (rev_to is null or rev_to > r.number)) as measurements
+       from unnest(?::int[]) as r(number)`,
+    [missing],
+  )) as { rows: (Counts & { number: number })[] }
+  for (const { number, galaxies, measurements } of rows) known.set(number, { galaxies, measurements })
+  return known
 }

@@ -5,7 +5,7 @@ import { BadInput } from '../http/errors.ts'
 import type { Reader, Services } from '../http/route.ts'
 import { HttpError } from '../http/errors.ts'
 import { SourceModel } from '../models/source.ts'
-import { sourceById } from '../queries/sources.ts'
+import { sourceById, sourcesSeen } from '../queries/sources.ts'
 import { record } from './audit.ts'
 import { personOf } from './submissions/load.ts'
 
@@ -31,7 +31,7 @@ export async function addSource(services: Services, reader: Reader, input: Sourc
     await record(trx, person.id, 'source.add', `source:${made.id}`, { label: made.label })
     return made.id
   })
-  return sourceById(services.knex, id)
+  return sourceById(services.knex, await sourcesSeen(services.knex, reader), id)
 }
 
 async function refuseKnown(trx: Knex.Transaction, { bibcode, doi }: SourceInput): Promise<void> {
