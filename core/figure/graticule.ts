@@ -33,8 +33,8 @@ export function latitudeLabel(lat: number): string {
 /** Corners of the crossing with the equator where a label may stand; the first is taken unless another hides fewer marks. */
 const CORNERS: readonly (readonly [dx: 1 | -1, dy: 1 | -1])[] = [[1, 1], [-1, 1], [1, -1], [-1, -1]]
 
-/** @param crowd - how many marks lie in a rectangle */
-export function graticuleLabels(sky: SkyRecipe, map: SkyMap, style: FigureStyle, crowd: (box: Box) => number): TextMark[] {
+/** @param page - no label may leave it @param crowd - how many marks lie in a rectangle */
+export function graticuleLabels(sky: SkyRecipe, map: SkyMap, style: FigureStyle, page: Box, crowd: (box: Box) => number): TextMark[] {
   const base = { kind: 'text' as const, face: 'sans' as const, size: style.tick, colour: style.colours.muted }
   const gap = style.tick * 0.3
   const halo = { colour: style.colours.sheet, width: style.halo }
@@ -56,15 +56,41 @@ export function graticuleLabels(sky: SkyRecipe, map: SkyMap, style: FigureStyle,
     const best = choices[crowds.indexOf(Math.min(...crowds))]
     if (best) meridians.push(best)
   }
-  const parallels = [-60, -STEP_DEG, STEP_DEG, 60].flatMap((lat): TextMark[] => {
-    const limb = map.framePoint(sky.centreLon + 179.9999, lat)
-    const away = map.centreX - Math.min(limb[0], 2 * map.centreX - limb[0])
-    const y = limb[1] + (CAP_HEIGHT * style.tick) / 2 + Math.sign(-lat) * -0.25 * style.tick * (Math.abs(lat) > 45 ? 1 : 0)
-    const text = latitudeLabel(lat)
-    return [
-      { ...base, x: map.centreX - away - gap * 2.2, y, text, anchor: 'end' },
-      { ...base, x: map.centreX + away + gap * 2.2, y, text, anchor: 'start' },
-    ]
+  const parallels = LABELLED_PARALLELS.flatMap((lat) => [-1, 1].map((side) => outsideLabel(latitudeLabel(lat), map.framePoint(sky.centreLon + 179.9999, lat), side as -1 | 1, map, style)))
+  return [...meridians, ...parallels.filter((label) => within(textBox(label), page))]
+}
+
+const LABELLED_PARALLELS = [60, STEP_DEG, -STEP_DEG, -60]
+
+/** A label beside the edge of the map, moved outward until it is clear of it. @param side - −1 left, 1 right */
+function outsideLabel(text: string, limb: readonly [number, number], side: -1 | 1, map: SkyMap, style: FigureStyle): TextMark {
+  const x = map.centreX + side * Math.abs(limb[0] - map.centreX)
+  // The outline is an ellipse twice as wide as high: its normal leans so.
+  const across = (x - map.centreX) / map.halfWidth / map.halfWidth
+  const up = (limb[1] - map.centreY) / map.halfHeight / map.halfHeight
+  const length = Math.hypot(across, up)
+  const clear = 0.3 * style.tick
+  const label = (away: number): TextMark => ({
+    kind: 'text',
+    x: x + (away * across) / length,
+    y: limb[1] + (away * up) / length + (CAP_HEIGHT * style.tick) / 2,
+    text,
+    face: 'sans',
+    size: style.tick,
+    anchor: side > 0 ? 'start' : 'end',
+    colour: style.colours.muted,
   })
-  return [...meridians, ...parallels]
+  let away = clear
+  while (away < 4 * style.tick && map.touches(capitals(label(away), style, clear))) away += 0.1 * style.tick
+  return label(away)
+}
+
+/** The part of a label's rectangle that digits fill, with room around it. */
+function capitals(label: TextMark, style: FigureStyle, room: number): Box {
+  const box = textBox(label)
+  return { minX: box.minX - room, maxX: box.maxX + room, minY: label.y - CAP_HEIGHT * style.tick - room, maxY: label.y + room }
+}
+
+function within(box: Box, page: Box): boolean {
+  return box.minX >= page.minX && box.maxX <= page.maxX && box.minY >= page.minY && box.maxY <= page.maxY
 }

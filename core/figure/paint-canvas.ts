@@ -23,7 +23,6 @@ export interface Canvas2d {
   ellipse: (x: number, y: number, rx: number, ry: number, rotation: number, from: number, to: number) => void
   fill: (rule?: 'nonzero' | 'evenodd') => void
   stroke: () => void
-  clip: (rule?: 'nonzero' | 'evenodd') => void
   fillRect: (x: number, y: number, width: number, height: number) => void
   fillText: (text: string, x: number, y: number) => void
   strokeText: (text: string, x: number, y: number) => void
@@ -70,13 +69,7 @@ export function paintMarks(marks: readonly Mark[], ink: Canvas2d, k: number): vo
   for (const mark of marks) {
     switch (mark.kind) {
       case 'group':
-        ink.save()
-        if (mark.clip) {
-          trace(mark.clip, ink, k)
-          ink.clip()
-        }
         paintMarks(mark.marks, ink, k)
-        ink.restore()
         break
       case 'path':
         paintPath(mark, ink, k)

@@ -42,7 +42,7 @@ export function planeAxes(map: PlaneMap, recipe: FigureRecipe, style: FigureStyl
   marks.push(
     { kind: 'path', subpaths: ticks, stroke },
     { ...name, x: (box.minX + box.maxX) / 2, y: box.maxY + 2.9 * style.tick, text: `${map.across.toUpperCase()} / ${recipe.units}` },
-    { ...name, x: box.minX - 3.5 * style.tick, y: (box.minY + box.maxY) / 2, text: `${map.up.toUpperCase()} / ${recipe.units}`, turn: -90 },
+    { ...name, x: box.minX - 3.3 * style.tick, y: (box.minY + box.maxY) / 2, text: `${map.up.toUpperCase()} / ${recipe.units}`, turn: -90 },
   )
   return { kind: 'group', name: 'axes', marks }
 }

@@ -1,11 +1,12 @@
 /** What lies under the galaxies of a section: the zone of avoidance, rings of equal distance, the observer, a scale bar. */
+import { cutCircle } from './cut.ts'
 import { decimalsOf, roundStep, type PlaneMap } from './plane-map.ts'
 import type { FigureRecipe } from './recipe.ts'
 import type { Box, Mark, TextMark } from './scene.ts'
 import type { FigureStyle } from './style.ts'
 import { CAP_HEIGHT, textBox } from './text-metrics.ts'
 import { numeral, withUnit } from './words.ts'
-import { zoneWedges } from './zone.ts'
+import { wedgesIn } from './zone.ts'
 
 /** About so many rings within the square when the observer is in its middle. */
 const RINGS = 4.5
@@ -14,18 +15,21 @@ const MOST_RINGS = 40
 /** Directions that the rings' distances may stand in, deg from the horizontal; earlier ones are preferred. */
 const RING_DIRECTIONS = [-38, 38, 142, -142, -60, 60, 120, -120, -15, 15, 165, -165, 90, -90]
 
+/** Places of the square, parts of its half side from the middle, that the line of labels may go through when the observer is outside. */
+const RING_PLACES = [[0.5, -0.5], [-0.5, 0.5], [-0.5, -0.5], [0.5, 0.5], [0, 0.7], [0, -0.7], [0.7, 0], [-0.7, 0], [0, 0]] as const
+
+function ringDirections(map: PlaneMap, observerInView: boolean): number[] {
+  if (observerInView) return RING_DIRECTIONS.map((direction) => (direction * Math.PI) / 180)
+  return RING_PLACES.map(([across, up]) => Math.atan2(map.centre[map.up] + up * map.radius, map.centre[map.across] + across * map.radius))
+}
+
 /** Directions of the zone with |b| < 10 deg, where the section crosses it. */
 export function zoneMarks(map: PlaneMap, style: FigureStyle): Mark[] {
-  const x = map.x(0)
-  const y = map.y(0)
-  const far = farthest(map) * map.mmPerMpc * 1.5 + 1
-  return zoneWedges(map.across, map.up).map(([from, to]) => {
-    const middle = (from + to) / 2
-    const points = [x, y]
-    // The far corner keeps the wedge beyond the square even where its chord would cut in.
-    for (const [angle, reach] of [[from, far], [middle, far * 1.1], [to, far]] as const) points.push(x + reach * Math.cos(angle), y - reach * Math.sin(angle))
-    return { kind: 'path', subpaths: [{ points, closed: true }], fill: style.colours.zone }
-  })
+  return wedgesIn(map.across, map.up, map.centre, map.radius).map((wedge) => ({
+    kind: 'path',
+    subpaths: [{ points: wedge.flatMap(([across, up]) => [map.x(across), map.y(up)]), closed: true }],
+    fill: style.colours.zone,
+  }))
 }
 
 export interface Rings {
@@ -42,9 +46,11 @@ export function ringMarks(map: PlaneMap, recipe: FigureRecipe, style: FigureStyl
   const values = Array.from({ length: Math.max(0, last - first + 1) }, (_, i) => (first + i) * step)
   const radiusOf = (value: number): number => (value / map.unitsPerMpc) * map.mmPerMpc
   const stroke = { colour: style.colours.line, width: style.hairline * 1.2 }
-  const circles = values.map((value): Mark => ({ kind: 'circle', x: map.x(0), y: map.y(0), radius: radiusOf(value), stroke }))
-  const alternatives = RING_DIRECTIONS.map((direction, rank) => {
-    const angle = (direction * Math.PI) / 180
+  const circles = values.flatMap((value): Mark[] => {
+    const subpaths = cutCircle(map.x(0), map.y(0), radiusOf(value), map.box)
+    return subpaths.length > 0 ? [{ kind: 'path', subpaths, stroke }] : []
+  })
+  const alternatives = ringDirections(map, nearest(map) === 0).map((angle, rank) => {
     const labels = values
       .map((value): TextMark => ({
         kind: 'text',
@@ -104,7 +110,7 @@ export function scaleBar(map: PlaneMap, recipe: FigureRecipe, style: FigureStyle
   const label: TextMark = {
     kind: 'text',
     x: x + width / 2,
-    y: y - 0.5 * style.tick,
+    y: y - 0.62 * style.tick,
     text: withUnit(numeral(length, decimalsOf(length)), recipe.units),
     face: 'sans',
     size: style.tick,

@@ -14,7 +14,7 @@ import type { Box, Mark, Scene } from './scene.ts'
 import { styleOf } from './style.ts'
 import { textBox } from './text-metrics.ts'
 import { AXES_OF, galaxyCount, projectionWords, titleOf } from './words.ts'
-import { zoneWedges } from './zone.ts'
+import { wedgesIn } from './zone.ts'
 
 /** Galaxies with a position inside of the cube; one without a distance has no place in space. */
 function withinCube(galaxies: readonly FigureGalaxy[], { plane }: FigureRecipe): FigureGalaxy[] {
@@ -23,17 +23,24 @@ function withinCube(galaxies: readonly FigureGalaxy[], { plane }: FigureRecipe):
   return galaxies.filter((galaxy) => near(galaxy.sgx, sgx) && near(galaxy.sgy, sgy) && near(galaxy.sgz, sgz))
 }
 
+/** Whether the section shows any of the zone; asked before there is a map, in Mpc. */
+function zoneInView({ plane }: FigureRecipe): boolean {
+  const [across, up] = AXES_OF[plane.axes]
+  return plane.zoneOfAvoidance && wedgesIn(across, up, plane.centre ?? { sgx: 0, sgy: 0, sgz: 0 }, plane.radius).length > 0
+}
+
 export function planeScene(galaxies: readonly FigureGalaxy[], recipe: FigureRecipe, { bare = false, releaseLabel = '' }: SceneOptions = {}): Scene {
   const style = styleOf(recipe)
   const shown = withinCube(galaxies, recipe)
   const [acrossAxis, upAxis] = AXES_OF[recipe.plane.axes]
-  const wedges = recipe.plane.zoneOfAvoidance && zoneWedges(acrossAxis, upAxis).length > 0
+  const middle = recipe.plane.centre ?? { sgx: 0, sgy: 0, sgz: 0 }
+  const inView = Math.abs(middle[acrossAxis]) < recipe.plane.radius && Math.abs(middle[upAxis]) < recipe.plane.radius
   const layout = layOut({
     recipe,
     style,
     context: { releaseLabel, count: shown.length, of: galaxies.length },
     mapHeight: (width) => planeHeight(width, style),
-    content: { classes: new Set(shown.map((galaxy) => galaxy.class)), zone: wedges, supergalacticPlane: false, observer: true },
+    content: { classes: new Set(shown.map((galaxy) => galaxy.class)), zone: zoneInView(recipe), supergalacticPlane: false, observer: inView },
     bare,
   })
   const map = planeMap(recipe, layout.map, style)
@@ -48,10 +55,10 @@ export function planeScene(galaxies: readonly FigureGalaxy[], recipe: FigureReci
   const rings = recipe.plane.rings ? ringMarks(map, recipe, style, (box) => tree.search(box).length, [bar.box, hereBox]) : { circles: [], labels: [] }
   const labels = placeLabels({ galaxies: placed, obstacles: [bar.box, hereBox, ...rings.labels.map(textBox)], holds: map.holds }, recipe, style)
 
-  const clip = [map.outline]
-  const ground: Mark[] = [{ kind: 'path', subpaths: clip, fill: style.colours.sheet }]
-  if (wedges) ground.push({ kind: 'group', name: 'zone of avoidance', clip, marks: zoneMarks(map, style) })
-  ground.push({ kind: 'group', name: 'rings of distance', clip, marks: rings.circles })
+  const square = [map.outline]
+  const ground: Mark[] = [{ kind: 'path', subpaths: square, fill: style.colours.sheet }]
+  if (recipe.plane.zoneOfAvoidance) ground.push({ kind: 'group', name: 'zone of avoidance', marks: zoneMarks(map, style) })
+  ground.push({ kind: 'group', name: 'rings of distance', marks: rings.circles })
   return {
     widthMm: layout.widthMm,
     heightMm: layout.heightMm,
@@ -62,10 +69,10 @@ export function planeScene(galaxies: readonly FigureGalaxy[], recipe: FigureReci
       ...layout.above,
       { kind: 'group', name: 'map', marks: ground },
       { kind: 'group', name: 'distances', marks: rings.labels },
-      { kind: 'group', name: 'observer', clip, marks: observerMarks(here.x, here.y, style) },
-      { kind: 'group', name: 'galaxies', clip, marks: placed.map((one) => dotMark(one, recipe, style)) },
+      { kind: 'group', name: 'observer', marks: inView ? observerMarks(here.x, here.y, style) : [] },
+      { kind: 'group', name: 'galaxies', marks: placed.map((one) => dotMark(one, recipe, style)) },
       planeAxes(map, recipe, style),
-      { kind: 'group', name: 'outline', marks: [{ kind: 'path', subpaths: clip, stroke: { colour: style.colours.ink, width: style.outline } }] },
+      { kind: 'group', name: 'outline', marks: [{ kind: 'path', subpaths: square, stroke: { colour: style.colours.ink, width: style.outline } }] },
       { kind: 'group', name: 'scale bar', marks: bar.marks },
       { kind: 'group', name: 'names', marks: labels },
       ...layout.below,

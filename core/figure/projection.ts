@@ -31,6 +31,8 @@ export interface SkyMap {
   framePoint: (lon: number, lat: number) => readonly [number, number]
   /** Whether a rectangle lies wholly inside of the outline. */
   holds: (box: Box) => boolean
+  /** Whether a corner of a rectangle lies inside of the outline. */
+  touches: (box: Box) => boolean
 }
 
 /** @param box - where the map stands, mm; twice as wide as high, or it is fitted in the middle */
@@ -52,6 +54,7 @@ export function skyMap(sky: Pick<SkyRecipe, 'projection' | 'frame' | 'centreLon'
     sky: (shape) => traced(ofSky, shape),
     frame: (shape) => traced(ofFrame, shape),
     framePoint: (lon, lat) => ofFrame([lon, lat]) ?? [NaN, NaN],
+    touches: (b) => inside(b.minX, b.minY) || inside(b.maxX, b.minY) || inside(b.minX, b.maxY) || inside(b.maxX, b.maxY),
     holds: (b) => inside(b.minX, b.minY) && inside(b.maxX, b.minY) && inside(b.minX, b.maxY) && inside(b.maxX, b.maxY),
   }
 }
@@ -59,7 +62,7 @@ export function skyMap(sky: Pick<SkyRecipe, 'projection' | 'frame' | 'centreLon'
 /** The angles, deg, by which d3's `rotate` shows ICRS longitude and latitude in another frame, turned so that a longitude of it is in the middle. */
 function rotateAngles({ frame, centreLon }: Pick<SkyRecipe, 'frame' | 'centreLon'>): [number, number, number] {
   const [a, b, c] = turnedFrame(frame, centreLon)
-  return [degrees(Math.atan2(-a[1], a[0])), degrees(Math.asin(Math.max(-1, Math.min(1, -a[2])))), degrees(Math.atan2(b[2], c[2]))]
+  return [degrees(Math.atan2(-a[1], a[0])), degrees(Math.asin(Math.max(-1, Math.min(1, -a[2])))), degrees(Math.atan2(-b[2], c[2]))]
 }
 
 /** The straight pieces that d3 draws a shape with. */

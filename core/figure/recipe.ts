@@ -3,7 +3,7 @@
  * Reading one is strict: a key that is not known is refused by name rather than passed over.
  */
 import { z } from 'zod'
-import { FRAMES } from '../astro/frames.ts'
+import { FRAMES, type Frame } from '../astro/frames.ts'
 
 export const VIEWS = ['sky', 'plane'] as const
 export const PROJECTIONS = ['hammer', 'aitoff', 'mollweide'] as const
@@ -78,7 +78,10 @@ export type FigureRecipe = z.infer<typeof figureRecipeSchema>
 export type SkyRecipe = FigureRecipe['sky']
 export type PlaneRecipe = FigureRecipe['plane']
 
+/** The longitude that a frame is usually centred on, deg: in the supergalactic frame the zone of avoidance then frames the map. */
+export const USUAL_CENTRE_DEG: Readonly<Record<Frame, number>> = { equatorial: 180, galactic: 0, supergalactic: 90 }
+
 /** The recipe that a view starts from. */
 export function defaultRecipe(view: View): FigureRecipe {
-  return figureRecipeSchema.parse({ view })
+  return figureRecipeSchema.parse({ view, sky: { frame: 'supergalactic', centreLon: USUAL_CENTRE_DEG.supergalactic } })
 }

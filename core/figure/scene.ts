@@ -72,8 +72,6 @@ export interface GroupMark {
   /** What it is, for those who open the file: "graticule", "galaxies" ... */
   name: string
   marks: readonly Mark[]
-  /** Drawn only inside of it. */
-  clip?: readonly Subpath[]
 }
 
 export type Mark = PathMark | CircleMark | DotMark | TextMark | GroupMark

@@ -16,6 +16,9 @@ import { textBox } from './text-metrics.ts'
 import { supergalacticEquator, zoneOfAvoidance } from './zone.ts'
 import { galaxyCount, projectionWords, titleOf } from './words.ts'
 
+/** Nothing stands nearer to the edge of the figure than this, mm. */
+const PAGE_EDGE_MM = 0.5
+
 export function skyScene(galaxies: readonly FigureGalaxy[], recipe: FigureRecipe, { bare = false, releaseLabel = '' }: SceneOptions = {}): Scene {
   const style = styleOf(recipe)
   const { sky } = recipe
@@ -35,7 +38,8 @@ export function skyScene(galaxies: readonly FigureGalaxy[], recipe: FigureRecipe
   )
   const tree = new RBush<Box>()
   tree.load(placed.map(({ x, y, size }) => ({ minX: x - size / 2, minY: y - size / 2, maxX: x + size / 2, maxY: y + size / 2 })))
-  const ticks = graticuleLabels(sky, map, style, (box) => tree.search(box).length)
+  const page: Box = { minX: PAGE_EDGE_MM, minY: 0, maxX: layout.widthMm - PAGE_EDGE_MM, maxY: layout.heightMm }
+  const ticks = graticuleLabels(sky, map, style, page, (box) => tree.search(box).length)
   const labels = placeLabels({ galaxies: placed, obstacles: ticks.map(textBox), holds: map.holds }, recipe, style)
 
   const ground: Mark[] = [{ kind: 'path', subpaths: outline, fill: style.colours.sheet }]

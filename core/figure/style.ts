@@ -51,7 +51,7 @@ export function styleOf(recipe: FigureRecipe): FigureStyle {
     credit: em(6),
     hairline: 0.13 * lines,
     outline: 0.3 * lines,
-    halo: 0.75 * lines,
+    halo: 0.42 * lines,
     mark: grow,
     margin: Math.min(12, Math.max(2.5, recipe.widthMm * 0.03)),
     gap: 3.2 * grow,

@@ -2,6 +2,7 @@
 import { convert, rotation, type Frame } from '../astro/frames.ts'
 import { radians } from '../astro/units.ts'
 import { dot, type Vector } from '../astro/vector.ts'
+import { cutPolygon, type Point } from './cut.ts'
 import type { PlaneAxis } from './words.ts'
 
 /** Half its width in galactic latitude, deg: common practice for optical catalogues. */
@@ -46,4 +47,16 @@ export function zoneWedges(first: PlaneAxis, second: PlaneAxis): (readonly [from
   const toward = Math.atan2(up, across)
   const half = Math.asin(edge / amplitude)
   return [toward + Math.PI / 2, toward - Math.PI / 2].map((middle) => [middle - half, middle + half] as const)
+}
+
+/** The wedges as polygons within a square of a section, Mpc, first axis then second. */
+export function wedgesIn(first: PlaneAxis, second: PlaneAxis, centre: Readonly<Record<PlaneAxis, number>>, radius: number): (readonly Point[])[] {
+  const square = { minX: centre[first] - radius, maxX: centre[first] + radius, minY: centre[second] - radius, maxY: centre[second] + radius }
+  const far = 1.5 * Math.hypot(Math.abs(centre[first]) + radius, Math.abs(centre[second]) + radius)
+  const corner = (angle: number, reach: number): Point => [reach * Math.cos(angle), reach * Math.sin(angle)]
+  return zoneWedges(first, second).flatMap(([from, to]) => {
+    // The middle corner keeps the wedge beyond the square even where its chord would cut in.
+    const wedge = cutPolygon([[0, 0], corner(from, far), corner((from + to) / 2, 1.1 * far), corner(to, far)], square)
+    return wedge ? [wedge] : []
+  })
 }
