@@ -1,5 +1,6 @@
 /** Figures kept in the gallery. The recipe itself is core/figure/recipe.ts. */
 import { z } from 'zod'
+import { figureRecipeSchema } from '../figure/recipe.ts'
 
 export const FIGURE_FORMATS = ['svg', 'pdf', 'png'] as const
 export type FigureFormat = (typeof FIGURE_FORMATS)[number]
@@ -16,6 +17,9 @@ export const figurePatchSchema = z
   .strictObject({ title: figureInputSchema.shape.title.optional(), shared: z.boolean().optional(), recipe: z.unknown() })
   .refine((patch) => Object.values(patch).some((v) => v !== undefined), 'Change at least one field.')
 
+/** POST /api/figures/render: answers the file. */
+export const figureDrawingSchema = z.strictObject({ recipe: figureRecipeSchema, format: z.enum(FIGURE_FORMATS) })
+
 export const figureSchema = z.object({
   id: z.int(),
   title: z.string(),
@@ -28,5 +32,6 @@ export const figureSchema = z.object({
 export const figureListSchema = z.object({ figures: z.array(figureSchema) })
 
 export type FigurePatch = z.infer<typeof figurePatchSchema>
+export type FigureDrawing = z.infer<typeof figureDrawingSchema>
 export type FigureInput = z.infer<typeof figureInputSchema>
 export type Figure = z.infer<typeof figureSchema>

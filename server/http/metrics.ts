@@ -16,6 +16,8 @@ export const catalogueRevision = new Gauge({ name: 'vicinage_catalogue_revision'
 export function timed(path: string): RequestHandler {
   return (request, response, next) => {
     const stop = requestSeconds.startTimer()
+    // The log, compression, a pipeline and this all wait for its end: more than the ten that Node takes for a leak.
+    response.setMaxListeners(24)
     response.once('close', () => stop({ route: path, method: request.method, status: String(response.statusCode) }))
     next()
   }
