@@ -22,37 +22,42 @@ export interface Random {
  * @param stream - sequences of one seed and different streams are independent; whole number, 0 to 2³²−1
  */
 export function random(seed: number, stream = 0): Random {
-  // state = state * 6364136223846793005 + increment, mod 2^64
   const incrementHigh = stream >>> 31
-  const incrementLow = ((stream << 1) | 1) >>> 0
-  let high = 0
-  let low = 0
+  const incrementLow = (stream << 1) | 1
+  // The two halves of the state, as signed 32-bit numbers: those are computed with fastest.
+  const state = new Int32Array(2)
 
+  /** state = state * 6364136223846793005 + increment, mod 2^64 */
   const step = (): void => {
-    const multiplierHigh = 0x5851f42d
-    const multiplierLow = 0x4c957f2d
-    const productLow = multiply(low, multiplierLow)
-    const newHigh = (productLow.high + Math.imul(low, multiplierHigh) + Math.imul(high, multiplierLow)) >>> 0
-    const sum = productLow.low + incrementLow
-    low = sum >>> 0
-    high = (newHigh + incrementHigh + (sum > 0xffffffff ? 1 : 0)) >>> 0
+    const high = state[0] ?? 0
+    const low = state[1] ?? 0
+    // The upper half of low * 0x4c957f2d, in 16-bit digits.
+    const a0 = low & 0xffff
+    const a1 = low >>> 16
+    const middle = a1 * 0x7f2d + ((a0 * 0x7f2d) >>> 16)
+    const carried = a1 * 0x4c95 + (middle >>> 16) + ((a0 * 0x4c95 + (middle & 0xffff)) >>> 16)
+    const productLow = Math.imul(low, 0x4c957f2d)
+    const newLow = (productLow + incrementLow) | 0
+    const carry = newLow >>> 0 < productLow >>> 0 ? 1 : 0
+    state[0] = carried + Math.imul(low, 0x5851f42d) + Math.imul(high, 0x4c957f2d) + incrementHigh + carry
+    state[1] = newLow
   }
   const next = (): number => {
-    const oldHigh = high
-    const oldLow = low
+    const oldHigh = state[0] ?? 0
+    const oldLow = state[1] ?? 0
     step()
     // ((old >> 18) ^ old) >> 27, its low 32 bits; rotated right by old >> 59.
     const xorHigh = (oldHigh >>> 18) ^ oldHigh
     const xorLow = ((oldHigh << 14) | (oldLow >>> 18)) ^ oldLow
-    const shifted = ((xorHigh << 5) | (xorLow >>> 27)) >>> 0
+    const shifted = (xorHigh << 5) | (xorLow >>> 27)
     const turn = oldHigh >>> 27
     return ((shifted >>> turn) | (shifted << (-turn & 31))) >>> 0
   }
 
   step()
-  const seeded = low + (seed >>> 0)
-  low = seeded >>> 0
-  high = (high + (seeded > 0xffffffff ? 1 : 0)) >>> 0
+  const seeded = (state[1] ?? 0) + (seed | 0)
+  if (seeded >>> 0 < seed >>> 0) state[0] = (state[0] ?? 0) + 1
+  state[1] = seeded
   step()
 
   let spare: number | null = null
@@ -87,17 +92,54 @@ export function random(seed: number, stream = 0): Random {
   }
 }
 
-/** The 64-bit product of two unsigned 32-bit numbers. */
-function multiply(a: number, b: number): { high: number; low: number } {
-  const aLow = a & 0xffff
-  const aHigh = a >>> 16
-  const bLow = b & 0xffff
-  const bHigh = b >>> 16
-  const lowLow = aLow * bLow
-  const middle = aHigh * bLow + (lowLow >>> 16)
-  const middleLow = aLow * bHigh + (middle & 0xffff)
-  return {
-    high: (aHigh * bHigh + Math.floor(middle / 0x10000) + Math.floor(middleLow / 0x10000)) >>> 0,
-    low: (((middleLow & 0xffff) << 16) | (lowLow & 0xffff)) >>> 0,
+/**
+ * Many normals at once, of a sequence of their own: several times as fast as asking one after the other.
+ *
+ * The generator is that of `random`, its 32-bit numbers used as they come, by Marsaglia & Bray's polar method.
+ *
+ * @param seed, stream - as for `random`
+ * @returns normals with mean 0 and standard deviation 1
+ */
+export function normals(seed: number, stream: number, count: number): Float64Array {
+  const list = new Float64Array(count)
+  const incrementHigh = stream >>> 31
+  const incrementLow = (stream << 1) | 1
+  let high = 0
+  let low = 0
+  let first = 0
+  // Two steps seed the generator, as in `random`; from then on each pair of steps gives a point of the square.
+  for (let steps = -2, filled = 0; filled < count; steps++) {
+    const oldHigh = high
+    const oldLow = low
+    const a0 = low & 0xffff
+    const a1 = low >>> 16
+    const middle = a1 * 0x7f2d + ((a0 * 0x7f2d) >>> 16)
+    const carried = a1 * 0x4c95 + (middle >>> 16) + ((a0 * 0x4c95 + (middle & 0xffff)) >>> 16)
+    const productLow = Math.imul(low, 0x4c957f2d)
+    low = (productLow + incrementLow) | 0
+    high = (carried + Math.imul(oldLow, 0x5851f42d) + Math.imul(high, 0x4c957f2d) + incrementHigh + (low >>> 0 < productLow >>> 0 ? 1 : 0)) | 0
+    if (steps === -2) {
+      const seeded = (low + (seed | 0)) | 0
+      if (seeded >>> 0 < seed >>> 0) high = (high + 1) | 0
+      low = seeded
+    }
+    if (steps < 0) continue
+    const xorHigh = (oldHigh >>> 18) ^ oldHigh
+    const xorLow = ((oldHigh << 14) | (oldLow >>> 18)) ^ oldLow
+    const shifted = (xorHigh << 5) | (xorLow >>> 27)
+    const turn = oldHigh >>> 27
+    const number = (shifted >>> turn) | (shifted << (-turn & 31))
+    if ((steps & 1) === 0) {
+      first = number
+      continue
+    }
+    const u = first / 2 ** 31
+    const v = number / 2 ** 31
+    const s = u * u + v * v
+    if (s <= 0 || s >= 1) continue
+    const factor = Math.sqrt((-2 * Math.log(s)) / s)
+    list[filled++] = u * factor
+    if (filled < count) list[filled++] = v * factor
   }
+  return list
 }

@@ -3,6 +3,8 @@ import type { Neighbourhood } from './neighbourhood.ts'
 
 /** Two galaxies at one point still have a finite influence: closer than this they count as so far apart, Mpc. */
 const CLOSEST_MPC = 1e-4
+/** What a bound is widened by, so that rounding never hides a neighbour. */
+export const ROOM = 1 + 1e-9
 
 export interface Disturbers {
   /** Index of the neighbour with the largest M★/d³ over all, and that value (Msun/Mpc³); −1 and 0 without any. */
@@ -45,7 +47,7 @@ export function disturbersOf(n: Neighbourhood, i: number, massRatio: number): Di
   const yi = at(y, i)
   const zi = at(z, i)
   const least = massRatio * at(mass, i)
-  const found: Disturbers = { index: -1, indexPull: 0, main: -1, mainPull: 0 }
+  const found = nobody()
   for (let j = 0; j < size; j++) {
     const m = at(mass, j)
     if (j === i || m <= 0) continue
@@ -53,23 +55,33 @@ export function disturbersOf(n: Neighbourhood, i: number, massRatio: number): Di
     const dy = at(y, j) - yi
     const dz = at(z, j) - zi
     const d2 = dx * dx + dy * dy + dz * dz
-    // Most neighbours are too far or too light: a bound without roots comes first. (m/d³ > p is m² > p² d⁶.)
+    // Most neighbours are too far or too light: a bound without roots comes first, with room for rounding. (m/d³ > p is m² > p² d⁶.)
     const d6 = d2 * d2 * d2
-    const m2 = m * m
+    const m2 = m * m * ROOM
     const beatsIndex = m2 >= found.indexPull * found.indexPull * d6
     const beatsMain = m >= least && m2 >= found.mainPull * found.mainPull * d6
     if (!beatsIndex && !beatsMain) continue
-    const p = pull(n, j, i)
-    if (p > found.indexPull) {
-      found.index = j
-      found.indexPull = p
-    }
-    if (p > found.mainPull && mayHost(n, j, i, massRatio)) {
-      found.main = j
-      found.mainPull = p
-    }
+    consider(found, n, j, i, massRatio)
   }
   return found
+}
+
+/** The start of a search. */
+export function nobody(): Disturbers {
+  return { index: -1, indexPull: 0, main: -1, mainPull: 0 }
+}
+
+/** Lets galaxy j stand for a disturber of galaxy i. Of equal pulls the lower index counts, so that the order of the search does not. */
+export function consider(found: Disturbers, n: Neighbourhood, j: number, i: number, massRatio: number): void {
+  const p = pull(n, j, i)
+  if (p > found.indexPull || (p === found.indexPull && j < found.index)) {
+    found.index = j
+    found.indexPull = p
+  }
+  if ((p > found.mainPull || (p === found.mainPull && j < found.main)) && mayHost(n, j, i, massRatio)) {
+    found.main = j
+    found.mainPull = p
+  }
 }
 
 function at(list: Float64Array | Int32Array, i: number): number {
