@@ -3,6 +3,7 @@ import type { Knex } from 'knex'
 import { can } from '../../core/permissions.ts'
 import { BadInput, Forbidden, NotFound } from '../http/errors.ts'
 import type { Reader } from '../http/route.ts'
+import { preparedRows } from './prepared.ts'
 
 /** The revision that an answer is read at. */
 export interface ReadRevision {
@@ -56,8 +57,8 @@ async function chosen(knex: Knex, at: string, mayReadAll: boolean): Promise<Read
 }
 
 async function one(knex: Knex, sql: string, bindings: Knex.RawBinding[]): Promise<Found | undefined> {
-  const answer = await knex.raw<{ rows: Found[] }>(sql, bindings)
-  return answer.rows[0]
+  const [found] = await preparedRows<Found>(knex, sql, bindings)
+  return found
 }
 
 function asRead({ newest, revision, label }: Found): ReadRevision {

@@ -27,7 +27,7 @@ export async function filterFragments(knex: Knex, filter: Filter, revision: Read
   const fragments: ColumnFragment[] = Object.entries(conditions).map(([column, condition]) => ({ column, ...conditionSql(column, condition) }))
   for (const column of filter.has) fragments.push({ column: null, sql: `${identifier(column)} IS NOT NULL`, bindings: [] })
   for (const column of filter.lacks) fragments.push({ column: null, sql: `${identifier(column)} IS NULL`, bindings: [] })
-  if (filter.q !== null) fragments.push({ column: null, ...wordsSql(filter.q, revision) })
+  if (filter.q !== null) fragments.push({ column: null, ...(await wordsSql(knex, filter.q, revision)) })
   if (filter.cone) fragments.push({ column: null, ...coneSql(filter.cone) })
   if (filter.within) fragments.push({ column: null, ...(await withinSql(knex, filter.within, revision)) })
   return fragments
@@ -79,13 +79,20 @@ function instant(time: string): string {
   return time.length === 10 ? `${time}T00:00:00Z` : time
 }
 
-/** Any name, also one that is no longer preferred, that holds the words. Keys are letters and digits, so nothing needs escaping. */
-function wordsSql(words: string, revision: ReadRevision): Fragment {
+/** As many galaxies as are named one by one in a condition, rather than searched for again. */
+const FEW = 500
+
+/**
+ * Any name, also one that is not preferred, that holds the words. Keys are letters and digits, so nothing needs escaping. Where only a few
+ * galaxies have such a name they are looked up first: the planner then knows how few they are.
+ */
+async function wordsSql(knex: Knex, words: string, revision: ReadRevision): Promise<Fragment> {
   const holds = holdsAt(revision)
-  return {
-    sql: `galaxy IN (SELECT n.galaxy FROM galaxy_names n WHERE n.name_key LIKE ? AND ${holds.sql('n')})`,
-    bindings: [`%${nameKey(words)}%`, ...holds.bindings],
-  }
+  const named = { sql: `SELECT n.galaxy FROM galaxy_names n WHERE n.name_key LIKE ? AND ${holds.sql('n')}`, bindings: [`%${nameKey(words)}%`, ...holds.bindings] }
+  const found = await knex.raw<{ rows: { galaxy: number }[] }>(`${named.sql} LIMIT ${FEW + 1}`, named.bindings)
+  if (found.rows.length > FEW) return { sql: `galaxy IN (${named.sql})`, bindings: named.bindings }
+  const galaxies = [...new Set(found.rows.map((row) => row.galaxy))].sort((a, b) => a - b)
+  return { sql: `galaxy IN (${galaxies.join(', ') || 'NULL'})`, bindings: [] }
 }
 
 /** A circle on the sky by the chord between unit vectors: the cube index finds the box, the distance decides. */

@@ -5,6 +5,7 @@ import { columnsOf, sortOf, USUAL_LIMIT, type Filter, type SortKey } from '../..
 import { partsAt, type Fragment, type ReadRevision } from './at-revision.ts'
 import { countRows } from './count.ts'
 import { all, filterFragments, identifier } from './filter-sql.ts'
+import { preparedRows } from './prepared.ts'
 import { after, NEVER_MISSING, orderBy, printCursor, readCursor, type Cursor } from './keyset.ts'
 
 interface Page {
@@ -22,11 +23,16 @@ export async function listText(knex: Knex, filter: Filter, revision: ReadRevisio
   const cursor = filter.cursor === null ? null : readCursor(sort, filter.cursor)
   const where = all(await filterFragments(knex, filter, revision))
   const [page, total] = await Promise.all([
-    readPage(knex, { columns: listedColumns(filter), sort, limit: limit + 1, cursor, where, revision }),
+    readPage(knex, { columns: listedColumns(filter), sort, limit: limit + 1, cursor, where, revision, plain: isPlain(filter) }),
     countRows(knex, where, revision),
   ])
   const next = page.count > limit && page.last !== null ? printCursor(sort, JSON.parse(page.last) as (string | number | null)[]) : null
   return `{"rows":[${page.docs ?? ''}],"total":${total},"next":${JSON.stringify(next)},"revision":${revision.number}}`
+}
+
+/** Without conditions the best plan is the same for every page, so it need not be sought again. */
+function isPlain({ conditions, has, lacks, q, cone, within }: Filter): boolean {
+  return Object.keys(conditions).length + has.length + lacks.length === 0 && q === null && cone === null && within === null
 }
 
 /** The identifier is always among them, so that a row can be told from the others. */
@@ -43,6 +49,8 @@ interface PageRequest {
   cursor: Cursor | null
   where: Fragment
   revision: ReadRevision
+  /** Whether there are no conditions but the usual ones. */
+  plain: boolean
 }
 
 /** Rows with a value in the first sort column come from one query, those without, where the page reaches them, from a second. */
@@ -62,31 +70,30 @@ async function readPage(knex: Knex, request: PageRequest): Promise<Page> {
 
 async function readStage(knex: Knex, request: PageRequest, stage: string | null): Promise<Page> {
   const query = pageSql(request, stage)
-  const answer = await knex.raw<{ rows: Page[] }>(query.sql, query.bindings)
-  const page = answer.rows[0]
+  const [page] = request.plain ? await preparedRows<Page>(knex, query.sql, query.bindings) : (await knex.raw<{ rows: Page[] }>(query.sql, query.bindings)).rows
   if (!page) throw new Error('a page query gave no row')
   return { ...page, docs: page.docs === null ? null : page.docs.slice(1, -1) }
 }
 
-/** The SQL of one stage of a page; also what the bench runs by itself. */
-export function pageSql({ columns, sort, limit, cursor, where, revision }: PageRequest, stage: string | null): { sql: string; bindings: Knex.RawBinding[] } {
+/** The SQL of one stage of a page. The limit stands in its text, so that a plan made once knows it. */
+function pageSql({ columns, sort, limit, cursor, where, revision }: PageRequest, stage: string | null): { sql: string; bindings: Knex.RawBinding[] } {
   const conditions = [where, ...(stage === null ? [] : [{ sql: stage, bindings: [] }]), ...(cursor ? [afterIn(sort, cursor, stage)] : [])]
   const firstPresent = stage?.endsWith('IS NOT NULL') ?? false
   const order = orderBy(sort, firstPresent)
   const parts = partsAt(revision).map((part) => {
     const whole = all([part, ...conditions])
-    return { sql: `(SELECT * FROM catalogue_rows WHERE ${whole.sql} ORDER BY ${order} LIMIT ?)`, bindings: [...whole.bindings, limit] }
+    return { sql: `(SELECT * FROM catalogue_rows WHERE ${whole.sql} ORDER BY ${order} LIMIT ${limit})`, bindings: whole.bindings }
   })
   const shown = limit - 1
   const keys = sort.map((key) => `p.${identifier(key.column)}`).join(', ')
   return {
-    sql: `SELECT json_agg(p.doc ORDER BY p.n) FILTER (WHERE p.n <= ?)::text AS docs, count(*)::int AS count, max(p.keys) FILTER (WHERE p.n = ?) AS last
+    sql: `SELECT json_agg(p.doc ORDER BY p.n) FILTER (WHERE p.n <= ${shown})::text AS docs, count(*)::int AS count, max(p.keys) FILTER (WHERE p.n = ${shown}) AS last
       FROM (
         SELECT row_to_json(doc) AS doc, json_build_array(${keys}, p.galaxy)::text AS keys, row_number() OVER () AS n
-        FROM (SELECT * FROM (${parts.map((part) => part.sql).join(' UNION ALL ')}) AS found ORDER BY ${order} LIMIT ?) AS p
+        FROM (SELECT * FROM (${parts.map((part) => part.sql).join(' UNION ALL ')}) AS found ORDER BY ${order} LIMIT ${limit}) AS p
         CROSS JOIN LATERAL (SELECT ${columns.map(selectColumn).join(', ')}) AS doc
       ) AS p`,
-    bindings: [shown, shown, ...parts.flatMap((part) => part.bindings), limit],
+    bindings: parts.flatMap((part) => part.bindings),
   }
 }
 
