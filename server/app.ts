@@ -51,13 +51,15 @@ const noStore: RequestHandler = (_request, response, next) => {
 
 const YEAR_S = 365 * 24 * 3600
 
+/** Addresses of files, and of what hides behind a point. The label of a release has points too: /releases/2026.1 is a page. */
+const NO_PAGE = /\/\.|\.(?:[cm]?[jt]sx?|css|map|html?|json|svg|png|jpe?g|gif|webp|ico|woff2?|ttf|txt|xml|php|env|sql|ya?ml|lock|zip)$/i
+
 /** Built files carry their hash in their name and never change; the page itself is asked for anew each time. */
 function serveClient(app: Express, folder: string): void {
   app.use('/assets', express.static(join(folder, 'assets'), { immutable: true, maxAge: YEAR_S * 1000, fallthrough: true }))
   app.use(express.static(folder, { index: false, maxAge: 0 }))
   app.get('/{*page}', (request, response, next) => {
-    const isFile = /\.[a-z0-9]{1,5}$/i.test(request.path)
-    if (isFile || !request.accepts('html')) return next()
+    if (NO_PAGE.test(request.path) || !request.accepts('html')) return next()
     response.setHeader('cache-control', 'no-cache')
     response.sendFile(join(folder, 'index.html'))
   })

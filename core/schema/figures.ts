@@ -14,7 +14,7 @@ export const figureInputSchema = z.strictObject({
 
 /** PATCH /api/figures/:id: what is left out stays as it is. */
 export const figurePatchSchema = z
-  .strictObject({ title: figureInputSchema.shape.title.optional(), shared: z.boolean().optional(), recipe: z.unknown() })
+  .strictObject({ title: figureInputSchema.shape.title.optional(), shared: z.boolean().optional(), recipe: z.unknown().optional() })
   .refine((patch) => Object.values(patch).some((v) => v !== undefined), 'Change at least one field.')
 
 /** POST /api/figures/render: answers the file. */
