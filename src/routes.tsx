@@ -12,6 +12,7 @@ function page(load: () => Promise<{ default: ComponentType }>): RouteObject['laz
 /** The pages, one line each; addresses as in src/paths.ts. */
 const pages: RouteObject[] = [
   { index: true, lazy: page(() => import('./features/home/home-page.tsx')) },
+  { path: 'galaxies', lazy: page(() => import('./features/catalogue/galaxies-page.tsx')) },
   { path: 'hosts', lazy: page(() => import('./features/hosts/hosts-page.tsx')) },
   { path: 'hosts/:slug', lazy: page(() => import('./features/hosts/host-page.tsx')) },
   { path: 'submissions', lazy: page(() => import('./features/submissions/submissions-page.tsx')) },

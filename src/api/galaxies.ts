@@ -5,8 +5,9 @@ import { getJson } from './client.ts'
 import { keys } from './keys.ts'
 
 /** Rows under a filter, page by page. @param filter - canonical query string of core/filters, without `cursor` */
-export function useGalaxies(filter: string, pageSize = 100) {
+export function useGalaxies(filter: string, pageSize = 100, enabled = true) {
   return useInfiniteQuery({
+    enabled,
     queryKey: keys.galaxies.list({ filter, pageSize }),
     initialPageParam: null as string | null,
     queryFn: ({ pageParam, signal }) => {
@@ -21,8 +22,9 @@ export function useGalaxies(filter: string, pageSize = 100) {
 }
 
 /** Counts and histograms under the same filter. */
-export function useFacets(filter: string) {
+export function useFacets(filter: string, enabled = true) {
   return useQuery({
+    enabled,
     queryKey: keys.galaxies.about('facets', filter),
     queryFn: ({ signal }) => getJson('/api/galaxies/facets', facetsSchema, { query: new URLSearchParams(filter), signal }),
     placeholderData: keepPreviousData,
@@ -30,8 +32,9 @@ export function useFacets(filter: string) {
 }
 
 /** All matching galaxies, column-wise, for maps. */
-export function usePoints(filter: string) {
+export function usePoints(filter: string, enabled = true) {
   return useQuery({
+    enabled,
     queryKey: keys.galaxies.about('points', filter),
     queryFn: ({ signal }) => getJson('/api/galaxies/points', pointsSchema, { query: new URLSearchParams(filter), signal }),
     placeholderData: keepPreviousData,
