@@ -34,6 +34,7 @@ export interface Place {
 
 export interface Neighbourhood {
   readonly size: number
+  /** Rising. */
   readonly ids: Int32Array
   readonly x: Float64Array
   readonly y: Float64Array
@@ -41,32 +42,23 @@ export interface Neighbourhood {
   readonly mass: Float64Array
   readonly galaxies: readonly Neighbour[]
   /** Index into the arrays of a galaxy, or undefined when it has no distance. */
-  readonly indexOf: ReadonlyMap<number, number>
+  readonly indexOf: { get: (id: number) => number | undefined; has: (id: number) => boolean }
 }
 
 /** @param galaxies - in any order; their ids differ */
 export function neighbourhoodOf(galaxies: Iterable<Neighbour>): Neighbourhood {
   // By id, so that ties fall the same way whatever order the database gave.
-  const list = [...galaxies].sort((a, b) => a.id - b.id)
-  return {
-    size: list.length,
-    ids: Int32Array.from(list, (g) => g.id),
-    x: Float64Array.from(list, (g) => g.x),
-    y: Float64Array.from(list, (g) => g.y),
-    z: Float64Array.from(list, (g) => g.z),
-    mass: Float64Array.from(list, (g) => g.mass),
-    galaxies: list,
-    indexOf: new Map(list.map((g, i) => [g.id, i])),
-  }
+  return arrange([...galaxies].sort((a, b) => a.id - b.id))
 }
 
 /** A neighbourhood with some galaxies changed, added, or (null) taken away; the old one is left as it was. */
 export function withChanges(old: Neighbourhood, changes: ReadonlyMap<number, Neighbour | null>): Neighbourhood {
+  if (changes.size === 0) return old
   const sameGalaxies = [...changes].every(([id, g]) => g !== null && old.indexOf.has(id))
   if (!sameGalaxies) {
     const kept = old.galaxies.filter((g) => !changes.has(g.id))
-    const added = [...changes.values()].filter((g): g is Neighbour => g !== null)
-    return neighbourhoodOf([...kept, ...added])
+    const added = [...changes.values()].filter((g): g is Neighbour => g !== null).sort((a, b) => a.id - b.id)
+    return arrange(merge(kept, added))
   }
   const next = { ...old, x: old.x.slice(), y: old.y.slice(), z: old.z.slice(), mass: old.mass.slice(), galaxies: old.galaxies.slice() }
   for (const [id, g] of changes) {
@@ -79,6 +71,49 @@ export function withChanges(old: Neighbourhood, changes: ReadonlyMap<number, Nei
     next.galaxies[i] = g
   }
   return next
+}
+
+/** @param galaxies - by id, rising */
+function arrange(galaxies: readonly Neighbour[]): Neighbourhood {
+  const size = galaxies.length
+  const ids = new Int32Array(size)
+  const [x, y, z, mass] = [new Float64Array(size), new Float64Array(size), new Float64Array(size), new Float64Array(size)]
+  for (let i = 0; i < size; i++) {
+    const g = galaxies[i]
+    if (!g) continue
+    ids[i] = g.id
+    x[i] = g.x
+    y[i] = g.y
+    z[i] = g.z
+    mass[i] = g.mass
+  }
+  const get = (id: number): number | undefined => placeIn(ids, id)
+  return { size, ids, x, y, z, mass, galaxies, indexOf: { get, has: (id) => get(id) !== undefined } }
+}
+
+/** Two lists that rise by id, as one. */
+function merge(a: readonly Neighbour[], b: readonly Neighbour[]): Neighbour[] {
+  const merged: Neighbour[] = []
+  let k = 0
+  for (const g of a) {
+    for (let next = b[k]; next && next.id < g.id; next = b[++k]) merged.push(next)
+    merged.push(g)
+  }
+  return [...merged, ...b.slice(k)]
+}
+
+/** Where a number stands in a rising list, or undefined: half of the rest is left out at each step. */
+function placeIn(rising: Int32Array, wanted: number): number | undefined {
+  let low = 0
+  let high = rising.length - 1
+  while (low <= high) {
+    const middle = (low + high) >> 1
+    const found = rising[middle] ?? NaN
+    if (found === wanted) return middle
+    if (found < wanted) low = middle + 1
+    else high = middle - 1
+  }
+  return undefined
 }
 
 /** A catalogue row (own columns are enough) as a neighbour; null when it has no distance or is withdrawn. */

@@ -4,7 +4,7 @@ import type { Adopted } from '../../../core/adoption/adopted.ts'
 import { COLUMNS, type CatalogueRow } from '../../../core/columns.ts'
 import type { QuantityKey } from '../../../core/quantities.ts'
 import type { Computed } from './adopt-galaxies.ts'
-import type { PlannedAdopted } from './plan.ts'
+import type { PlannedAdopted, PlannedRow } from './plan.ts'
 
 /** Stamped by the writing, so they say nothing about a difference. */
 const STAMPS: ReadonlySet<string> = new Set(['revision', 'updated_at'])
@@ -26,8 +26,10 @@ export async function standingRows(trx: Knex, ids: readonly number[]): Promise<M
   return new Map(rows.map((row) => [row.galaxy, row]))
 }
 
-export function sameRow(a: CatalogueRow, b: CatalogueRow): boolean {
-  return COMPUTED_COLUMNS.every((key) => (a[key] ?? null) === (b[key] ?? null))
+/** Whether the row that stands is the one that is planned. */
+export function sameRow({ before, after, mainDisturber, indexDisturber }: PlannedRow): boolean {
+  if (!before || before.main_disturber_galaxy !== mainDisturber || before.index_disturber_galaxy !== indexDisturber) return false
+  return COMPUTED_COLUMNS.every((key) => (before[key] ?? null) === (after[key] ?? null))
 }
 
 interface StoredAdopted {
@@ -38,6 +40,12 @@ interface StoredAdopted {
   errPlus: number | null
   errMinus: number | null
   errSys: number | null
+  nUsed: number
+  nAll: number
+  chi2: number | null
+  dof: number | null
+  scatter: number | null
+  method: string | null
   sentence: string
   reasons: unknown
   overrideReason: string | null
@@ -49,7 +57,7 @@ export async function adoptedDifferences(trx: Knex, computed: readonly Computed[
   const stored = (await trx('adoptedValues')
     .whereNull('revTo')
     .whereRaw('galaxy = any(?)', [ids])
-    .select('galaxy', 'quantity', 'value', 'textValue', 'errPlus', 'errMinus', 'errSys', 'sentence', 'reasons', 'overrideReason')) as StoredAdopted[]
+    .select('galaxy', 'quantity', 'value', 'textValue', 'errPlus', 'errMinus', 'errSys', 'nUsed', 'nAll', 'chi2', 'dof', 'scatter', 'method', 'sentence', 'reasons', 'overrideReason')) as StoredAdopted[]
   const standing = new Map(stored.map((s) => [`${s.galaxy} ${s.quantity}`, s]))
   const planned: PlannedAdopted[] = []
   for (const { galaxy, adopted } of computed) {
@@ -57,18 +65,17 @@ export async function adoptedDifferences(trx: Knex, computed: readonly Computed[
       const key = `${galaxy.id} ${quantity}`
       const before = standing.get(key)
       standing.delete(key)
-      if (!before || !sameAdopted(before, after)) planned.push({ galaxyId: galaxy.id, quantity, after })
+      if (!before || !sameAdopted(before, after)) planned.push({ galaxyId: galaxy.id, quantity, standing: before !== undefined, after })
     }
   }
-  for (const gone of standing.values()) planned.push({ galaxyId: gone.galaxy, quantity: gone.quantity, after: null })
+  for (const gone of standing.values()) planned.push({ galaxyId: gone.galaxy, quantity: gone.quantity, standing: true, after: null })
   return planned
 }
 
+const PLAIN = ['value', 'textValue', 'errPlus', 'errMinus', 'errSys', 'nUsed', 'nAll', 'chi2', 'dof', 'scatter', 'method', 'sentence'] as const
+
 function sameAdopted(before: StoredAdopted, after: Adopted): boolean {
-  return (
-    before.value === after.value && before.textValue === after.textValue && before.errPlus === after.errPlus && before.errMinus === after.errMinus &&
-    before.errSys === after.errSys && before.sentence === after.sentence && before.overrideReason === after.override && sameJson(before.reasons, after.reasons)
-  )
+  return PLAIN.every((key) => before[key] === after[key]) && before.overrideReason === after.override && sameJson(before.reasons, after.reasons)
 }
 
 /** jsonb gives the keys of an object in an order of its own. */

@@ -6,11 +6,11 @@ import type { Knex } from 'knex'
 import type { Scale } from '../../../core/adoption/adopted.ts'
 import type { CatalogueRow } from '../../../core/columns.ts'
 import { affectedBy } from '../../../core/derive/affected.ts'
-import { neighbourFrom, withChanges, type Neighbour, type Neighbourhood, type Place } from '../../../core/derive/neighbourhood.ts'
+import { neighbourFrom, withChanges, type Neighbour, type Neighbourhood } from '../../../core/derive/neighbourhood.ts'
 import type { OwnColumns } from '../../../core/derive/own.ts'
-import { relationOf, relationWord, type Relation } from '../../../core/derive/relation.ts'
+import { relationOf, relationsOf, relationWord, type Relation } from '../../../core/derive/relation.ts'
 import { adoptGalaxies } from './adopt-galaxies.ts'
-import { adoptedDifferences, sameRow, standingRows, type StoredRow } from './compare.ts'
+import { adoptedDifferences, sameRow, standingRows } from './compare.ts'
 import { allGalaxies, loadScale } from './load.ts'
 import { surroundingsAt, type Surroundings } from './neighbourhood-cache.ts'
 import type { PlannedRow, RevisionPlan } from './plan.ts'
@@ -34,29 +34,31 @@ export async function computeRevision(trx: Knex, { revision, touched, scaleChang
   const adopted = await adoptedDifferences(trx, computed)
   const own = new Map(computed.map((c) => [c.galaxy.id, c.own]))
   const rows = await place(trx, own, surroundings, scale)
-  return { revision, rows, adopted, ...membersOf(surroundings) }
+  return { revision, rows, adopted, before: surroundings }
 }
+
+/** From so many on, the search through a tree is worth planting it. */
+const MANY = 200
 
 /** Rows of everybody whose own columns or place among the others would differ. */
 async function place(trx: Knex, own: ReadonlyMap<number, OwnColumns>, before: Surroundings, scale: Scale): Promise<PlannedRow[]> {
   const moved = movedNeighbours(own, before.neighbourhood)
   const after = withChanges(before.neighbourhood, moved)
   const affected = affectedBy(before.neighbourhood, after, new Set(moved.keys()), (id) => before.places.get(id), scale.policy.host.massRatio)
-  const relations = new Map<number, Relation>()
-  for (const id of new Set([...affected, ...own.keys()])) relations.set(id, relationOf(after, id, scale.policy))
-  const hosts = hostsTouched(relations, before.places)
-  const placeAfter = (id: number): Place | undefined => relations.get(id) ?? before.places.get(id)
-  const hosting = withSatellites(after, before.places, relations, new Set([...hosts, ...relations.keys()]))
-  const standing = await standingRows(trx, [...new Set([...relations.keys(), ...hosts])])
-  return [...new Set([...relations.keys(), ...hosts])].flatMap((id): PlannedRow[] => {
+  const asked = new Set([...affected, ...own.keys()])
+  const relations = asked.size < MANY ? new Map([...asked].map((id) => [id, relationOf(after, id, scale.policy)])) : relationsOf(after, asked, scale.policy)
+  const gains = satelliteGains(relations, before)
+  const satellitesOf = (id: number): number => (before.satellites.get(id) ?? 0) + (gains.get(id) ?? 0)
+  const ids = [...new Set([...relations.keys(), ...gains.keys()])]
+  const standing = await standingRows(trx, ids)
+  return ids.flatMap((id): PlannedRow[] => {
     const stored = standing.get(id)
     const columns = own.get(id) ?? stored
     if (!columns) return []
-    const where = placeAfter(id)
-    const word = relationWord(where?.isSatellite ?? false, hosting.has(id))
-    const row: CatalogueRow = { ...columns, ...(relations.get(id)?.columns ?? {}), host_relation: word }
-    const planned = { galaxyId: id, before: stored ?? null, after: row, mainDisturber: where?.mainDisturber ?? null, indexDisturber: where?.indexDisturber ?? null }
-    return stored && sameRow(stored, row) && sameDisturbers(stored, planned) ? [] : [planned]
+    const where = relations.get(id) ?? before.places.get(id)
+    const after: CatalogueRow = { ...columns, ...(relations.get(id)?.columns ?? {}), host_relation: relationWord(where?.isSatellite ?? false, satellitesOf(id) > 0) }
+    const planned = { galaxyId: id, before: stored ?? null, after, mainDisturber: where?.mainDisturber ?? null, indexDisturber: where?.indexDisturber ?? null }
+    return sameRow(planned) ? [] : [planned]
   })
 }
 
@@ -77,41 +79,16 @@ function sameNeighbour(a: Neighbour | null, b: Neighbour | null): boolean {
   return (Object.keys(a) as (keyof Neighbour)[]).every((key) => a[key] === b[key])
 }
 
-/** Hosts that gain or lose a satellite: they may become hosts, or stop being so. */
-function hostsTouched(relations: ReadonlyMap<number, Relation>, places: ReadonlyMap<number, Place>): Set<number> {
-  const hosts = new Set<number>()
+/** How many satellites each host gains, those included that gain as many as they lose. */
+function satelliteGains(relations: ReadonlyMap<number, Relation>, { places }: Surroundings): Map<number, number> {
+  const gains = new Map<number, number>()
   for (const [id, relation] of relations) {
     const was = places.get(id)
     const before = was?.isSatellite ? was.mainDisturber : null
     const now = relation.isSatellite ? relation.mainDisturber : null
     if (before === now) continue
-    if (before !== null) hosts.add(before)
-    if (now !== null) hosts.add(now)
+    if (before !== null) gains.set(before, (gains.get(before) ?? 0) - 1)
+    if (now !== null) gains.set(now, (gains.get(now) ?? 0) + 1)
   }
-  return hosts
-}
-
-/** Which of these galaxies have a satellite, afterwards. */
-function withSatellites(after: Neighbourhood, places: ReadonlyMap<number, Place>, relations: ReadonlyMap<number, Relation>, asked: ReadonlySet<number>): Set<number> {
-  const hosting = new Set<number>()
-  for (const id of after.ids) {
-    const where = relations.get(id) ?? places.get(id)
-    if (where?.isSatellite && where.mainDisturber !== null && asked.has(where.mainDisturber)) hosting.add(where.mainDisturber)
-  }
-  return hosting
-}
-
-function sameDisturbers(stored: StoredRow, planned: PlannedRow): boolean {
-  return stored.main_disturber_galaxy === planned.mainDisturber && stored.index_disturber_galaxy === planned.indexDisturber
-}
-
-function membersOf({ neighbourhood, places }: Surroundings): Pick<RevisionPlan, 'members' | 'names'> {
-  const members = new Map<string, number>()
-  const names = new Map(neighbourhood.galaxies.map((g) => [g.slug, g.name]))
-  for (const { mainDisturber, isSatellite } of places.values()) {
-    const index = isSatellite && mainDisturber !== null ? neighbourhood.indexOf.get(mainDisturber) : undefined
-    const slug = index === undefined ? undefined : neighbourhood.galaxies[index]?.slug
-    if (slug !== undefined) members.set(slug, (members.get(slug) ?? 0) + 1)
-  }
-  return { members, names }
+  return gains
 }

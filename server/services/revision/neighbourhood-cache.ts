@@ -1,20 +1,29 @@
 /**
  * The neighbourhood of one revision, kept in memory between approvals: reading 100,000 places costs more than an approval may. Nothing is
- * trusted that the database does not confirm: an entry belongs to a revision, and is brought to another by the rows that changed between.
+ * trusted that the database does not confirm: an entry belongs to a revision by its number and the transaction that made it, and is brought
+ * to another by the rows that changed between.
  */
 import type { Knex } from 'knex'
 import { neighbourFrom, neighbourhoodOf, withChanges, type Neighbour, type Neighbourhood, type Place } from '../../../core/derive/neighbourhood.ts'
 import type { CatalogueRow } from '../../../core/columns.ts'
+import { LayeredMap } from './layered-map.ts'
 
 export interface Surroundings {
   revision: number
   neighbourhood: Neighbourhood
   /** By galaxy id, of every galaxy that has a row. */
-  places: ReadonlyMap<number, Place>
+  places: Pick<ReadonlyMap<number, Place>, 'get'>
+  /** How many satellites each galaxy has that has any, by its id. */
+  satellites: ReadonlyMap<number, number>
+}
+
+interface Entry extends Surroundings {
+  madeBy: string
+  places: LayeredMap<number, Place>
 }
 
 /** One entry a database; knex keeps one settings object for a pool and the transactions on it. */
-const entries = new WeakMap<object, Surroundings>()
+const entries = new WeakMap<object, Entry>()
 
 interface PlaceRow extends CatalogueRow {
   galaxy: number
@@ -25,39 +34,72 @@ interface PlaceRow extends CatalogueRow {
 const COLUMNS = 'galaxy, slug, name, status, sgx, sgy, sgz, dm, dm_err, dm_err_sys, log_mstar, v_gsr, host_relation, main_disturber_galaxy, index_disturber_galaxy'
 
 /**
- * The surroundings as of a committed revision.
+ * The surroundings as of a revision.
  *
- * @param trx - must see that revision, and no rows of its own making in catalogue_rows
+ * @param trx - must see that revision; rows of a later one, its own among them, are not looked at
  */
 export async function surroundingsAt(trx: Knex, revision: number): Promise<Surroundings> {
   const key = (trx.client as { config: object }).config
   const known = entries.get(key)
-  if (known?.revision === revision) return known
-  const fresh = known && known.revision < revision ? await follow(trx, known, revision) : await read(trx, revision)
-  if (!known || known.revision < revision) entries.set(key, fresh)
+  const makers = await makersOf(trx, known ? [known.revision, revision] : [revision])
+  const maker = makers.get(revision)
+  const trusted = known && makers.get(known.revision)?.madeBy === known.madeBy ? known : undefined
+  if (trusted?.revision === revision) return trusted
+  const fresh = trusted && trusted.revision < revision ? await follow(trx, trusted, revision) : await read(trx, revision)
+  // A revision that this transaction made may yet be rolled back. An older one than is kept is not worth keeping.
+  if (maker && !maker.here && (!trusted || trusted.revision < revision)) entries.set(key, { ...fresh, madeBy: maker.madeBy })
   return fresh
 }
 
-async function read(trx: Knex, revision: number): Promise<Surroundings> {
-  const { rows } = (await trx.raw(`select ${COLUMNS} from catalogue_rows where rev_from <= ? and (rev_to is null or rev_to > ?)`, [revision, revision])) as { rows: PlaceRow[] }
-  const neighbours = rows.flatMap((row) => neighbourFrom(row.galaxy, row) ?? [])
-  return { revision, neighbourhood: neighbourhoodOf(neighbours), places: new Map(rows.map((row) => [row.galaxy, placeFrom(row)])) }
+interface Maker {
+  /** Tells a revision from another that got the same number after a rollback or a restore. */
+  madeBy: string
+  /** Whether it is of this very transaction. */
+  here: boolean
 }
 
-async function follow(trx: Knex, known: Surroundings, revision: number): Promise<Surroundings> {
+async function makersOf(trx: Knex, revisions: readonly number[]): Promise<Map<number, Maker>> {
+  const { rows } = (await trx.raw(
+    `select number, xmin::text || ' ' || approved_at as "madeBy", coalesce(xmin::text = (pg_current_xact_id_if_assigned()::text::numeric % 4294967296)::text, false) as here
+       from revisions where number = any(?)`,
+    [[...revisions]],
+  )) as { rows: (Maker & { number: number })[] }
+  return new Map(rows.map(({ number, ...maker }) => [number, maker]))
+}
+
+type Fresh = Omit<Entry, 'madeBy'>
+
+async function read(trx: Knex, revision: number): Promise<Fresh> {
+  const { rows } = (await trx.raw(`select ${COLUMNS} from catalogue_rows where rev_from <= ? and (rev_to is null or rev_to > ?)`, [revision, revision])) as { rows: PlaceRow[] }
+  const places = new Map(rows.map((row) => [row.galaxy, placeFrom(row)]))
+  const satellites = new Map<number, number>()
+  for (const place of places.values()) count(satellites, place, 1)
+  return { revision, neighbourhood: neighbourhoodOf(rows.flatMap((row) => neighbourFrom(row.galaxy, row) ?? [])), places: new LayeredMap(places), satellites }
+}
+
+async function follow(trx: Knex, known: Fresh, revision: number): Promise<Fresh> {
   const { rows } = (await trx.raw(
     `select ${COLUMNS} from catalogue_rows where rev_from > ? and rev_from <= ? and (rev_to is null or rev_to > ?)`,
     [known.revision, revision, revision],
   )) as { rows: PlaceRow[] }
   if (rows.length === 0) return { ...known, revision }
-  const places = new Map(known.places)
+  const satellites = new Map(known.satellites)
   const changes = new Map<number, Neighbour | null>()
+  const places = rows.map((row): [number, Place] => [row.galaxy, placeFrom(row)])
   for (const row of rows) {
-    places.set(row.galaxy, placeFrom(row))
     const neighbour = neighbourFrom(row.galaxy, row)
     if (neighbour || known.neighbourhood.indexOf.has(row.galaxy)) changes.set(row.galaxy, neighbour)
   }
-  return { revision, neighbourhood: withChanges(known.neighbourhood, changes), places }
+  for (const [id, place] of places) {
+    count(satellites, known.places.get(id), -1)
+    count(satellites, place, 1)
+  }
+  return { revision, neighbourhood: withChanges(known.neighbourhood, changes), places: known.places.with(places), satellites }
+}
+
+function count(satellites: Map<number, number>, place: Place | undefined, by: 1 | -1): void {
+  if (!place?.isSatellite || place.mainDisturber === null) return
+  satellites.set(place.mainDisturber, (satellites.get(place.mainDisturber) ?? 0) + by)
 }
 
 function placeFrom(row: PlaceRow): Place {

@@ -2,10 +2,12 @@
 import type { Adopted } from '../../../core/adoption/adopted.ts'
 import type { CatalogueRow } from '../../../core/columns.ts'
 import type { QuantityKey } from '../../../core/quantities.ts'
+import type { StoredRow } from './compare.ts'
+import type { Surroundings } from './neighbourhood-cache.ts'
 
 export interface PlannedRow {
   galaxyId: number
-  before: CatalogueRow | null
+  before: StoredRow | null
   /** Every column but `revision` and `updated_at`, which are the writing's. */
   after: CatalogueRow
   mainDisturber: number | null
@@ -15,6 +17,8 @@ export interface PlannedRow {
 export interface PlannedAdopted {
   galaxyId: number
   quantity: QuantityKey
+  /** Whether another value stands that this one ends. */
+  standing: boolean
   /** null when there is nothing any more that could be adopted. */
   after: Adopted | null
 }
@@ -23,7 +27,6 @@ export interface RevisionPlan {
   revision: number
   rows: PlannedRow[]
   adopted: PlannedAdopted[]
-  /** Satellites of each host, by slug, before; and what hosts are called. */
-  members: ReadonlyMap<string, number>
-  names: ReadonlyMap<string, string>
+  /** How it stood. */
+  before: Surroundings
 }

@@ -2,7 +2,7 @@
 import type { Knex } from 'knex'
 import { neighbourFrom, neighbourhoodOf } from '../../../core/derive/neighbourhood.ts'
 import type { OwnColumns } from '../../../core/derive/own.ts'
-import { relationOf, relationWord, type Relation } from '../../../core/derive/relation.ts'
+import { relationsOf, relationWord } from '../../../core/derive/relation.ts'
 import { adoptGalaxies } from './adopt-galaxies.ts'
 import { adoptedDifferences, sameRow, standingRows } from './compare.ts'
 import { allGalaxies, loadScale } from './load.ts'
@@ -32,14 +32,8 @@ export async function rebuildCatalogue(trx: Knex, revision: number, { onProgress
     onProgress?.((0.6 * Math.min(ids.length, i + CHUNK)) / ids.length)
   }
   const neighbourhood = neighbourhoodOf([...own].flatMap(([id, columns]) => neighbourFrom(id, columns) ?? []))
-  const relations = new Map<number, Relation>()
-  const hosting = new Set<number>()
-  for (const [i, id] of ids.entries()) {
-    const relation = relationOf(neighbourhood, id, scale.policy)
-    relations.set(id, relation)
-    if (relation.isSatellite && relation.mainDisturber !== null) hosting.add(relation.mainDisturber)
-    if (i % CHUNK === 0) onProgress?.(0.6 + (0.3 * i) / ids.length)
-  }
+  const relations = relationsOf(neighbourhood, ids, scale.policy, (done) => onProgress?.(0.6 + (0.2 * done) / ids.length))
+  const hosting = new Set([...relations.values()].flatMap((r) => (r.isSatellite && r.mainDisturber !== null ? [r.mainDisturber] : [])))
   let written = 0
   for (let i = 0; i < ids.length; i += CHUNK) {
     const chunk = ids.slice(i, i + CHUNK)
@@ -49,12 +43,12 @@ export async function rebuildCatalogue(trx: Knex, revision: number, { onProgress
       const columns = own.get(id)
       if (!relation || !columns) return []
       const after = { ...columns, ...relation.columns, host_relation: relationWord(relation.isSatellite, hosting.has(id)) }
-      const before = standing.get(id) ?? null
-      return before && sameRow(before, after) ? [] : [{ galaxyId: id, before, after, mainDisturber: relation.mainDisturber, indexDisturber: relation.indexDisturber }]
+      const row = { galaxyId: id, before: standing.get(id) ?? null, after, mainDisturber: relation.mainDisturber, indexDisturber: relation.indexDisturber }
+      return sameRow(row) ? [] : [row]
     })
     await writeRows(trx, revision, planned)
     written += planned.length
-    onProgress?.(0.9 + (0.1 * Math.min(ids.length, i + CHUNK)) / ids.length)
+    onProgress?.(0.8 + (0.2 * Math.min(ids.length, i + CHUNK)) / ids.length)
   }
   return written
 }

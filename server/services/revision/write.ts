@@ -13,11 +13,14 @@ export async function writeRevision(trx: Knex, plan: RevisionPlan): Promise<void
 
 export async function writeAdopted(trx: Knex, revision: number, planned: readonly PlannedAdopted[]): Promise<void> {
   for (const batch of batches(planned)) {
-    await trx.raw(
-      `update adopted_values a set rev_to = ? from jsonb_to_recordset(?::jsonb) as p(galaxy integer, quantity text)
-        where a.rev_to is null and a.galaxy = p.galaxy and a.quantity = p.quantity`,
-      [revision, JSON.stringify(batch.map((p) => ({ galaxy: p.galaxyId, quantity: p.quantity })))],
-    )
+    const ending = batch.filter((p) => p.standing)
+    if (ending.length > 0) {
+      await trx.raw(
+        `update adopted_values a set rev_to = ? from unnest(?::integer[], ?::text[]) as p(galaxy, quantity)
+          where a.rev_to is null and a.galaxy = p.galaxy and a.quantity = p.quantity`,
+        [revision, ending.map((p) => p.galaxyId), ending.map((p) => p.quantity)],
+      )
+    }
     const records = batch.flatMap(({ galaxyId, quantity, after: a }) =>
       a === null
         ? []
@@ -33,7 +36,8 @@ export async function writeAdopted(trx: Knex, revision: number, planned: readonl
 export async function writeRows(trx: Knex, revision: number, planned: readonly PlannedRow[]): Promise<void> {
   const updatedAt = new Date().toISOString()
   for (const batch of batches(planned)) {
-    await trx.raw('update catalogue_rows set rev_to = ? where rev_to is null and galaxy = any(?)', [revision, batch.filter((p) => p.before !== null).map((p) => p.galaxyId)])
+    const ending = batch.flatMap((p) => (p.before === null ? [] : [p.galaxyId]))
+    if (ending.length > 0) await trx.raw('update catalogue_rows set rev_to = ? where rev_to is null and galaxy = any(?)', [revision, ending])
     await insertRecords(trx, 'catalogue_rows', batch.map((p) => record(p, revision, updatedAt)))
   }
 }
