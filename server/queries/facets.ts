@@ -4,8 +4,11 @@ import { classLabel, type GalaxyClass } from '../../core/classes.ts'
 import { chosenValues, type Filter } from '../../core/filters/filter.ts'
 import { METHODS } from '../../core/methods.ts'
 import type { Facets } from '../../core/schema/catalogue.ts'
-import { holdsAt, partsAt, type Fragment, type ReadRevision } from './at-revision.ts'
+import { partsAt, type Fragment, type ReadRevision } from './at-revision.ts'
+import { countRows } from './count.ts'
 import { all, filterFragments, identifier, type ColumnFragment } from './filter-sql.ts'
+import { kept } from './kept.ts'
+import { namesOf } from './names-of.ts'
 
 export const CHOICE_FACETS = ['host', 'class', 'status', 'host_relation', 'distance_method'] as const
 export const HISTOGRAM_FACETS = ['distance', 'abs_v', 'abs_b', 'v_lg', 'tidal_index'] as const
@@ -17,71 +20,116 @@ interface ChoiceRow {
   count: number
 }
 
-interface BinRow {
-  facet: string
+interface Ends {
   lo: number
   hi: number
+}
+
+interface BinRow extends Ends {
+  facet: string
   bin: number | null
   count: number
 }
 
-export async function facetsOf(knex: Knex, filter: Filter, revision: ReadRevision): Promise<Facets> {
-  const base = baseSql(await filterFragments(knex, filter, revision), revision)
-  const [choices, bins] = await Promise.all([
-    knex.raw<{ rows: ChoiceRow[] }>(`${base.sql} ${choicesSql()}`, base.bindings),
-    knex.raw<{ rows: BinRow[] }>(`${base.sql} ${binsSql()}`, base.bindings),
-  ])
-  const total = choices.rows.find((row) => row.facet === '')?.count ?? 0
-  const labels = await hostLabels(knex, [...choices.rows.filter((row) => row.facet === 'host').map((row) => row.value), ...chosenValues(filter, 'host')], revision)
-  return {
-    revision: revision.number,
-    total,
-    choices: Object.fromEntries(CHOICE_FACETS.map((facet) => [facet, choicesOf(facet, choices.rows, filter, labels)])),
-    histograms: Object.fromEntries(HISTOGRAM_FACETS.flatMap((facet) => histogramOf(facet, bins.rows))),
-  }
+/** Facets that are counted over the same rows, in one reading of the table. */
+interface Group {
+  facets: string[]
+  where: Fragment
 }
 
-/**
- * The rows that all other conditions let through, with one flag a facet for that facet's own condition. Each facet then counts the rows whose
- * other flags are all up: one reading of the table serves all of them.
- */
-function baseSql(fragments: readonly ColumnFragment[], revision: ReadRevision): Fragment {
-  const facets = [...CHOICE_FACETS, ...HISTOGRAM_FACETS]
-  const own = (facet: string): Fragment => all(fragments.filter((f) => f.column === facet))
-  const others = fragments.filter((f) => f.column === null || !(facets as string[]).includes(f.column))
-  const flags = facets.map((facet) => ({ facet, ...own(facet) }))
-  const columns = facets.map(identifier).join(', ')
-  const selects = partsAt(revision).map((part) => {
-    const where = all([part, ...others])
+export async function facetsOf(knex: Knex, filter: Filter, revision: ReadRevision): Promise<Facets> {
+  const fragments = await filterFragments(knex, filter, revision)
+  const everything = all(fragments)
+  return kept(knex, revision, ['facets', everything.sql, everything.bindings], async () => {
+    const [total, choices, bins] = await Promise.all([
+      countRows(knex, everything, revision),
+      inTurn(groupsOf(CHOICE_FACETS, fragments), (group) => choiceRows(knex, group, revision)),
+      inTurn(groupsOf(HISTOGRAM_FACETS, fragments), (group) => binRows(knex, group, revision)),
+    ])
+    const hosts = [...choices.filter((row) => row.facet === 'host').map((row) => row.value), ...chosenValues(filter, 'host')]
+    const labels = await namesOf(knex, [...new Set(hosts.filter((slug) => slug !== null))], revision)
     return {
-      sql: `SELECT ${columns}, ${flags.map((f) => `(${f.sql}) AS "is_${f.facet}"`).join(', ')} FROM catalogue_rows WHERE ${where.sql}`,
-      bindings: [...flags.flatMap((f) => f.bindings), ...where.bindings],
+      revision: revision.number,
+      total,
+      choices: Object.fromEntries(CHOICE_FACETS.map((facet) => [facet, choicesOf(facet, choices, filter, labels)])),
+      histograms: Object.fromEntries(HISTOGRAM_FACETS.flatMap((facet) => histogramOf(facet, bins))),
     }
   })
-  return { sql: `WITH base AS MATERIALIZED (${selects.map((s) => s.sql).join(' UNION ALL ')})`, bindings: selects.flatMap((s) => s.bindings) }
 }
 
-/** True for rows that every facet's condition but this one's lets through. */
-function otherFlags(facet: string): string {
-  return [...CHOICE_FACETS, ...HISTOGRAM_FACETS].filter((other) => other !== facet).map((other) => `"is_${other}"`).join(' AND ')
+/** Facets without a condition of their own share all conditions; each of the others has all but its own. */
+function groupsOf(facets: readonly string[], fragments: readonly ColumnFragment[]): Group[] {
+  const own = facets.filter((facet) => fragments.some((f) => f.column === facet))
+  const shared = facets.filter((facet) => !own.includes(facet))
+  const groups: Group[] = own.map((facet) => ({ facets: [facet], where: all(fragments.filter((f) => f.column !== facet)) }))
+  return shared.length > 0 ? [{ facets: shared, where: all(fragments) }, ...groups] : groups
 }
 
-function choicesSql(): string {
-  const counts = CHOICE_FACETS.map((facet) => `SELECT '${facet}' AS facet, ${identifier(facet)} AS value, count(*)::int AS count FROM base WHERE ${otherFlags(facet)} GROUP BY 2`)
-  return [...counts, `SELECT '', NULL, count(*)::int FROM base WHERE ${otherFlags('')}`].join(' UNION ALL ')
+async function inTurn<Row>(groups: readonly Group[], read: (group: Group) => Promise<Row[]>): Promise<Row[]> {
+  const rows: Row[] = []
+  for (const group of groups) rows.push(...(await read(group)))
+  return rows
 }
 
-/** Bins over [lowest, highest]; the highest value belongs to the last bin. A bin without number counts the missing values. */
-function binsSql(): string {
-  return HISTOGRAM_FACETS.map((facet) => {
-    const column = identifier(facet)
-    return `(WITH rows AS (SELECT ${column} AS value FROM base WHERE ${otherFlags(facet)}),
-      ends AS (SELECT min(value) AS lo, max(value) AS hi FROM rows)
-      SELECT '${facet}' AS facet, ends.lo, ends.hi,
-        CASE WHEN rows.value IS NULL THEN NULL WHEN ends.lo = ends.hi THEN 1 ELSE least(width_bucket(rows.value, ends.lo, ends.hi, ${BINS}), ${BINS}) END AS bin,
-        count(*)::int AS count
-      FROM rows CROSS JOIN ends WHERE ends.lo IS NOT NULL GROUP BY 2, 3, 4)`
-  }).join(' UNION ALL ')
+/** The group's columns of its rows at the revision. */
+function rowsSql({ facets, where }: Group, revision: ReadRevision): Fragment {
+  const columns = facets.map(identifier).join(', ')
+  const parts = partsAt(revision).map((part) => all([part, where]))
+  return { sql: parts.map((part) => `SELECT ${columns} FROM catalogue_rows WHERE ${part.sql}`).join(' UNION ALL '), bindings: parts.flatMap((part) => part.bindings) }
+}
+
+async function choiceRows(knex: Knex, group: Group, revision: ReadRevision): Promise<ChoiceRow[]> {
+  const rows = rowsSql(group, revision)
+  const columns = group.facets.map(identifier)
+  const answer = await knex.raw<{ rows: (Record<string, string | null> & { which: number; count: number })[] }>(
+    `SELECT GROUPING(${columns.join(', ')})::int AS which, ${columns.join(', ')}, count(*)::int AS count FROM (${rows.sql}) AS rows
+     GROUP BY GROUPING SETS (${columns.map((column) => `(${column})`).join(', ')})`,
+    [...rows.bindings],
+  )
+  return answer.rows.map((row) => {
+    const facet = facetOf(group.facets, row.which)
+    return { facet, value: row[facet] ?? null, count: row.count }
+  })
+}
+
+/** GROUPING sets a bit for every column that a row is not grouped by, the last column's bit lowest. */
+function facetOf(facets: readonly string[], which: number): string {
+  return facets.find((_, i) => (which & (1 << (facets.length - 1 - i))) === 0) ?? ''
+}
+
+/** Equal bins over [lowest, highest]; the highest value belongs to the last bin. A bin without number counts the missing values. */
+async function binRows(knex: Knex, group: Group, revision: ReadRevision): Promise<BinRow[]> {
+  const rows = rowsSql(group, revision)
+  const ends = await knex.raw<{ rows: Record<string, number | null>[] }>(
+    `SELECT ${group.facets.map((f) => `min(${identifier(f)}) AS "lo ${f}", max(${identifier(f)}) AS "hi ${f}"`).join(', ')} FROM (${rows.sql}) AS rows`,
+    [...rows.bindings],
+  )
+  const found = new Map<string, Ends>()
+  for (const facet of group.facets) {
+    const [lo, hi] = [ends.rows[0]?.[`lo ${facet}`] ?? null, ends.rows[0]?.[`hi ${facet}`] ?? null]
+    if (lo !== null && hi !== null) found.set(facet, { lo, hi })
+  }
+  const facets = [...found.keys()]
+  if (facets.length === 0) return []
+  const bins = facets.map((facet, i) => ({ facet, name: `b${i}`, ...binSql(facet, found.get(facet) ?? { lo: 0, hi: 0 }) }))
+  const names = bins.map((bin) => bin.name)
+  const answer = await knex.raw<{ rows: (Record<string, number | null> & { which: number; count: number })[] }>(
+    `SELECT GROUPING(${names.join(', ')})::int AS which, ${names.join(', ')}, count(*)::int AS count
+     FROM (SELECT ${bins.map((bin) => `${bin.sql} AS ${bin.name}`).join(', ')} FROM (${rows.sql}) AS rows) AS binned
+     GROUP BY GROUPING SETS (${names.map((name) => `(${name})`).join(', ')})`,
+    [...bins.flatMap((bin) => bin.bindings), ...rows.bindings],
+  )
+  return answer.rows.flatMap((row) => {
+    const bin = bins.find((b) => b.name === facetOf(names, row.which))
+    const range = bin && found.get(bin.facet)
+    return bin && range ? [{ facet: bin.facet, ...range, bin: row[bin.name] ?? null, count: row.count }] : []
+  })
+}
+
+function binSql(facet: string, { lo, hi }: Ends): Fragment {
+  const column = identifier(facet)
+  if (lo === hi) return { sql: `CASE WHEN ${column} IS NOT NULL THEN 1 END`, bindings: [] }
+  return { sql: `least(width_bucket(${column}, ?::float8, ?::float8, ${BINS}), CASE WHEN ${column} IS NOT NULL THEN ${BINS} END)`, bindings: [lo, hi] }
 }
 
 function choicesOf(facet: string, rows: readonly ChoiceRow[], filter: Filter, hosts: ReadonlyMap<string, string>): Facets['choices'][string] {
@@ -111,20 +159,4 @@ function histogramOf(facet: string, rows: readonly BinRow[]): [string, Facets['h
   if (!first) return []
   const counts = Array.from({ length: BINS }, (_, i) => found.find((row) => row.bin === i + 1)?.count ?? 0)
   return [[facet, { lo: first.lo, hi: first.hi, counts, missing: found.find((row) => row.bin === null)?.count ?? 0 }]]
-}
-
-async function hostLabels(knex: Knex, slugs: readonly (string | null)[], revision: ReadRevision): Promise<Map<string, string>> {
-  const wanted = [...new Set(slugs.filter((slug) => slug !== null))]
-  if (wanted.length === 0) return new Map()
-  return namesOf(knex, wanted, revision)
-}
-
-/** Names by slug at a revision. */
-export async function namesOf(knex: Knex, slugs: readonly string[], revision: ReadRevision): Promise<Map<string, string>> {
-  const holds = holdsAt(revision)
-  const answer = await knex.raw<{ rows: { slug: string; name: string }[] }>(
-    `SELECT slug, name FROM catalogue_rows WHERE slug = ANY (?::text[]) AND ${holds.sql()}`,
-    [slugs as unknown as Knex.RawBinding, ...holds.bindings],
-  )
-  return new Map(answer.rows.map((row) => [row.slug, row.name]))
 }

@@ -8,6 +8,8 @@ import type { Resolved } from '../../core/schema/catalogue.ts'
 import { holdsAt, type ReadRevision } from './at-revision.ts'
 
 const MOST = 20
+/** Names looked at for a match: a word of two letters may begin a hundred thousand. */
+const MOST_CANDIDATES = 1000
 /** A typed position means what lies within this, deg. */
 const POSITION_RADIUS_DEG = 0.5
 
@@ -47,11 +49,11 @@ async function byKey(knex: Knex, condition: { sql: string; bindings: string[] },
   const answer = await knex.raw<{ rows: Match[] }>(
     `SELECT slug, name, matched, class, ra, dec, exact FROM (
        SELECT DISTINCT ON (c.galaxy) c.slug, c.name, n.name AS matched, c.class, c.ra, c.dec, ${exact} AS exact, length(n.name_key) AS size
-       FROM galaxy_names n JOIN catalogue_rows c ON c.galaxy = n.galaxy AND ${holds.sql('c')}
-       WHERE ${condition.sql} AND ${holds.sql('n')} AND c.status <> 'withdrawn'
+       FROM (SELECT * FROM galaxy_names n WHERE ${condition.sql} AND ${holds.sql('n')} LIMIT ${MOST_CANDIDATES}) AS n
+       JOIN catalogue_rows c ON c.galaxy = n.galaxy AND ${holds.sql('c')} AND c.status <> 'withdrawn'
        ORDER BY c.galaxy, n.preferred DESC, length(n.name_key), n.name
      ) AS found ORDER BY size, matched COLLATE "C" LIMIT ${MOST}`,
-    [...holds.bindings, ...condition.bindings, ...holds.bindings],
+    [...condition.bindings, ...holds.bindings, ...holds.bindings],
   )
   return answer.rows
 }

@@ -14,7 +14,7 @@ import { HttpError } from '../http/errors.ts'
 import { route, type Route, type RouteContext } from '../http/route.ts'
 import { readRevision, type ReadRevision } from '../queries/at-revision.ts'
 import { exportRows, type ExportRow, type ExportRows } from '../queries/export-rows.ts'
-import { namesOf } from '../queries/facets.ts'
+import { namesOf } from '../queries/names-of.ts'
 import { readFilter } from './read-filter.ts'
 
 const FORMATS = ['csv', 'vot'] as const
