@@ -1,43 +1,35 @@
 /** Drawing a recipe with the galaxies that its reader may see. */
 import type { Knex } from 'knex'
-import { galaxiesFromPoints } from '../../core/figure/galaxy.ts'
 import { parseFilter } from '../../core/filters/parse.ts'
 import type { Filter } from '../../core/filters/filter.ts'
-import type { Points } from '../../core/schema/catalogue.ts'
 import type { FigureDrawing } from '../../core/schema/figures.ts'
-import { FigureTooLarge, renderFigure, type RenderedFigure } from '../figures/render.ts'
+import { DrawingBusy, drawInThread } from '../figures/draw-in-thread.ts'
 import { BadInput, HttpError } from '../http/errors.ts'
 import type { Reader, Services } from '../http/route.ts'
 import { readRevision, type ReadRevision } from '../queries/at-revision.ts'
 import { pointsText } from '../queries/points.ts'
 
-/** A picture of many pixels takes hundreds of megabytes while it is drawn. */
-const MOST_AT_ONCE = 2
-
-let running = 0
-
-export interface DrawnFigure extends RenderedFigure {
+export interface DrawnFigure {
+  bytes: Buffer
+  mediaType: string
+  fileName: string
   revision: ReadRevision
 }
 
-/** @throws BadInput naming the part of the recipe; NotFound for an unknown `at`; HttpError 503 when others are being drawn */
+/** @throws BadInput naming the part of the recipe; NotFound for an unknown `at`; HttpError 503 when too many others are being drawn */
 export async function drawFigure({ knex }: Services, reader: Reader, { recipe, format }: FigureDrawing): Promise<DrawnFigure> {
   const filter = filterOf(recipe.filter)
   const revision = await readRevision(knex, reader, recipe.at ?? filter.at)
-  if (running >= MOST_AT_ONCE) {
-    throw new HttpError(503, 'Busy', 'Other figures are being drawn just now. Nothing is lost: try again in a few seconds.', { kind: 'busy', headers: { 'retry-after': '3' } })
-  }
-  running++
-  try {
-    const points = JSON.parse(await pointsText(knex, filter, revision)) as Points
-    const options = { format, releaseLabel: revision.release ?? `revision ${revision.number}`, date: await dateOf(knex, revision) }
-    return { ...(await renderFigure(recipe, galaxiesFromPoints(points), options)), revision }
-  } catch (error) {
-    if (error instanceof FigureTooLarge) throw new BadInput(error.message, [{ path: 'recipe.dpi', message: error.message }])
-    throw error
-  } finally {
-    running--
-  }
+  const releaseLabel = revision.release ?? `revision ${revision.number}`
+  const drawn = await drawInThread({ recipe, points: await pointsText(knex, filter, revision), format, releaseLabel, date: await dateOf(knex, revision) }).catch((error: unknown) => {
+    throw error instanceof DrawingBusy ? busy() : error
+  })
+  if ('tooLarge' in drawn) throw new BadInput(drawn.tooLarge, [{ path: 'recipe.dpi', message: drawn.tooLarge }])
+  return { ...drawn, bytes: Buffer.from(drawn.bytes.buffer, drawn.bytes.byteOffset, drawn.bytes.byteLength), revision }
+}
+
+function busy(): HttpError {
+  return new HttpError(503, 'Busy', 'Many figures are being drawn just now. Nothing is lost: try again in a few seconds.', { kind: 'busy', headers: { 'retry-after': '5' } })
 }
 
 /** A figure shows all that its filter lets through: what belongs to pages of a list says nothing here. */
