@@ -4,15 +4,15 @@ import type { Frame } from '../astro/frames.ts'
 import { wrap360 } from '../astro/units.ts'
 import type { SkyMap } from './projection.ts'
 import type { SkyRecipe } from './recipe.ts'
-import type { Box, PathMark, TextMark } from './scene.ts'
+import { overlapping, type Box, type PathMark, type TextMark } from './scene.ts'
 import type { FigureStyle } from './style.ts'
 import { CAP_HEIGHT, textBox } from './text-metrics.ts'
 import { numeral } from './words.ts'
 
 const STEP_DEG = 30
 
-/** Below this half width of the map every second meridian is labelled, mm. */
-const CROWDED_MM = 62
+/** Least distance between labelled meridians, ems; else only every second or third is labelled. */
+const LEAST_BETWEEN_EMS = 5
 
 /** Meridians nearer to the edge of the map than this stay unlabelled, deg. */
 const EDGE_DEG = 18
@@ -38,7 +38,8 @@ export function graticuleLabels(sky: SkyRecipe, map: SkyMap, style: FigureStyle,
   const base = { kind: 'text' as const, face: 'sans' as const, size: style.tick, colour: style.colours.muted }
   const gap = style.tick * 0.3
   const halo = { colour: style.colours.sheet, width: style.halo }
-  const step = map.halfWidth < CROWDED_MM ? 2 * STEP_DEG : STEP_DEG
+  const between = map.halfWidth / (180 / STEP_DEG)
+  const step = STEP_DEG * (between > LEAST_BETWEEN_EMS * style.tick ? 1 : between * 2 > LEAST_BETWEEN_EMS * style.tick ? 2 : 3)
   const meridians: TextMark[] = []
   for (let lon = 0; lon < 360; lon += step) {
     const fromMiddle = Math.abs(wrap360(lon - sky.centreLon + 180) - 180)
@@ -54,7 +55,7 @@ export function graticuleLabels(sky: SkyRecipe, map: SkyMap, style: FigureStyle,
     }))
     const crowds = choices.map((choice) => crowd(textBox(choice)))
     const best = choices[crowds.indexOf(Math.min(...crowds))]
-    if (best) meridians.push(best)
+    if (best && !meridians.some((other) => overlapping(textBox(other), textBox(best)))) meridians.push(best)
   }
   const parallels = LABELLED_PARALLELS.flatMap((lat) => [-1, 1].map((side) => outsideLabel(latitudeLabel(lat), map.framePoint(sky.centreLon + 179.9999, lat), side as -1 | 1, map, style)))
   return [...meridians, ...parallels.filter((label) => within(textBox(label), page))]

@@ -2,7 +2,7 @@
 import { cutCircle } from './cut.ts'
 import { decimalsOf, roundStep, type PlaneMap } from './plane-map.ts'
 import type { FigureRecipe } from './recipe.ts'
-import type { Box, Mark, TextMark } from './scene.ts'
+import { overlapping, type Box, type Mark, type TextMark } from './scene.ts'
 import type { FigureStyle } from './style.ts'
 import { CAP_HEIGHT, textBox } from './text-metrics.ts'
 import { numeral, withUnit } from './words.ts'
@@ -65,10 +65,9 @@ export function ringMarks(map: PlaneMap, recipe: FigureRecipe, style: FigureStyl
       }))
       .filter((label) => {
         const box = textBox(label)
-        return map.holds(roomy(box, style)) && !taken.some((other) => overlaps(other, box))
+        return map.holds(roomy(box, style)) && crowd(box) === 0 && !taken.some((other) => overlapping(other, box))
       })
-    const crowded = labels.reduce((sum, label) => sum + crowd(textBox(label)), 0)
-    return { labels, cost: crowded + rank * 0.25 - labels.length * 2 }
+    return { labels, cost: rank * 0.12 - labels.length }
   })
   const best = alternatives.reduce((a, b) => (b.cost < a.cost ? b : a))
   return { circles, labels: apart(best.labels) }
@@ -77,17 +76,13 @@ export function ringMarks(map: PlaneMap, recipe: FigureRecipe, style: FigureStyl
 /** Leaves out a label that would touch the one before. */
 function apart(labels: readonly TextMark[]): TextMark[] {
   const kept: TextMark[] = []
-  for (const label of labels) if (!kept.some((other) => overlaps(textBox(other), textBox(label)))) kept.push(label)
+  for (const label of labels) if (!kept.some((other) => overlapping(textBox(other), textBox(label)))) kept.push(label)
   return kept
 }
 
 function roomy(box: Box, style: FigureStyle): Box {
   const by = style.tick
   return { minX: box.minX - by, minY: box.minY - by, maxX: box.maxX + by, maxY: box.maxY + by }
-}
-
-function overlaps(a: Box, b: Box): boolean {
-  return a.minX < b.maxX && b.minX < a.maxX && a.minY < b.maxY && b.minY < a.maxY
 }
 
 /** Least and greatest distance from the observer to the square, in the section, Mpc. */

@@ -93,6 +93,10 @@ export interface Box {
   maxY: number
 }
 
+export function overlapping(a: Box, b: Box): boolean {
+  return a.minX < b.maxX && b.minX < a.maxX && a.minY < b.maxY && b.minY < a.maxY
+}
+
 export interface Scene {
   widthMm: number
   heightMm: number

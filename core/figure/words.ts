@@ -1,7 +1,7 @@
 /** Words of figures: titles that say themselves, axis names, numbers with true minus signs and thin spaces. */
 import type { FigureRecipe, LengthUnit, PlaneAxes, ProjectionName } from './recipe.ts'
 
-const THIN_SPACE = ' '
+const THIN_SPACE = '\u2009'
 
 /** IAU 2012 resolution B2 (au) and IAU definition of the parsec; Julian light-year of 365.25 days: 1 Mpc in million light-years. */
 export const MLY_PER_MPC = 3.261563777
