@@ -13,6 +13,7 @@ function page(load: () => Promise<{ default: ComponentType }>): RouteObject['laz
 const pages: RouteObject[] = [
   { index: true, lazy: page(() => import('./features/home/home-page.tsx')) },
   { path: 'galaxies', lazy: page(() => import('./features/catalogue/galaxies-page.tsx')) },
+  { path: 'galaxies/:slug', lazy: page(() => import('./features/galaxy/galaxy-page.tsx')) },
   { path: 'hosts', lazy: page(() => import('./features/hosts/hosts-page.tsx')) },
   { path: 'hosts/:slug', lazy: page(() => import('./features/hosts/host-page.tsx')) },
   { path: 'submissions', lazy: page(() => import('./features/submissions/submissions-page.tsx')) },

@@ -18,7 +18,10 @@ const ERRORS: Readonly<Record<string, { lo: string; hi: string } | { error: stri
   v_hel: { error: 'v_hel_err' },
 }
 
-const WIDTHS: Readonly<Record<string, number>> = { name: 190, class: 165, distance: 158, host_sep: 158, dm: 158, v_hel: 150, distance_method: 165, morphology: 110, status: 130, updated_at: 120 }
+const WIDTHS: Readonly<Record<string, number>> = {
+  name: 184, class: 156, distance: 136, host_sep: 140, dm: 136, v_hel: 140, distance_method: 160, morphology: 100, status: 124, updated_at: 116,
+  host: 128, main_disturber: 128, host_relation: 96, host_probability: 76, tidal_index: 84, abs_v: 92, abs_b: 92, abs_k: 92, v_lg: 110, n_measurements: 84,
+}
 /** Decimals in the table where the registry keeps more than the eye wants beside an error. */
 const DECIMALS: Readonly<Record<string, number>> = { distance: 2, ra: 4, dec: 4 }
 

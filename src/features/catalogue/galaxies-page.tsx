@@ -76,7 +76,7 @@ export default function GalaxiesPage() {
         }
       />
       <FilterErrors errors={errors} onDrop={drop} />
-      <div className="grid gap-6 lg:grid-cols-[17rem_minmax(0,1fr)]">
+      {usable && <div className="grid gap-6 lg:grid-cols-[17rem_minmax(0,1fr)]">
         <aside aria-label="Filters" className="hidden lg:block">
           <FacetPanel facets={facets.data} filter={filter} onChange={change} />
         </aside>
@@ -88,12 +88,12 @@ export default function GalaxiesPage() {
             <DataTable
               label="Galaxies"
               columns={tableColumns}
-              rows={usable ? rows : []}
+              rows={rows}
               rowKey={(row) => String(row.slug)}
               sort={sort ? { key: sort.column, direction: sort.descending ? 'descending' : 'ascending' } : null}
               onSortChange={({ key, direction }) => change({ ...filter, sort: key === 'name' && direction === 'ascending' ? [] : [{ column: key, descending: direction === 'descending' }] })}
               onRowAction={(row) => void navigate(withQuery(paths.galaxy(String(row.slug)), { at: filter.at }))}
-              isLoading={usable && list.isPending}
+              isLoading={list.isPending}
               onReachEnd={loadMore}
               countText={countWords(rows.length, total)}
               maxHeight="max(24rem, calc(100dvh - 19rem))"
@@ -109,11 +109,11 @@ export default function GalaxiesPage() {
                   <IconButton label="Copy the link" icon={<Link2 size={16} aria-hidden />} onPress={copyLink} />
                 </>
               }
-              empty={usable ? <NoGalaxies filter={filter} labels={labels} onChange={change} /> : undefined}
+              empty={<NoGalaxies filter={filter} labels={labels} onChange={change} />}
             />
           )}
         </div>
-      </div>
+      </div>}
       <Drawer
         title="Filters"
         isOpen={isDrawerOpen}

@@ -1,0 +1,8 @@
+import type { ChangeAction } from '../../../core/schema/changes.ts'
+import type { GalaxyAnswer } from '../../../core/schema/catalogue.ts'
+import { paths, withQuery } from '../../paths.ts'
+
+/** Where a change to this galaxy is begun. @param measurement - number of the measurement that it is about */
+export function changeAddress(galaxy: Pick<GalaxyAnswer, 'slug' | 'designation'>, add: ChangeAction, measurement?: number): string {
+  return withQuery(paths.newSubmission, { add, galaxy: galaxy.slug, name: galaxy.designation, measurement })
+}
