@@ -40,7 +40,7 @@ export default function NewSubmissionPage() {
     create.mutate(parsed.data, {
       onSuccess: (submission) => {
         keep(null)
-        void navigate(withQuery(paths.submission(submission.id), { add: search.get('add') ?? 'measurement.add', galaxy: search.get('galaxy'), name: search.get('name') }), { replace: true })
+        void navigate(withQuery(paths.submission(submission.id), { add: search.get('add') ?? 'measurement.add', galaxy: search.get('galaxy'), name: search.get('name'), measurement: search.get('measurement') }), { replace: true })
       },
     })
   }
