@@ -45,6 +45,8 @@ export interface RouteDefinition<Params, Query, Body> {
   params?: ZodType<Params>
   /** Of the parsed query string; without a schema the handler reads `searchParams(request)`. */
   query?: ZodType<Query>
+  /** The query is in the filter language (core/filters), which the handler reads itself. */
+  filtered?: boolean
   body?: ZodType<Body>
   /** One file under this field name, multipart; the handler reads `context.request.file`. */
   upload?: { field: string; maxBytes: number }

@@ -30,7 +30,7 @@ type Context = RouteContext<{ format: Format }, Record<string, never>, undefined
 
 export const exportRoutes: Route[] = [
   route({
-    method: 'get', path: '/api/export.:format', summary: 'The catalogue under a filter as a file: csv or vot (VOTable), all rows', permission: 'catalogue.read', limit: 'export',
+    method: 'get', path: '/api/export.:format', summary: 'The catalogue under a filter as a file: csv or vot (VOTable), all rows', permission: 'catalogue.read', limit: 'export', filtered: true,
     params: z.object({ format: z.enum(FORMATS) }),
     handle: async (context: Context) => {
       // A file is the whole answer: what belongs to pages of a list says nothing here.

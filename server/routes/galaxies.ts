@@ -26,7 +26,7 @@ const resolveQuery = z.strictObject({
 
 export const galaxyRoutes: Route[] = [
   route({
-    method: 'get', path: '/api/galaxies', summary: 'Rows of the catalogue under a filter, page by page', permission: 'catalogue.read', answer: galaxyListSchema,
+    method: 'get', path: '/api/galaxies', summary: 'Rows of the catalogue under a filter, page by page', permission: 'catalogue.read', filtered: true, answer: galaxyListSchema,
     handle: async (context) => {
       const filter = readFilter(context.request)
       const revision = await readRevision(context.knex, context.reader, filter.at)
@@ -34,7 +34,7 @@ export const galaxyRoutes: Route[] = [
     },
   }),
   route({
-    method: 'get', path: '/api/galaxies/facets', summary: 'Counts and histograms under a filter, each facet without its own condition', permission: 'catalogue.read',
+    method: 'get', path: '/api/galaxies/facets', summary: 'Counts and histograms under a filter, each facet without its own condition', permission: 'catalogue.read', filtered: true,
     answer: facetsSchema,
     handle: async (context) => {
       const filter = readFilter(context.request)
@@ -43,7 +43,7 @@ export const galaxyRoutes: Route[] = [
     },
   }),
   route({
-    method: 'get', path: '/api/galaxies/points', summary: 'All galaxies under a filter, column by column, for maps', permission: 'catalogue.read', answer: pointsSchema,
+    method: 'get', path: '/api/galaxies/points', summary: 'All galaxies under a filter, column by column, for maps', permission: 'catalogue.read', filtered: true, answer: pointsSchema,
     handle: async (context) => {
       const filter = readFilter(context.request)
       const revision = await readRevision(context.knex, context.reader, filter.at)
