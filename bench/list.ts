@@ -1,6 +1,6 @@
 /**
  * The catalogue list at 100,000 galaxies and 1,000,000 measurements, against a bare pg + Express route that runs the same SQL and returns the
- * same bytes; both in processes of their own, asked in turns. Then the time of filter + sort + page questions of all kinds.
+ * same bytes; both in processes of their own, asked in many short turns, so that whatever else the machine does falls on both. Then the time of filter + sort + page questions of all kinds.
  */
 import { spawn, type ChildProcess } from 'node:child_process'
 import { join } from 'node:path'
@@ -8,26 +8,27 @@ import { createInterface } from 'node:readline'
 import type { Knex } from 'knex'
 import { openDatabase } from '../server/database.ts'
 import { migrateToLatest } from '../server/maintenance/migrate.ts'
+import { generateCatalogue } from './catalogue/generate.ts'
 import { askList } from './list/ask-list.ts'
 import type { BareQuestion } from './list/bare-server.ts'
-import { fillCatalogue } from './list/fill.ts'
 import { ensureWrk, load } from './list/load.ts'
 
 const GALAXIES = Number(process.env.BENCH_GALAXIES ?? 100_000)
 const BAR_SHARE = 0.6
 const BAR_P95_MS = 50
-const ROUNDS = Number(process.env.BENCH_ROUNDS ?? 5)
-const SECONDS = Number(process.env.BENCH_SECONDS ?? 4)
+const ROUNDS = Number(process.env.BENCH_ROUNDS ?? 15)
+const SECONDS = Number(process.env.BENCH_SECONDS ?? 1)
 
 /** What the table page asks; the first is the one that the bar is about. */
 const TABLE_COLUMNS = 'columns=name,class,distance,distance_method,abs_v,abs_b,host,host_relation,host_sep,host_probability,tidal_index,v_lg,n_measurements'
 const COMPARED = [`${TABLE_COLUMNS}&limit=50`, `${TABLE_COLUMNS}&limit=50&sort=-distance`, `class=dwarf-irregular&abs_v=..-10&sort=abs_v&limit=100`]
 
-const TIMED = [
+/** @param host - identifier of a galaxy with satellites */
+const TIMED = (host: string): string[] => [
   'sort=name', 'sort=-name', 'sort=distance', 'sort=-distance', 'sort=abs_v', 'sort=-abs_v', 'sort=host_sep', 'sort=-metallicity', 'sort=ra', 'sort=class,-distance',
-  'class=dwarf-irregular', 'class=ultra-faint&sort=-abs_v', 'distance=1..2&sort=abs_v', 'distance=..0.7&sort=-v_lg', 'abs_v=..-20&sort=distance', 'host=gal-11&sort=host_sep',
-  'host=!gal-11&sort=tidal_index', 'has=metallicity&sort=-metallicity', 'lacks=v_hel&sort=distance', 'glat=!-10..10&sort=abs_b', 'q=gal%20123', 'q=cata%2077&sort=distance',
-  'cone=120,30,5&sort=distance', 'cone=10,-60,0.5', 'within=gal-5,800&sort=abs_v', 'log_mhi=8..&metallicity=-1..&sort=-log_mstar', 'updated_at=2026-01-01..&sort=-updated_at',
+  'class=dwarf-irregular', 'q=bench&sort=-distance', 'class=ultra-faint&sort=-abs_v', 'distance=1..2&sort=abs_v', 'distance=..0.7&sort=-v_lg', 'abs_v=..-20&sort=distance', `host=${host}&sort=host_sep`,
+  `host=!${host}&sort=tidal_index`, 'has=metallicity&sort=-metallicity', 'lacks=v_hel&sort=distance', 'glat=!-10..10&sort=abs_b', 'q=bench%20123', 'q=bch%20777&sort=distance',
+  'cone=120,30,5&sort=distance', 'cone=10,-60,0.5', `within=${host},800&sort=abs_v`, 'log_mhi=8..&metallicity=-1..&sort=-log_mstar', 'updated_at=2026-01-01..&sort=-updated_at',
 ]
 
 async function start(program: string, env: Record<string, string>): Promise<{ child: ChildProcess; base: string }> {
@@ -64,13 +65,29 @@ function percentile(sorted: readonly number[], share: number): number {
 
 const say = (line: string): void => void process.stdout.write(`${line}\n`)
 
+/** The invented catalogue, released; a database that holds one already is left as it is. */
+async function fill(knex: Knex): Promise<void> {
+  const { rows } = await knex.raw<{ rows: { n: number }[] }>('SELECT count(*)::int AS n FROM galaxies')
+  if (rows[0]?.n !== GALAXIES) {
+    const made = await generateCatalogue(knex, { galaxies: GALAXIES, log: say })
+    await knex.raw("INSERT INTO releases (label, revision, title) SELECT 'bench', max(number), 'Bench' FROM revisions")
+    say(`${made.galaxies} galaxies, ${made.measurements} measurements`)
+  }
+  await knex.raw('VACUUM ANALYZE')
+}
+
+async function largestHost(knex: Knex): Promise<string> {
+  const { rows } = await knex.raw<{ rows: { host: string }[] }>('SELECT host FROM catalogue_rows WHERE host IS NOT NULL GROUP BY host ORDER BY count(*) DESC, host LIMIT 1')
+  return rows[0]?.host ?? 'nobody'
+}
+
 async function main(): Promise<boolean> {
   ensureWrk()
   const databaseUrl = process.env.DATABASE_URL ?? ''
   const upkeep = openDatabase({ databaseUrl, purpose: 'upkeep', connections: 2 })
   await migrateToLatest(upkeep)
-  say(`filling: ${GALAXIES} galaxies, ${GALAXIES * 10} measurements, ${GALAXIES * 3} names`)
-  await fillCatalogue(upkeep, { galaxies: GALAXIES, measurementsEach: 10, namesEach: 3 })
+  await fill(upkeep)
+  const timed = TIMED(await largestHost(upkeep))
   const questions: BareQuestion[] = []
   for (const query of COMPARED) questions.push(await recorded(upkeep, () => askList(upkeep, query)))
   await upkeep.destroy()
@@ -78,7 +95,7 @@ async function main(): Promise<boolean> {
   const bare = await start('bare-server.ts', { DATABASE_URL: databaseUrl, BARE: JSON.stringify(questions) })
   try {
     const share = await compare(app.base, bare.base)
-    const slowest = await timeAll(app.base)
+    const slowest = await timeAll(app.base, timed)
     return share >= BAR_SHARE && slowest <= BAR_P95_MS
   } finally {
     app.child.kill()
@@ -110,10 +127,10 @@ async function compare(app: string, bare: string): Promise<number> {
 }
 
 /** Every question on its first page and one further on, several times, one client. @returns the 95th percentile of all, ms */
-async function timeAll(app: string): Promise<number> {
+async function timeAll(app: string, questions: readonly string[]): Promise<number> {
   const times: number[] = []
   const slow: { query: string; ms: number }[] = []
-  for (const query of TIMED) {
+  for (const query of questions) {
     const own: number[] = []
     for (let round = 0; round < 4; round++) {
       const begun = performance.now()
