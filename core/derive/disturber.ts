@@ -17,12 +17,16 @@ export interface Disturbers {
 
 /** M★ / d³ of galaxy j at galaxy i, Msun/Mpc³; its logarithm plus the constant is the term of the tidal index. */
 export function pull(n: Neighbourhood, j: number, i: number): number {
-  return at(n.mass, j) / separationOf(n, i, j) ** 3
+  const dx = at(n.x, j) - at(n.x, i)
+  const dy = at(n.y, j) - at(n.y, i)
+  const dz = at(n.z, j) - at(n.z, i)
+  return pullAcross(at(n.mass, j), dx * dx + dy * dy + dz * dz)
 }
 
-/** 3-D separation of two galaxies by index, Mpc. */
-export function separationOf(n: Neighbourhood, i: number, j: number): number {
-  return Math.max(CLOSEST_MPC, Math.hypot(at(n.x, i) - at(n.x, j), at(n.y, i) - at(n.y, j), at(n.z, i) - at(n.z, j)))
+/** The same from the mass, Msun, and the square of the separation, Mpc². */
+export function pullAcross(mass: number, separationSquared: number): number {
+  const d = Math.max(CLOSEST_MPC, Math.sqrt(separationSquared))
+  return mass / (d * d * d)
 }
 
 /**
@@ -30,9 +34,12 @@ export function separationOf(n: Neighbourhood, i: number, j: number): number {
  * for more mass makes hosts a forest, since mass rises along every chain. Equal masses, possible with a ratio of 1, fall by id.
  */
 export function mayHost(n: Neighbourhood, j: number, i: number, massRatio: number): boolean {
-  const mj = at(n.mass, j)
-  const mi = at(n.mass, i)
-  return mj > 0 && mj >= massRatio * mi && (mj > mi || at(n.ids, j) < at(n.ids, i))
+  return mayOutweigh(at(n.mass, j), at(n.ids, j), at(n.mass, i), at(n.ids, i), massRatio)
+}
+
+/** The same from masses and ids. */
+export function mayOutweigh(massJ: number, idJ: number, massI: number, idI: number, massRatio: number): boolean {
+  return massJ > 0 && massJ >= massRatio * massI && (massJ > massI || idJ < idI)
 }
 
 /**

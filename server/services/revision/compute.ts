@@ -7,6 +7,7 @@ import type { Scale } from '../../../core/adoption/adopted.ts'
 import type { CatalogueRow } from '../../../core/columns.ts'
 import { affectedBy } from '../../../core/derive/affected.ts'
 import { neighbourFrom, withChanges, type Neighbour, type Neighbourhood } from '../../../core/derive/neighbourhood.ts'
+import { placeIn } from '../../../core/derive/places.ts'
 import type { OwnColumns } from '../../../core/derive/own.ts'
 import { relationOf, relationsOf, relationWord, type Relation } from '../../../core/derive/relation.ts'
 import { adoptGalaxies } from './adopt-galaxies.ts'
@@ -44,7 +45,7 @@ const MANY = 200
 async function place(trx: Knex, own: ReadonlyMap<number, OwnColumns>, before: Surroundings, scale: Scale): Promise<PlannedRow[]> {
   const moved = movedNeighbours(own, before.neighbourhood)
   const after = withChanges(before.neighbourhood, moved)
-  const affected = affectedBy(before.neighbourhood, after, new Set(moved.keys()), (id) => before.places.get(id), scale.policy.host.massRatio)
+  const affected = affectedBy(before.neighbourhood, before.places, after, new Set(moved.keys()), scale.policy.host.massRatio)
   const asked = new Set([...affected, ...own.keys()])
   const relations = asked.size < MANY ? new Map([...asked].map((id) => [id, relationOf(after, id, scale.policy)])) : relationsOf(after, asked, scale.policy)
   const gains = satelliteGains(relations, before)
@@ -55,7 +56,7 @@ async function place(trx: Knex, own: ReadonlyMap<number, OwnColumns>, before: Su
     const stored = standing.get(id)
     const columns = own.get(id) ?? stored
     if (!columns) return []
-    const where = relations.get(id) ?? before.places.get(id)
+    const where = relations.get(id) ?? placeIn(before.neighbourhood, before.places, id)
     const after: CatalogueRow = { ...columns, ...(relations.get(id)?.columns ?? {}), host_relation: relationWord(where?.isSatellite ?? false, satellitesOf(id) > 0) }
     const planned = { galaxyId: id, before: stored ?? null, after, mainDisturber: where?.mainDisturber ?? null, indexDisturber: where?.indexDisturber ?? null }
     return sameRow(planned) ? [] : [planned]
@@ -80,10 +81,10 @@ function sameNeighbour(a: Neighbour | null, b: Neighbour | null): boolean {
 }
 
 /** How many satellites each host gains, those included that gain as many as they lose. */
-function satelliteGains(relations: ReadonlyMap<number, Relation>, { places }: Surroundings): Map<number, number> {
+function satelliteGains(relations: ReadonlyMap<number, Relation>, { neighbourhood, places }: Surroundings): Map<number, number> {
   const gains = new Map<number, number>()
   for (const [id, relation] of relations) {
-    const was = places.get(id)
+    const was = placeIn(neighbourhood, places, id)
     const before = was?.isSatellite ? was.mainDisturber : null
     const now = relation.isSatellite ? relation.mainDisturber : null
     if (before === now) continue

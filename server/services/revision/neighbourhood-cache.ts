@@ -5,21 +5,19 @@
  */
 import type { Knex } from 'knex'
 import { neighbourFrom, neighbourhoodOf, withChanges, type Neighbour, type Neighbourhood, type Place } from '../../../core/derive/neighbourhood.ts'
+import { placeIn, placesAfter, placesOf, type Places } from '../../../core/derive/places.ts'
 import type { CatalogueRow } from '../../../core/columns.ts'
-import { LayeredMap } from './layered-map.ts'
 
 export interface Surroundings {
   revision: number
   neighbourhood: Neighbourhood
-  /** By galaxy id, of every galaxy that has a row. */
-  places: Pick<ReadonlyMap<number, Place>, 'get'>
+  places: Places
   /** How many satellites each galaxy has that has any, by its id. */
   satellites: ReadonlyMap<number, number>
 }
 
 interface Entry extends Surroundings {
   madeBy: string
-  places: LayeredMap<number, Place>
 }
 
 /** One entry a database; knex keeps one settings object for a pool and the transactions on it. */
@@ -67,17 +65,16 @@ async function makersOf(trx: Knex, revisions: readonly number[]): Promise<Map<nu
   return new Map(rows.map(({ number, ...maker }) => [number, maker]))
 }
 
-type Fresh = Omit<Entry, 'madeBy'>
-
-async function read(trx: Knex, revision: number): Promise<Fresh> {
+async function read(trx: Knex, revision: number): Promise<Surroundings> {
   const { rows } = (await trx.raw(`select ${COLUMNS} from catalogue_rows where rev_from <= ? and (rev_to is null or rev_to > ?)`, [revision, revision])) as { rows: PlaceRow[] }
-  const places = new Map(rows.map((row) => [row.galaxy, placeFrom(row)]))
+  const known = new Map(rows.map((row) => [row.galaxy, placeFrom(row)]))
   const satellites = new Map<number, number>()
-  for (const place of places.values()) count(satellites, place, 1)
-  return { revision, neighbourhood: neighbourhoodOf(rows.flatMap((row) => neighbourFrom(row.galaxy, row) ?? [])), places: new LayeredMap(places), satellites }
+  for (const place of known.values()) count(satellites, place, 1)
+  const neighbourhood = neighbourhoodOf(rows.flatMap((row) => neighbourFrom(row.galaxy, row) ?? []))
+  return { revision, neighbourhood, places: placesOf(neighbourhood, known), satellites }
 }
 
-async function follow(trx: Knex, known: Fresh, revision: number): Promise<Fresh> {
+async function follow(trx: Knex, known: Surroundings, revision: number): Promise<Surroundings> {
   const { rows } = (await trx.raw(
     `select ${COLUMNS} from catalogue_rows where rev_from > ? and rev_from <= ? and (rev_to is null or rev_to > ?)`,
     [known.revision, revision, revision],
@@ -85,16 +82,17 @@ async function follow(trx: Knex, known: Fresh, revision: number): Promise<Fresh>
   if (rows.length === 0) return { ...known, revision }
   const satellites = new Map(known.satellites)
   const changes = new Map<number, Neighbour | null>()
-  const places = rows.map((row): [number, Place] => [row.galaxy, placeFrom(row)])
+  const fresh = new Map(rows.map((row) => [row.galaxy, placeFrom(row)]))
   for (const row of rows) {
     const neighbour = neighbourFrom(row.galaxy, row)
     if (neighbour || known.neighbourhood.indexOf.has(row.galaxy)) changes.set(row.galaxy, neighbour)
   }
-  for (const [id, place] of places) {
-    count(satellites, known.places.get(id), -1)
+  for (const [id, place] of fresh) {
+    count(satellites, placeIn(known.neighbourhood, known.places, id), -1)
     count(satellites, place, 1)
   }
-  return { revision, neighbourhood: withChanges(known.neighbourhood, changes), places: known.places.with(places), satellites }
+  const neighbourhood = withChanges(known.neighbourhood, changes)
+  return { revision, neighbourhood, places: placesAfter(known.neighbourhood, known.places, neighbourhood, changes.keys(), fresh), satellites }
 }
 
 function count(satellites: Map<number, number>, place: Place | undefined, by: 1 | -1): void {
