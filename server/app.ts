@@ -67,7 +67,10 @@ function serveClient(app: Express, folder: string): void {
 
 function errorAnswer({ log }: Services): ErrorRequestHandler {
   return (error: unknown, request, response, _next) => {
-    if (!asAnswer(error)) log.error({ err: error, requestId: request.id }, 'a request failed')
+    const answer = asAnswer(error)
+    if (!answer) log.error({ err: error, requestId: request.id }, 'a request failed')
+    // An answer for whoever asked, a trouble for whoever keeps the server.
+    else if (answer !== error && answer.status >= 500) log.warn({ err: error, requestId: request.id }, answer.message)
     sendProblem(request, response, error)
   }
 }

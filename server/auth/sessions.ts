@@ -1,6 +1,5 @@
 /** Sessions in PostgreSQL, by cookie. A visitor has none: reading sets no cookie. */
 import { randomBytes } from 'node:crypto'
-import connectPgSimple from 'connect-pg-simple'
 import type { CookieOptions, RequestHandler } from 'express'
 import session from 'express-session'
 import passport from 'passport'
@@ -9,6 +8,7 @@ import pg from 'pg'
 import type { Config } from '../config.ts'
 import type { Services } from '../http/route.ts'
 import { personById, personWith, type Person } from './people.ts'
+import { sessionStore } from './session-store.ts'
 
 declare module 'express-session' {
   interface SessionData {
@@ -54,7 +54,6 @@ export interface SessionLayer {
 export function sessionLayer({ knex, config, log }: Services, now: () => number = Date.now): SessionLayer {
   const pool = new pg.Pool({ connectionString: config.databaseUrl, max: STORE_CONNECTIONS })
   pool.on('error', (error) => log.warn({ err: error }, 'a connection of the session store was lost'))
-  const Store = connectPgSimple(session)
   const cookieName = sessionCookieName(config)
   const auth = new passport.Passport()
   auth.use(new LocalStrategy({ usernameField: 'email' }, (email, password, done) => {
@@ -67,7 +66,7 @@ export function sessionLayer({ knex, config, log }: Services, now: () => number 
   const sessions = session({
     name: cookieName,
     secret: config.sessionSecret,
-    store: new Store({ pool, tableName: 'sessions', pruneSessionInterval: 15 * 60, errorLog: (...words: unknown[]) => log.warn({ words }, 'session store') }),
+    store: sessionStore(pool, log),
     genid: () => randomBytes(32).toString('base64url'),
     resave: false,
     saveUninitialized: false,

@@ -53,9 +53,12 @@ const CODES: Readonly<Record<string, () => HttpError>> = {
 }
 
 function fromDatabase(error: unknown): HttpError | null {
-  const { code, name } = (error ?? {}) as { code?: unknown; name?: unknown }
+  const { code, name, severity } = (error ?? {}) as { code?: unknown; name?: unknown; severity?: unknown }
   if (name === 'KnexTimeoutError') return away()
-  if (typeof code === 'string') return CODES[code]?.() ?? null
+  const known = typeof code === 'string' ? CODES[code]?.() : undefined
+  if (known) return known
+  // PostgreSQL ends a connection with it, for whatever reason.
+  if (severity === 'FATAL') return away()
   // pg has no code for a connection that ended under a query.
   return error instanceof Error && /^Connection terminated/.test(error.message) ? away() : null
 }

@@ -162,6 +162,15 @@ describe('the session', () => {
     ;(await client.get(PROTECTED)).problem(401)
   })
 
+  it('is not written anew for every reading', async () => {
+    const client = await server().as('curator')
+    await client.get(PROTECTED)
+    const version = async (): Promise<unknown> => (await server().knex.raw<{ rows: unknown[] }>('select xmin::text, sess::text, expire from sessions')).rows
+    const before = await version()
+    for (let i = 0; i < 5; i++) expect((await client.get(PROTECTED)).status).toBe(200)
+    expect(await version()).toEqual(before)
+  })
+
   it('ends after the longest time however busy it was, and leaves work as it is', async () => {
     const client = await server().as('curator')
     const made = await client.post('/api/submissions', { title: 'A draft' })
