@@ -75,12 +75,12 @@ function galaxyDescends(sort: readonly SortKey[]): boolean {
 }
 
 /**
- * ORDER BY of the sort over rows under an alias. With `firstPresent` the first column is known to have values, which lets an index give the
- * order backwards too (its missing values stand at the other end there).
+ * ORDER BY of the sort over rows under an alias. With `firstUniform` the first column has values in all rows or in none, which
+ * lets an index give the order backwards too (its missing values stand at the other end there).
  */
-export function orderBy(sort: readonly SortKey[], firstPresent: boolean): string {
+export function orderBy(sort: readonly SortKey[], firstUniform: boolean): string {
   const keys = sort.map((key, i) => {
-    const plain = NEVER_MISSING.has(key.column) || (i === 0 && firstPresent)
+    const plain = NEVER_MISSING.has(key.column) || (i === 0 && firstUniform)
     return `${identifier(key.column)} ${direction(key.descending)}${plain ? '' : ' NULLS LAST'}`
   })
   return [...keys, `galaxy ${direction(galaxyDescends(sort))}`].join(', ')

@@ -78,8 +78,8 @@ async function readStage(knex: Knex, request: PageRequest, stage: string | null)
 /** The SQL of one stage of a page. The limit stands in its text, so that a plan made once knows it. */
 function pageSql({ columns, sort, limit, cursor, where, revision }: PageRequest, stage: string | null): { sql: string; bindings: Knex.RawBinding[] } {
   const conditions = [where, ...(stage === null ? [] : [{ sql: stage, bindings: [] }]), ...(cursor ? [afterIn(sort, cursor, stage)] : [])]
-  const firstPresent = stage?.endsWith('IS NOT NULL') ?? false
-  const order = orderBy(sort, firstPresent)
+  // Within a stage the first column has values everywhere or nowhere, so where its missing ones stand is no question, and an index can give the order.
+  const order = orderBy(sort, stage !== null)
   const parts = partsAt(revision).map((part) => {
     const whole = all([part, ...conditions])
     return { sql: `(SELECT * FROM catalogue_rows WHERE ${whole.sql} ORDER BY ${order} LIMIT ${limit})`, bindings: whole.bindings }
