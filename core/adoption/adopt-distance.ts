@@ -1,6 +1,9 @@
 /**
  * The adopted distance modulus: every value on one scale, the best tier only, combined within each method and then across methods.
  *
+ * The systematic error of a method is the policy's: the one that authors state (errSys) is mostly that of the zero point which the scale replaces,
+ * so it is shown and does not enter.
+ *
  * Everything is combined in modulus, never in Mpc: an error common to all that is proportional to the distance would pull a least-squares
  * mean outside its own data (Peelle's puzzle; D'Agostini 1994, Nuclear Instruments and Methods A 346, 306).
  */
@@ -49,7 +52,9 @@ export function adoptDistance(measurements: readonly Measurement[], scale: Scale
   )
   const { statistical, systematic } = splitErrors(methods, across, scale)
   const weights = shares(methods, across)
-  const reasons = candidates.map((c): Reason => {
+  const reasons = measurements.map((m): Reason => {
+    const c = candidates.find((own) => own.measurement === m)
+    if (!c) return outsidePolicy(m)
     const weight = weights.get(c) ?? 0
     const residual = (c.scaled - across.mean) / c.error
     return {
@@ -63,6 +68,11 @@ export function adoptDistance(measurements: readonly Measurement[], scale: Scale
     nUsed: used.length, nAll: measurements.length, chi2: chiSquared(used, across.mean), dof: used.length - 1, scatter: largestScatter(methods, across),
     method: heaviest.method, sentence: distanceSentence(candidates, weights, override, scale), reasons, override: override?.reason ?? null,
   }
+}
+
+/** A method that the policy gives no tier and no errors cannot be weighed. */
+function outsidePolicy(m: Measurement): Reason {
+  return { measurementId: m.id, used: false, weight: 0, shift: 0, scaled: m.value, error: statedError(m), residual: null, tension: false, reason: 'the policy has no rule for its method', flags: [] }
 }
 
 function candidate(m: Measurement, all: readonly Measurement[], scale: Scale, override: Chosen | null): Candidate[] {

@@ -1,0 +1,200 @@
+import fc from 'fast-check'
+import { describe, expect, it } from 'vitest'
+import { adopt } from '../../../core/adoption/adopt.ts'
+import type { Scale } from '../../../core/adoption/adopted.ts'
+import type { Measurement } from '../../../core/catalogue/types.ts'
+import { METHOD_KEYS } from '../../../core/methods.ts'
+import { DEFAULT_ANCHORS } from '../../../core/scale/anchors.ts'
+import { DEFAULT_POLICY } from '../../../core/scale/policy.ts'
+
+const SCALE: Scale = { anchors: DEFAULT_ANCHORS, policy: DEFAULT_POLICY }
+let nextId = 1
+
+function modulus(value: number, more: Partial<Measurement> = {}): Measurement {
+  const id = nextId++
+  return {
+    id, versionId: id, galaxyId: 1, quantity: 'distance_modulus', value, errPlus: 0.05, errMinus: 0.05, errSys: null, textValue: null, limitFlag: null, method: 'trgb',
+    anchor: 'trgb-absolute-i', anchorValueAssumed: -4.049, convention: null, published: null, sourceId: id, sourceLabel: `Author ${2000 + id}`, sourceYear: 2000 + id, locator: null,
+    note: null, excludedReason: null, supersedes: null, ...more,
+  }
+}
+
+const velocity = (value: number, error: number | null, more: Partial<Measurement> = {}): Measurement =>
+  modulus(value, { quantity: 'velocity', errPlus: error, errMinus: error, method: null, anchor: null, anchorValueAssumed: null, ...more })
+
+describe('one scale', () => {
+  it('moves a modulus by the difference of its anchor’s values', () => {
+    // McCommas et al. 2009: 27.78 on an LMC modulus of 18.41 is 27.847 on 18.477.
+    const found = adopt('distance_modulus', [modulus(27.78, { method: 'cepheids', anchor: 'lmc-modulus', anchorValueAssumed: 18.41 })], SCALE)
+    expect(found?.value).toBeCloseTo(27.847, 9)
+    expect(found?.reasons[0]).toMatchObject({ used: true, weight: 1 })
+    expect(found?.reasons[0]?.shift).toBeCloseTo(0.067, 9)
+  })
+
+  it('moves it the other way when the anchor is the luminosity of a candle', () => {
+    // μ = m − M: assumed −4.01, ours −4.049 is brighter, so the galaxy is farther.
+    const found = adopt('distance_modulus', [modulus(28, { anchorValueAssumed: -4.01 })], SCALE)
+    expect(found?.value).toBeCloseTo(28.039, 9)
+  })
+
+  it('takes a value without a stated anchor as published, with a larger error and a flag', () => {
+    const stated = modulus(28)
+    const silent = modulus(28.02, { anchor: null, anchorValueAssumed: null })
+    const found = adopt('distance_modulus', [stated, silent], SCALE)
+    const reason = found?.reasons.find((r) => r.measurementId === silent.id)
+    expect(reason?.flags).toContain('scale unknown')
+    expect(reason?.error).toBeCloseTo(Math.hypot(0.05, 0.05), 9)
+    expect(reason?.weight).toBeLessThan(0.5)
+  })
+})
+
+describe('the adopted distance', () => {
+  it('comes from the best tier; the lower ones are shown and not used', () => {
+    const found = adopt('distance_modulus', [modulus(27.79), modulus(27.75, { method: 'cepheids', anchor: 'lmc-modulus', anchorValueAssumed: 18.477 }), modulus(28.3, { method: 'tully-fisher', anchor: null, anchorValueAssumed: null, errPlus: 0.4, errMinus: 0.4 })], SCALE)
+    expect(found).toMatchObject({ nUsed: 2, nAll: 3 })
+    expect(found?.reasons.map((r) => r.reason)).toEqual(['used', 'used', 'lower tier'])
+    expect(found?.sentence).toContain('Weighted from 1 TRGB and 1 Cepheid values')
+    expect(found?.sentence).toContain('1 Tully–Fisher value of a lower tier is shown and not used.')
+  })
+
+  it('uses the lower tier when there is no better one', () => {
+    expect(adopt('distance_modulus', [modulus(28.3, { method: 'tully-fisher', anchor: null, anchorValueAssumed: null })], SCALE)).toMatchObject({ nUsed: 1, method: 'tully-fisher' })
+  })
+
+  it('leaves out what is excluded, superseded or a limit, and says so', () => {
+    const old = modulus(27.5)
+    const list = [old, modulus(27.8, { supersedes: old.id, sourceLabel: 'Harrow 2024' }), modulus(30, { excludedReason: 'wrong galaxy' }), modulus(27, { limitFlag: 'lower' })]
+    const found = adopt('distance_modulus', list, SCALE)
+    expect(found?.value).toBeCloseTo(27.8, 9)
+    expect(found?.reasons.map((r) => r.reason)).toEqual(['superseded by Harrow 2024', 'used', 'excluded: wrong galaxy', 'lower limit'])
+  })
+
+  it('lets a superseding measurement that is itself excluded supersede nothing', () => {
+    const old = modulus(27.5)
+    const found = adopt('distance_modulus', [old, modulus(27.8, { supersedes: old.id, excludedReason: 'blended' })], SCALE)
+    expect(found?.value).toBeCloseTo(27.5, 9)
+  })
+
+  it('flags tension and drops nothing for it', () => {
+    const found = adopt('distance_modulus', [modulus(27.8, { errPlus: 0.02, errMinus: 0.02 }), modulus(27.81, { errPlus: 0.02, errMinus: 0.02 }), modulus(28.4, { errPlus: 0.05, errMinus: 0.05 })], SCALE)
+    expect(found?.nUsed).toBe(3)
+    expect(found?.reasons.some((r) => r.tension && r.used)).toBe(true)
+    expect(found?.sentence).toContain('In tension')
+    expect(found?.scatter).toBeGreaterThan(0.1)
+  })
+
+  it('gives a missing error the policy’s, and says so', () => {
+    const found = adopt('distance_modulus', [modulus(27.8, { errPlus: null, errMinus: null })], SCALE)
+    expect(found?.errPlus).toBeCloseTo(0.1, 9)
+    expect(found?.reasons[0]?.flags).toEqual(['error assumed'])
+  })
+
+  it('keeps the systematic part apart: more values by one method do not shrink it', () => {
+    const one = adopt('distance_modulus', [modulus(27.8)], SCALE)
+    const many = adopt('distance_modulus', Array.from({ length: 9 }, () => modulus(27.8)), SCALE)
+    expect(many?.errPlus).toBeCloseTo((one?.errPlus ?? 0) / 3, 9)
+    expect(many?.errSys).toBeCloseTo(one?.errSys ?? 0, 9)
+    // TRGB: 0.05 of the method, 0.038 of the anchor that it hangs on.
+    expect(one?.errSys).toBeCloseTo(Math.hypot(0.05, 0.038), 9)
+  })
+
+  it('follows an override, which must give its reason', () => {
+    const chosen = modulus(28.3, { method: 'brightest-stars', anchor: null, anchorValueAssumed: null })
+    const other = modulus(27.8)
+    const found = adopt('distance_modulus', [other, chosen], SCALE, { measurements: [chosen.id], reason: 'the tip is contaminated' })
+    expect(found?.value).toBeCloseTo(28.3, 9)
+    expect(found?.override).toBe('the tip is contaminated')
+    expect(found?.reasons.find((r) => r.measurementId === other.id)).toMatchObject({ used: false, weight: 0, reason: 'set aside by an override: the tip is contaminated' })
+  })
+
+  it('is null when nothing can be used', () => {
+    expect(adopt('distance_modulus', [], SCALE)).toBeNull()
+    expect(adopt('distance_modulus', [modulus(27.8, { excludedReason: 'blended' })], SCALE)).toBeNull()
+  })
+
+  it('is among its data, with weights that sum to 1, whatever the order', () => {
+    const any = fc.record({ value: fc.double({ min: 24, max: 30, noNaN: true }), error: fc.option(fc.double({ min: 0.01, max: 0.6, noNaN: true }), { nil: null }), method: fc.constantFrom(...METHOD_KEYS) })
+    fc.assert(
+      fc.property(fc.array(any, { minLength: 1, maxLength: 10 }), (drawn) => {
+        const list = drawn.map((d) => modulus(d.value, { errPlus: d.error, errMinus: d.error, method: d.method, anchor: null, anchorValueAssumed: null }))
+        const found = adopt('distance_modulus', list, SCALE)
+        const back = adopt('distance_modulus', [...list].reverse(), SCALE)
+        expect(back).toEqual(found)
+        const used = found?.reasons.filter((r) => r.used) ?? []
+        expect(used.reduce((sum, r) => sum + r.weight, 0)).toBeCloseTo(1, 9)
+        const scaled = used.map((r) => r.scaled ?? NaN)
+        expect(found?.value).toBeGreaterThanOrEqual(Math.min(...scaled) - 1e-9)
+        expect(found?.value).toBeLessThanOrEqual(Math.max(...scaled) + 1e-9)
+        expect(found?.errPlus).toBeGreaterThan(0)
+        expect(found?.errSys).toBeGreaterThan(0)
+      }),
+    )
+  })
+})
+
+describe('other quantities', () => {
+  it('velocities: the weighted mean, its error enlarged where they scatter', () => {
+    const found = adopt('velocity', [velocity(-300, 2), velocity(-296, 2)], SCALE)
+    expect(found?.value).toBeCloseTo(-298, 9)
+    expect(found?.errPlus).toBeCloseTo(Math.SQRT2 * Math.SQRT2, 6)
+  })
+
+  it('magnitudes: the smallest stated error, then the newest', () => {
+    const old = velocity(12.3, 0.05, { quantity: 'v_mag', sourceYear: 1999 })
+    const precise = velocity(12.1, 0.02, { quantity: 'v_mag', sourceYear: 2001 })
+    const silent = velocity(11.9, null, { quantity: 'v_mag', sourceYear: 2020 })
+    expect(adopt('v_mag', [old, precise, silent], SCALE)?.value).toBe(12.1)
+    expect(adopt('v_mag', [old, silent], SCALE)?.value).toBe(12.3)
+    expect(adopt('v_mag', [silent], SCALE)?.value).toBe(11.9)
+  })
+
+  it('morphology: the newest', () => {
+    const type = (textValue: string, sourceYear: number): Measurement => velocity(0, null, { quantity: 'morphology', value: null, textValue, sourceYear })
+    const found = adopt('morphology', [type('dSph', 1995), type('dIrr/dSph', 2015)], SCALE)
+    expect(found).toMatchObject({ textValue: 'dIrr/dSph', value: null, nUsed: 1, nAll: 2 })
+  })
+})
+
+describe('what the policy does not speak of', () => {
+  it('is shown with that as the reason', () => {
+    const scale = { anchors: DEFAULT_ANCHORS, policy: { ...DEFAULT_POLICY, methods: DEFAULT_POLICY.methods.filter((m) => m.method !== 'jagb') } }
+    const odd = modulus(27.9, { method: 'jagb', anchor: null, anchorValueAssumed: null })
+    const found = adopt('distance_modulus', [modulus(27.8), odd], scale)
+    expect(found?.reasons.find((r) => r.measurementId === odd.id)).toMatchObject({ used: false, weight: 0, reason: 'the policy has no rule for its method' })
+    expect(found?.value).toBeCloseTo(27.8, 9)
+    expect(adopt('distance_modulus', [odd], scale)).toBeNull()
+  })
+})
+
+describe('what all distances share', () => {
+  it('a common shift moves the adopted value by as much, and nothing else', () => {
+    const values = fc.array(fc.tuple(fc.double({ min: 26, max: 28, noNaN: true }), fc.double({ min: 0.02, max: 0.3, noNaN: true }), fc.constantFrom('trgb', 'cepheids', 'miras')), { minLength: 1, maxLength: 8 })
+    fc.assert(
+      fc.property(values, fc.double({ min: -1, max: 1, noNaN: true }), (list, shift) => {
+        const at = (by: number) => adopt('distance_modulus', list.map(([v, e, method], i) => modulus(v + by, { id: i + 1, errPlus: e, errMinus: e, method: method as Measurement['method'], anchor: null, anchorValueAssumed: null })), SCALE)
+        const [a, b] = [at(0), at(shift)]
+        expect((b?.value ?? NaN) - (a?.value ?? NaN)).toBeCloseTo(shift, 6)
+        expect(b?.errPlus).toBeCloseTo(a?.errPlus ?? NaN, 6)
+        expect(b?.errSys).toBeCloseTo(a?.errSys ?? NaN, 6)
+      }),
+    )
+  })
+
+  it('copies of a measurement never bring the error below that of the method and its anchor', () => {
+    fc.assert(
+      fc.property(fc.integer({ min: 1, max: 60 }), fc.double({ min: 0.01, max: 0.3, noNaN: true }), (n, error) => {
+        const found = adopt('distance_modulus', Array.from({ length: n }, () => modulus(27.8, { errPlus: error, errMinus: error })), SCALE)
+        expect(Math.hypot(found?.errPlus ?? NaN, found?.errSys ?? NaN)).toBeGreaterThan(Math.hypot(0.05, 0.038))
+      }),
+    )
+  })
+
+  it('does not fall below both of two values that share a proportional error (Peelle’s puzzle)', () => {
+    // 1.5 and 1.0 with 10 % of their own and 20 % in common: least squares with the covariance of the values gives 0.88, outside both.
+    const own = (5 / Math.LN10) * 0.1
+    const mu = (d: number) => modulus(5 * Math.log10(d) + 25, { errPlus: own, errMinus: own })
+    const value = adopt('distance_modulus', [mu(1.5), mu(1)], SCALE)?.value ?? NaN
+    expect(value).toBeGreaterThan(25)
+    expect(value).toBeLessThan(5 * Math.log10(1.5) + 25)
+  })
+})
