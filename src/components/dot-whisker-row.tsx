@@ -46,7 +46,7 @@ export function DotWhiskerRow({ row, top, height, width, isNarrow, scale, labelW
         {cut(row.label, width * 0.55)}
         {row.subLabel && (
           <tspan dx={8} fontSize={13} className="fill-muted">
-            {row.subLabel}
+            {cut(row.subLabel, width - LETTER * (Math.min(row.label.length, (width * 0.55) / LETTER) + (row.weight?.length ?? 0) + 3))}
           </tspan>
         )}
       </text>

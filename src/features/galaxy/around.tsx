@@ -1,4 +1,6 @@
+import { classLabel, GALAXY_CLASSES } from '../../../core/classes.ts'
 import { columnOf } from '../../../core/columns.ts'
+import { METHODS } from '../../../core/methods.ts'
 import type { GalaxyAnswer, History } from '../../../core/schema/catalogue.ts'
 import { useHistory, useNeighbours } from '../../api/galaxies.ts'
 import { ClassMark } from '../../components/class-mark.tsx'
@@ -99,5 +101,6 @@ function shown(column: string, value: string | number | null): string {
   if (value === null) return MISSING
   const found = columnOf(column)
   if (typeof value === 'number') return `${formatNumber(value, found?.decimals ?? 2)}${found?.unit ? THIN + found.unit : ''}`
-  return value
+  if (column === 'class') return classLabel(GALAXY_CLASSES.find((one) => one === value) ?? 'unknown')
+  return METHODS.find((method) => column === 'distance_method' && method.key === value)?.label ?? value
 }

@@ -106,7 +106,7 @@ function Galaxy({ galaxy, at }: { galaxy: GalaxyAnswer; at: string | null }) {
           <SectionHeading>Measurements</SectionHeading>
           {held ? <MeasurementTable galaxy={galaxy} measurements={held} at={at} canWrite={canWrite} /> : <Skeleton height={320} />}
         </div>
-        <div className="grid min-w-0 gap-5 md:grid-cols-3 lg:col-span-2">
+        <div className="grid min-w-0 items-start gap-5 md:grid-cols-3 lg:col-span-2">
           <Names galaxy={galaxy} />
           <Neighbours slug={galaxy.slug} at={at} />
           <GalaxyHistory slug={galaxy.slug} mayReadAny={mayReadAny} />

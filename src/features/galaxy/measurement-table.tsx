@@ -19,6 +19,8 @@ export interface MeasurementTableProps {
   canWrite: boolean
 }
 
+const LEFT_OUT_WHEN_EMPTY: readonly string[] = ['anchor', 'note']
+
 /** Every measurement held, of all quantities, as published. */
 export function MeasurementTable({ galaxy, measurements, at, canWrite }: MeasurementTableProps) {
   const scale = useScale(at)
@@ -26,7 +28,7 @@ export function MeasurementTable({ galaxy, measurements, at, canWrite }: Measure
   return (
     <DataTable
       label={`Measurements of ${galaxy.designation}`}
-      columns={columnsFor(galaxy, scale.data?.anchors ?? [], canWrite)}
+      columns={columnsFor(galaxy, scale.data?.anchors ?? [], canWrite).filter(({ key, text }) => !LEFT_OUT_WHEN_EMPTY.includes(key) || rows.some((m) => text(m) !== null))}
       rows={rows}
       rowKey={(m) => String(m.id)}
       countText={`${rows.length} measurements`}
@@ -45,7 +47,7 @@ function columnsFor(galaxy: GalaxyAnswer, anchors: ScaleAnswer['anchors'], canWr
     { key: 'anchor', header: 'Anchor assumed', text: (m) => anchorWords(m, anchors), width: 210, help: 'The reference value that the distance hangs on, as its authors took it' },
     { key: 'source', header: 'Source', text: (m) => m.source.label, sortable: true, width: 180, render: (m) => <Link look="quiet" to={paths.source(m.source.id)}>{m.source.label}</Link> },
     { key: 'locator', header: 'Where in it', text: (m) => m.locator, width: 110 },
-    { key: 'use', header: 'Use', text: (m) => useWords(m, reasons.get(m.id)), sortable: true, width: 220 },
+    { key: 'use', header: 'Use', text: (m) => wordsOfUse(m, reasons.get(m.id)), sortable: true, width: 220 },
     { key: 'note', header: 'Note', text: (m) => m.note, width: 180 },
     { key: 'revision', header: 'Revision', text: (m) => m.revision, decimals: 0, sortable: true, width: 90 },
   ]
@@ -77,7 +79,7 @@ function anchorWords(m: MeasurementAnswer, anchors: ScaleAnswer['anchors']): str
   return m.anchorValueAssumed === null ? `${label}, value not stated` : `${label} ${formatNumber(m.anchorValueAssumed, 3)}`
 }
 
-function useWords(m: MeasurementAnswer, reason: Reason | undefined): string {
+function wordsOfUse(m: MeasurementAnswer, reason: Reason | undefined): string {
   if (m.excludedReason !== null) return `excluded: ${m.excludedReason}`
   if (!reason) return 'not used'
   return reason.used ? `used, ${formatPercent(reason.weight)}` : reason.reason

@@ -2,9 +2,9 @@ import { useState } from 'react'
 import { classLabel, GALAXY_CLASSES } from '../../../core/classes.ts'
 import { chosenValues, choosing, type Filter } from '../../../core/filters/filter.ts'
 import type { Facets } from '../../../core/schema/catalogue.ts'
-import { Button } from '../../components/button.tsx'
-import { Checkbox } from '../../components/checkbox.tsx'
-import { ClassMark } from '../../components/class-mark.tsx'
+import { Button } from '../button.tsx'
+import { Checkbox } from '../checkbox.tsx'
+import { ClassMark } from '../class-mark.tsx'
 import { formatCount } from '../../lib/format.ts'
 
 type Choice = Facets['choices'][string][number]

@@ -2,7 +2,7 @@ import { ChevronRight } from 'lucide-react'
 import type { ReactNode } from 'react'
 import type { Filter } from '../../../core/filters/filter.ts'
 import type { Facets } from '../../../core/schema/catalogue.ts'
-import { Skeleton } from '../../components/skeleton.tsx'
+import { Skeleton } from '../skeleton.tsx'
 import { ChoiceFacet } from './choice-facet.tsx'
 import { RangeFacet } from './range-facet.tsx'
 

@@ -2,7 +2,7 @@ import { useState } from 'react'
 import { columnOf } from '../../../core/columns.ts'
 import { chosenRange, ranging, type Filter } from '../../../core/filters/filter.ts'
 import type { Facets } from '../../../core/schema/catalogue.ts'
-import { RangeSlider } from '../../components/slider.tsx'
+import { RangeSlider } from '../slider.tsx'
 import { formatCounted, unitText } from '../../lib/format.ts'
 
 type Histogram = Facets['histograms'][string]
