@@ -2,6 +2,7 @@
 import { geoGraticule } from 'd3-geo'
 import type { Frame } from '../astro/frames.ts'
 import { wrap360 } from '../astro/units.ts'
+import type { Crowd } from './crowd.ts'
 import type { SkyMap } from './projection.ts'
 import type { SkyRecipe } from './recipe.ts'
 import { overlapping, type Box, type PathMark, type TextMark } from './scene.ts'
@@ -33,8 +34,8 @@ export function latitudeLabel(lat: number): string {
 /** Corners of the crossing with the equator where a label may stand; the first is taken unless another hides fewer marks. */
 const CORNERS: readonly (readonly [dx: 1 | -1, dy: 1 | -1])[] = [[1, 1], [-1, 1], [1, -1], [-1, -1]]
 
-/** @param page - no label may leave it @param crowd - how many marks lie in a rectangle */
-export function graticuleLabels(sky: SkyRecipe, map: SkyMap, style: FigureStyle, page: Box, crowd: (box: Box) => number): TextMark[] {
+/** @param page - no label may leave it */
+export function graticuleLabels(sky: SkyRecipe, map: SkyMap, style: FigureStyle, page: Box, crowd: Crowd): TextMark[] {
   const base = { kind: 'text' as const, face: 'sans' as const, size: style.tick, colour: style.colours.muted }
   const gap = style.tick * 0.3
   const halo = { colour: style.colours.sheet, width: style.halo }
@@ -53,7 +54,7 @@ export function graticuleLabels(sky: SkyRecipe, map: SkyMap, style: FigureStyle,
       anchor: dx > 0 ? 'start' : 'end',
       halo,
     }))
-    const crowds = choices.map((choice) => crowd(textBox(choice)))
+    const crowds = choices.map((choice) => crowd.within(textBox(choice)))
     const best = choices[crowds.indexOf(Math.min(...crowds))]
     if (best && !meridians.some((other) => overlapping(textBox(other), textBox(best)))) meridians.push(best)
   }

@@ -3,11 +3,15 @@
  * goes without. What lies in the way is kept in an R-tree.
  */
 import RBush from 'rbush'
+import type { Crowd } from './crowd.ts'
 import type { PlacedGalaxy } from './dots.ts'
 import type { FigureRecipe } from './recipe.ts'
 import type { Anchor, Box, TextMark } from './scene.ts'
 import type { FigureStyle } from './style.ts'
-import { CAP_HEIGHT, textBox } from './text-metrics.ts'
+import { boxOfWidth, CAP_HEIGHT, textWidth } from './text-metrics.ts'
+
+/** Names are set in italics, as names of waters are on charts. */
+const FACE = 'sans-italic'
 
 /** Where a name may stand about its mark, best first: x and y outward, and how it is set. */
 const POSITIONS: readonly (readonly [dx: number, dy: number, anchor: Anchor])[] = [
@@ -37,6 +41,7 @@ const CLEARANCE = 0.12
 
 export interface LabelRequest {
   galaxies: readonly PlacedGalaxy[]
+  crowd: Crowd
   /** What no name may touch, mm. */
   obstacles: readonly Box[]
   /** Whether a name may stand here at all. */
@@ -50,55 +55,55 @@ export function namingOrder(galaxies: readonly PlacedGalaxy[], hostsFirst: boole
 }
 
 /** The names that could be set, as marks. */
-export function placeLabels({ galaxies, obstacles, holds }: LabelRequest, recipe: FigureRecipe, style: FigureStyle): TextMark[] {
+export function placeLabels({ galaxies, crowd, obstacles, holds }: LabelRequest, recipe: FigureRecipe, style: FigureStyle): TextMark[] {
   if (recipe.labels.count === 0) return []
   const taken = new RBush<Box>()
   taken.load(obstacles.map((box) => ({ ...box })))
-  const dots = new RBush<Box & { id: number }>()
-  dots.load(galaxies.map(({ galaxy, x, y, size }) => ({ id: galaxy.id, minX: x - size / 2, minY: y - size / 2, maxX: x + size / 2, maxY: y + size / 2 })))
   const set: TextMark[] = []
   for (const placed of namingOrder(galaxies, recipe.labels.hosts)) {
     if (set.length >= recipe.labels.count) break
     const host = recipe.labels.hosts && placed.galaxy.relation === 'host'
-    let best: { mark: TextMark; box: Box } | null = null
+    const size = host ? style.hostLabel : style.label
+    const width = textWidth(placed.galaxy.name, FACE, size)
+    let best: { at: LabelPlace; box: Box } | null = null
     let least = host ? MOST_COVERED_HOST + 1 : MOST_COVERED + 1
     for (const [far, distance] of DISTANCES.entries()) {
       for (const [rank, position] of POSITIONS.entries()) {
         const penalty = rank * WORSE_POSITION + far * FARTHER
         if (penalty >= least) continue
-        const mark = labelMark(placed, position, distance, host, style)
-        const box = grown(textBox(mark), CLEARANCE * mark.size)
+        const at = labelPlace(placed, position, distance * size, size)
+        const box = grown(boxOfWidth(at, width, size), CLEARANCE * size)
         if (!holds(box) || taken.collides(box)) continue
-        const cost = penalty + dots.search(box).filter((dot) => dot.id !== placed.galaxy.id).length
+        const cost = penalty + crowd.within(box, placed.galaxy.id)
         if (cost < least) {
           least = cost
-          best = { mark, box }
+          best = { at, box }
         }
       }
     }
     if (best) {
-      set.push(best.mark)
+      set.push(labelMark(placed.galaxy.name, best.at, host, size, style))
       taken.insert(best.box)
     }
   }
   return set
 }
 
-function labelMark(placed: PlacedGalaxy, [dx, dy, anchor]: (typeof POSITIONS)[number], distance: number, host: boolean, style: FigureStyle): TextMark {
-  const size = host ? style.hostLabel : style.label
-  const reach = placed.size / 2 + distance * size
-  const middle = placed.y + dy * (reach + (anchor === 'middle' ? (CAP_HEIGHT * size) / 2 : 0))
-  return {
-    kind: 'text',
-    x: placed.x + dx * reach,
-    y: middle + (CAP_HEIGHT * size) / 2,
-    text: placed.galaxy.name,
-    face: 'sans-italic',
-    size,
-    anchor,
-    colour: host ? style.colours.ink : style.colours.muted,
-    halo: { colour: style.colours.sheet, width: style.halo },
-  }
+interface LabelPlace {
+  x: number
+  y: number
+  anchor: Anchor
+}
+
+/** @param away - from the edge of the mark, mm @param size - em, mm */
+function labelPlace({ x, y, size: markSize }: PlacedGalaxy, [dx, dy, anchor]: (typeof POSITIONS)[number], away: number, size: number): LabelPlace {
+  const reach = markSize / 2 + away
+  const middle = y + dy * (reach + (anchor === 'middle' ? (CAP_HEIGHT * size) / 2 : 0))
+  return { x: x + dx * reach, y: middle + (CAP_HEIGHT * size) / 2, anchor }
+}
+
+function labelMark(text: string, at: LabelPlace, host: boolean, size: number, style: FigureStyle): TextMark {
+  return { kind: 'text', ...at, text, face: FACE, size, colour: host ? style.colours.ink : style.colours.muted, halo: { colour: style.colours.sheet, width: style.halo } }
 }
 
 /** A rectangle with room around it. */

@@ -30,7 +30,8 @@ export interface Canvas2d {
 }
 
 const SANS = '"Source Sans 3 Variable", "Source Sans 3", sans-serif'
-const SERIF = '"Source Serif 4 Variable", "Source Serif 4", serif'
+// The files' own cut first (src/styles/figure-fonts.css): the pages' variable one is wider.
+const SERIF = '"Source Serif 4", "Source Serif 4 Variable", serif'
 
 /** Faces as the canvas names them, before and after the size; a page that draws must have loaded them first. */
 const FONTS: Readonly<Record<Face, readonly [before: string, family: string]>> = {

@@ -1,4 +1,5 @@
 /** What lies under the galaxies of a section: the zone of avoidance, rings of equal distance, the observer, a scale bar. */
+import type { Crowd } from './crowd.ts'
 import { cutCircle } from './cut.ts'
 import { decimalsOf, roundStep, type PlaneMap } from './plane-map.ts'
 import type { FigureRecipe } from './recipe.ts'
@@ -37,8 +38,8 @@ export interface Rings {
   labels: TextMark[]
 }
 
-/** @param crowd - how many marks lie in a rectangle @param taken - what no label may touch */
-export function ringMarks(map: PlaneMap, recipe: FigureRecipe, style: FigureStyle, crowd: (box: Box) => number, taken: readonly Box[]): Rings {
+/** @param taken - what no label may touch */
+export function ringMarks(map: PlaneMap, recipe: FigureRecipe, style: FigureStyle, crowd: Crowd, taken: readonly Box[]): Rings {
   const step = roundStep((map.radius * map.unitsPerMpc) / RINGS)
   const digits = decimalsOf(step)
   const first = Math.max(1, Math.ceil((nearest(map) * map.unitsPerMpc) / step))
@@ -65,7 +66,7 @@ export function ringMarks(map: PlaneMap, recipe: FigureRecipe, style: FigureStyl
       }))
       .filter((label) => {
         const box = textBox(label)
-        return map.holds(roomy(box, style)) && crowd(box) === 0 && !taken.some((other) => overlapping(other, box))
+        return map.holds(roomy(box, style)) && crowd.within(box) === 0 && !taken.some((other) => overlapping(other, box))
       })
     return { labels, cost: rank * 0.12 - labels.length }
   })

@@ -1,5 +1,5 @@
 /** A supergalactic section: galaxies of a cube seen along one of its axes, distances to scale. */
-import RBush from 'rbush'
+import { crowdOf } from './crowd.ts'
 import { dotMark, hitOf, inDrawingOrder, markSize, type PlacedGalaxy } from './dots.ts'
 import type { SceneOptions } from './furniture.ts'
 import type { FigureGalaxy } from './galaxy.ts'
@@ -47,13 +47,12 @@ export function planeScene(galaxies: readonly FigureGalaxy[], recipe: FigureReci
   const placed = inDrawingOrder(
     shown.map((galaxy): PlacedGalaxy => ({ galaxy, x: map.x(galaxy[map.across] ?? 0), y: map.y(galaxy[map.up] ?? 0), size: markSize(galaxy.absV, recipe.size, style) })),
   )
-  const tree = new RBush<Box>()
-  tree.load(placed.map(({ x, y, size }) => ({ minX: x - size / 2, minY: y - size / 2, maxX: x + size / 2, maxY: y + size / 2 })))
+  const crowd = crowdOf(placed)
   const bar = scaleBar(map, recipe, style)
   const here = { x: map.x(0), y: map.y(0) }
   const hereBox: Box = { minX: here.x - 1.4 * style.mark, minY: here.y - 1.4 * style.mark, maxX: here.x + 1.4 * style.mark, maxY: here.y + 1.4 * style.mark }
-  const rings = recipe.plane.rings ? ringMarks(map, recipe, style, (box) => tree.search(box).length, [bar.box, hereBox]) : { circles: [], labels: [] }
-  const labels = placeLabels({ galaxies: placed, obstacles: [bar.box, hereBox, ...rings.labels.map(textBox)], holds: map.holds }, recipe, style)
+  const rings = recipe.plane.rings ? ringMarks(map, recipe, style, crowd, [bar.box, hereBox]) : { circles: [], labels: [] }
+  const labels = placeLabels({ galaxies: placed, crowd, obstacles: [bar.box, hereBox, ...rings.labels.map(textBox)], holds: map.holds }, recipe, style)
 
   const square = [map.outline]
   const ground: Mark[] = [{ kind: 'path', subpaths: square, fill: style.colours.sheet }]

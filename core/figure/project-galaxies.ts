@@ -8,10 +8,15 @@ import { HALF_WIDTH } from './projection.ts'
 import type { ProjectionName, SkyRecipe } from './recipe.ts'
 import { turnedFrame } from './turned-frame.ts'
 
-/** Unit vectors, ICRS, three numbers a galaxy. @param ra, dec - deg */
-export function unitVectors(galaxies: readonly { ra: number; dec: number }[]): Float64Array {
+const known = new WeakMap<object, Float64Array>()
+
+/** Unit vectors, ICRS, three numbers a galaxy; kept for a list that is asked for again, as it is for every frame of a drag. @param ra, dec - deg */
+export function unitVectors(galaxies: readonly { readonly ra: number; readonly dec: number }[]): Float64Array {
+  const kept = known.get(galaxies)
+  if (kept?.length === galaxies.length * 3) return kept
   const vectors = new Float64Array(galaxies.length * 3)
   for (const [i, { ra, dec }] of galaxies.entries()) vectors.set(unitVector(ra, dec), i * 3)
+  known.set(galaxies, vectors)
   return vectors
 }
 

@@ -1,5 +1,5 @@
 /** The whole sky: net, zone of avoidance, supergalactic plane, galaxies and their names. */
-import RBush from 'rbush'
+import { crowdOf } from './crowd.ts'
 import { dotMark, hitOf, inDrawingOrder, markSize, type PlacedGalaxy } from './dots.ts'
 import type { SceneOptions } from './furniture.ts'
 import type { FigureGalaxy } from './galaxy.ts'
@@ -36,11 +36,10 @@ export function skyScene(galaxies: readonly FigureGalaxy[], recipe: FigureRecipe
   const placed = inDrawingOrder(
     galaxies.map((galaxy, i): PlacedGalaxy => ({ galaxy, x: places[2 * i] ?? 0, y: places[2 * i + 1] ?? 0, size: markSize(galaxy.absV, recipe.size, style) })),
   )
-  const tree = new RBush<Box>()
-  tree.load(placed.map(({ x, y, size }) => ({ minX: x - size / 2, minY: y - size / 2, maxX: x + size / 2, maxY: y + size / 2 })))
+  const crowd = crowdOf(placed)
   const page: Box = { minX: PAGE_EDGE_MM, minY: 0, maxX: layout.widthMm - PAGE_EDGE_MM, maxY: layout.heightMm }
-  const ticks = graticuleLabels(sky, map, style, page, (box) => tree.search(box).length)
-  const labels = placeLabels({ galaxies: placed, obstacles: ticks.map(textBox), holds: map.holds }, recipe, style)
+  const ticks = graticuleLabels(sky, map, style, page, crowd)
+  const labels = placeLabels({ galaxies: placed, crowd, obstacles: ticks.map(textBox), holds: map.holds }, recipe, style)
 
   const ground: Mark[] = [{ kind: 'path', subpaths: outline, fill: style.colours.sheet }]
   if (sky.zoneOfAvoidance) ground.push({ kind: 'group', name: 'zone of avoidance', marks: [{ kind: 'path', subpaths: map.sky(zoneOfAvoidance()), fill: style.colours.zone }] })

@@ -28,9 +28,13 @@ export function textWidth(text: string, face: Face, size: number): number {
 
 /** The rectangle that an upright text covers, its halo left out. */
 export function textBox(mark: Pick<TextMark, 'x' | 'y' | 'text' | 'face' | 'size' | 'anchor'>): Box {
-  const width = textWidth(mark.text, mark.face, mark.size)
-  const minX = mark.anchor === 'start' ? mark.x : mark.anchor === 'end' ? mark.x - width : mark.x - width / 2
-  return { minX, minY: mark.y - ASCENT * mark.size, maxX: minX + width, maxY: mark.y + DESCENT * mark.size }
+  return boxOfWidth(mark, textWidth(mark.text, mark.face, mark.size), mark.size)
+}
+
+/** The same for a text that has been measured. @param size - em, mm */
+export function boxOfWidth({ x, y, anchor }: Pick<TextMark, 'x' | 'y' | 'anchor'>, width: number, size: number): Box {
+  const minX = anchor === 'start' ? x : anchor === 'end' ? x - width : x - width / 2
+  return { minX, minY: y - ASCENT * size, maxX: minX + width, maxY: y + DESCENT * size }
 }
 
 /** Breaks a text into lines no wider than a measure; a longer word has a line of its own. @param measure - mm */

@@ -15,13 +15,12 @@ import { advanceTable } from '../../../server/figures/font-advances.ts'
 import { fontPath } from '../../../server/figures/fonts.ts'
 import { FigureTooLarge, renderFigure } from '../../../server/figures/render.ts'
 import { inventedGalaxies } from './invented.ts'
+import { difference, grey } from './picture-difference.ts'
 
 const galaxies = inventedGalaxies(300)
 const date = new Date('2026-02-01T12:00:00Z')
 const MM_PER_INCH = 25.4
 const DPI = 120
-/** Rows of the PDF and PNG may be one more or less, since the height is seldom a whole number of pixels. */
-const SPARE_ROWS = 1
 
 const recipes: Record<string, FigureRecipe> = {
   'sky, paper': figureRecipeSchema.parse({ view: 'sky', dpi: DPI, caption: 'Galaxies nearby, “so to speak”: α and β; 1.5 ± 0.2 Mpc.' }),
@@ -37,41 +36,9 @@ afterAll(() => rmSync(folder, { recursive: true, force: true }))
 
 const render = (recipe: FigureRecipe, format: FigureFormat): ReturnType<typeof renderFigure> => renderFigure(recipe, galaxies, { format, releaseLabel: 'release 2026.2', date })
 
-/** Grey levels, 0 to 255. */
-async function grey(image: Buffer): Promise<{ data: Buffer; width: number; height: number }> {
-  const { data, info } = await sharp(image).flatten({ background: '#ffffff' }).greyscale().raw().toBuffer({ resolveWithObject: true })
-  return { data, width: info.width, height: info.height }
-}
-
-/** Side of the squares that pictures are compared in, px: about a short name. */
-const SQUARE = 24
 /** Bars for the two, grey levels: pictures that agree stay at 0.6 and 7, a picture without names comes to 20 in its worst square. */
 const MEAN = 0.7
 const WORST = 10
-
-/**
- * Difference of grey levels, blurred a little so that a seam of antialiasing does not count as a moved mark: the mean of the whole, and of the
- * square where it is worst.
- */
-async function difference(a: Buffer, b: Buffer): Promise<{ mean: number; worst: number }> {
-  const soft = async (image: Buffer): ReturnType<typeof grey> => grey(await sharp(image).flatten({ background: '#ffffff' }).blur(1.2).png().toBuffer())
-  const [one, other] = await Promise.all([soft(a), soft(b)])
-  expect(other.width).toBe(one.width)
-  expect(Math.abs(other.height - one.height)).toBeLessThanOrEqual(SPARE_ROWS)
-  let sum = 0
-  const rows = Math.min(one.height, other.height)
-  const across = Math.ceil(one.width / SQUARE)
-  const squares = new Float64Array(across * Math.ceil(rows / SQUARE))
-  for (let y = 0; y < rows; y += 1) {
-    for (let x = 0; x < one.width; x += 1) {
-      const apart = Math.abs((one.data[y * one.width + x] ?? 0) - (other.data[y * one.width + x] ?? 0))
-      const square = Math.floor(y / SQUARE) * across + Math.floor(x / SQUARE)
-      sum += apart
-      squares[square] = (squares[square] ?? 0) + apart
-    }
-  }
-  return { mean: sum / (one.width * rows), worst: Math.max(...squares) / SQUARE ** 2 }
-}
 
 /** By poppler, finer than wanted and then made smaller: it sets letters on whole pixels. */
 function rasterised(pdf: Buffer, name: string, { width, height }: { width: number; height: number }): Promise<Buffer> {
