@@ -1,8 +1,9 @@
 import type { ComponentType } from 'react'
-import type { RouteObject } from 'react-router-dom'
+import { Navigate, type RouteObject } from 'react-router-dom'
 import { AppShell } from './app/app-shell.tsx'
 import { NotFoundPage } from './app/not-found-page.tsx'
 import { RouteFailure } from './app/route-failure.tsx'
+import { paths } from './paths.ts'
 
 /** A page fetched when it is first opened; its file exports the component by default. */
 function page(load: () => Promise<{ default: ComponentType }>): RouteObject['lazy'] {
@@ -12,6 +13,9 @@ function page(load: () => Promise<{ default: ComponentType }>): RouteObject['laz
 /** The pages, one line each; addresses as in src/paths.ts. */
 const pages: RouteObject[] = [
   { index: true, lazy: page(() => import('./features/home/home-page.tsx')) },
+  { path: 'atlas', element: <Navigate replace to={paths.sky} /> },
+  { path: 'atlas/sky', lazy: page(() => import('./features/atlas/sky-page.tsx')) },
+  { path: 'atlas/plane', lazy: page(() => import('./features/atlas/plane-page.tsx')) },
   { path: 'galaxies', lazy: page(() => import('./features/catalogue/galaxies-page.tsx')) },
   { path: 'galaxies/:slug', lazy: page(() => import('./features/galaxy/galaxy-page.tsx')) },
   { path: 'hosts', lazy: page(() => import('./features/hosts/hosts-page.tsx')) },
