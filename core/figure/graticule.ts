@@ -31,6 +31,9 @@ export function latitudeLabel(lat: number): string {
   return `${lat > 0 ? '+' : ''}${numeral(lat)}°`
 }
 
+/** A label that more marks would lie on is left out. */
+const MOST_HIDDEN = 1
+
 /** Corners of the crossing with the equator where a label may stand; the first is taken unless another hides fewer marks. */
 const CORNERS: readonly (readonly [dx: 1 | -1, dy: 1 | -1])[] = [[1, 1], [-1, 1], [1, -1], [-1, -1]]
 
@@ -56,7 +59,7 @@ export function graticuleLabels(sky: SkyRecipe, map: SkyMap, style: FigureStyle,
     }))
     const crowds = choices.map((choice) => crowd.within(textBox(choice)))
     const best = choices[crowds.indexOf(Math.min(...crowds))]
-    if (best && !meridians.some((other) => overlapping(textBox(other), textBox(best)))) meridians.push(best)
+    if (best && Math.min(...crowds) <= MOST_HIDDEN && !meridians.some((other) => overlapping(textBox(other), textBox(best)))) meridians.push(best)
   }
   const parallels = LABELLED_PARALLELS.flatMap((lat) => [-1, 1].map((side) => outsideLabel(latitudeLabel(lat), map.framePoint(sky.centreLon + 179.9999, lat), side as -1 | 1, map, style)))
   return [...meridians, ...parallels.filter((label) => within(textBox(label), page))]

@@ -3,12 +3,15 @@ import { decimalsOf, roundStep, type PlaneMap } from './plane-map.ts'
 import type { FigureRecipe } from './recipe.ts'
 import type { GroupMark, Mark } from './scene.ts'
 import type { FigureStyle } from './style.ts'
-import { CAP_HEIGHT } from './text-metrics.ts'
+import { CAP_HEIGHT, textWidth } from './text-metrics.ts'
 import { numeral } from './words.ts'
 
 /** About so many numbers an axis, fewer where they would touch. */
 const NUMBERS = 9
 const LEAST_BETWEEN_EMS = 4.2
+
+/** How far the last number may reach beyond the square, mm: less than the narrowest margin. */
+const OVERHANG_MM = 0.9
 
 /** Small ticks between two numbered ones. */
 const BETWEEN = 5
@@ -29,7 +32,10 @@ export function planeAxes(map: PlaneMap, recipe: FigureRecipe, style: FigureStyl
     const numbered = i % BETWEEN === 0
     const reach = numbered ? long : long / 2
     ticks.push({ points: [x, box.maxY, x, box.maxY - reach], closed: false }, { points: [x, box.minY, x, box.minY + reach], closed: false })
-    if (numbered) marks.push({ kind: 'text', ...numbers, x, y: box.maxY + 0.5 * style.tick + CAP_HEIGHT * style.tick, text: numeral(at, digits), anchor: 'middle' })
+    if (!numbered) continue
+    const text = numeral(at, digits)
+    const beyond = x + textWidth(text, 'sans', style.tick) / 2 - box.maxX - OVERHANG_MM
+    marks.push({ kind: 'text', ...numbers, x: x - Math.max(0, beyond), y: box.maxY + 0.7 * style.tick + CAP_HEIGHT * style.tick, text, anchor: 'middle' })
   }
   for (const [i, at] of multiples(map.centre[map.up] * map.unitsPerMpc, span, step / BETWEEN)) {
     const y = map.y(at / map.unitsPerMpc)
@@ -41,7 +47,7 @@ export function planeAxes(map: PlaneMap, recipe: FigureRecipe, style: FigureStyl
   const name = { kind: 'text' as const, face: 'sans' as const, size: style.tick * 1.08, anchor: 'middle' as const, colour: style.colours.ink }
   marks.push(
     { kind: 'path', subpaths: ticks, stroke },
-    { ...name, x: (box.minX + box.maxX) / 2, y: box.maxY + 2.9 * style.tick, text: `${map.across.toUpperCase()} / ${recipe.units}` },
+    { ...name, x: (box.minX + box.maxX) / 2, y: box.maxY + 3.05 * style.tick, text: `${map.across.toUpperCase()} / ${recipe.units}` },
     { ...name, x: box.minX - 3.3 * style.tick, y: (box.minY + box.maxY) / 2, text: `${map.up.toUpperCase()} / ${recipe.units}`, turn: -90 },
   )
   return { kind: 'group', name: 'axes', marks }

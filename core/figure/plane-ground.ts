@@ -5,7 +5,7 @@ import { decimalsOf, roundStep, type PlaneMap } from './plane-map.ts'
 import type { FigureRecipe } from './recipe.ts'
 import { overlapping, type Box, type Mark, type TextMark } from './scene.ts'
 import type { FigureStyle } from './style.ts'
-import { CAP_HEIGHT, textBox } from './text-metrics.ts'
+import { CAP_HEIGHT, textBox, textWidth } from './text-metrics.ts'
 import { numeral, withUnit } from './words.ts'
 import { wedgesIn } from './zone.ts'
 
@@ -100,14 +100,16 @@ export function scaleBar(map: PlaneMap, recipe: FigureRecipe, style: FigureStyle
   const length = roundStep((map.radius * map.unitsPerMpc) / 4)
   const width = (length / map.unitsPerMpc) * map.mmPerMpc
   const inset = 1.6 * style.tick
-  const x = map.box.minX + inset
+  const text = withUnit(numeral(length, decimalsOf(length)), recipe.units)
+  // A long label over a short bar moves the bar, not itself out of the square.
+  const x = map.box.minX + inset + Math.max(0, (textWidth(text, 'sans', style.tick) - width) / 2 - inset / 2)
   const y = map.box.maxY - inset
   const end = 0.28 * style.tick
   const label: TextMark = {
     kind: 'text',
     x: x + width / 2,
     y: y - 0.62 * style.tick,
-    text: withUnit(numeral(length, decimalsOf(length)), recipe.units),
+    text,
     face: 'sans',
     size: style.tick,
     anchor: 'middle',

@@ -26,7 +26,7 @@ const OBSERVER = { sgx: 0, sgy: 0, sgz: 0 } as const
 
 /** Room that the axes' numbers and names take to the left and below, mm. */
 export function axisRoom(style: FigureStyle): { left: number; below: number } {
-  return { left: 4.2 * style.tick, below: 3.3 * style.tick }
+  return { left: 4.2 * style.tick, below: 3.4 * style.tick }
 }
 
 /** @param place - where the square and its axes stand; as high as `planeHeight` says */

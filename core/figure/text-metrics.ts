@@ -37,12 +37,12 @@ export function boxOfWidth({ x, y, anchor }: Pick<TextMark, 'x' | 'y' | 'anchor'
   return { minX, minY: y - ASCENT * size, maxX: minX + width, maxY: y + DESCENT * size }
 }
 
-/** Breaks a text into lines no wider than a measure; a longer word has a line of its own. @param measure - mm */
+/** Breaks a text into lines no wider than a measure; a longer word is broken where it must be. @param measure - mm */
 export function wrapText(text: string, face: Face, size: number, measure: number): string[] {
   return text.split('\n').flatMap((paragraph) => {
     const lines: string[] = []
     let line = ''
-    for (const word of paragraph.split(/[ \t]+/).filter((part) => part !== '')) {
+    for (const word of paragraph.split(/[ \t]+/).flatMap((part) => fitting(part, face, size, measure))) {
       const longer = line === '' ? word : `${line} ${word}`
       if (line !== '' && textWidth(longer, face, size) > measure) {
         lines.push(line)
@@ -51,4 +51,17 @@ export function wrapText(text: string, face: Face, size: number, measure: number
     }
     return line === '' ? lines : [...lines, line]
   })
+}
+
+/** A word in pieces that fit, each of a letter at least. */
+function fitting(word: string, face: Face, size: number, measure: number): string[] {
+  const pieces: string[] = []
+  let piece = ''
+  for (const letter of word) {
+    if (piece !== '' && textWidth(piece + letter, face, size) > measure) {
+      pieces.push(piece)
+      piece = letter
+    } else piece += letter
+  }
+  return piece === '' ? pieces : [...pieces, piece]
 }

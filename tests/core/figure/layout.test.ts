@@ -20,14 +20,14 @@ function randomRecipes(count: number): FigureRecipe[] {
       sky: { projection: rng.pick(PROJECTIONS), frame: rng.pick(FRAMES), centreLon: 360 * rng.uniform(), zoneOfAvoidance: rng.uniform() < 0.7, supergalacticPlane: rng.uniform() < 0.7 },
       plane: {
         axes: rng.pick(PLANE_AXES),
-        radius: zoomed ? 0.3 + 3 * rng.uniform() : 11,
+        radius: zoomed ? 0.3 + 3 * rng.uniform() : rng.pick([0.01, 1, 10, 11, 500]),
         ...(zoomed && host?.sgx != null && host.sgy != null && host.sgz != null ? { centre: { sgx: host.sgx, sgy: host.sgy, sgz: host.sgz } } : {}),
       },
       colour: rng.pick(['class', 'one-ink']),
       size: rng.pick(['luminosity', 'fixed']),
       labels: { count: rng.integer(120), hosts: rng.uniform() < 0.7 },
       units: rng.pick(LENGTH_UNITS),
-      title: rng.pick(['', 'Companions of our neighbours, and what lies between them, in a title that is too long for one line of a narrow figure']),
+      title: rng.pick(['', 'Galaxienhaufenverteilungskartenausschnitt', 'Companions of our neighbours, and what lies between them, in a title that is too long for one line of a narrow figure']),
       caption: rng.pick(['', 'Invented galaxies by class and luminosity. '.repeat(4)]),
       credit: rng.pick(['', 'A group of astronomers']),
       theme: rng.pick(FIGURE_THEMES),
@@ -117,6 +117,16 @@ describe('a hundred random figures', () => {
     expect(names).toHaveLength(6)
     for (const name of names) expect(hosts).toContain(name)
   })
+})
+
+it('a map alone keeps its letters within its edges too', () => {
+  for (const recipe of randomRecipes(60)) {
+    const scene = sceneOf(galaxies, recipe, { bare: true })
+    for (const mark of textsOf(scene.marks)) {
+      const box = boxOf(mark)
+      expect(box.minX >= 0 && box.maxX <= scene.widthMm && box.minY >= 0 && box.maxY <= scene.heightMm, `“${mark.text}” in ${JSON.stringify(recipe)}`).toBe(true)
+    }
+  }
 })
 
 describe('what the pointer finds', () => {
