@@ -4,6 +4,7 @@ import type { Config } from '../server/config.ts'
 import { addAccounts } from './accounts.ts'
 import { fillWithDemonstration } from './demonstration/fill.ts'
 import { layTheScale } from './genesis.ts'
+import { personCalled, servicesWithin } from './people.ts'
 import { fillWithPublishedSample } from './published/fill.ts'
 
 export interface SeedOptions {
@@ -22,15 +23,15 @@ export async function seedWhenEmpty({ knex, config, log }: SeedOptions): Promise
     await trx.raw("select pg_advisory_xact_lock(hashtext('vicinage seed'))")
     if (await holdsAnything(trx)) return false
     const people = await addAccounts(trx, config.demoPassword ?? PASSWORD_OF_TESTS)
-    const curator = people.get('curator@demo.vicinage.test') ?? null
+    const services = servicesWithin(trx, config)
     await layTheScale(trx, people.get('steward@demo.vicinage.test') ?? null, new Date('2026-01-12T09:00:00Z'))
     await trx('catalogueKind').update({ kind: config.catalogue })
     if (config.catalogue === 'demonstration') {
       log.info('Inventing a neighbourhood for the demonstration.')
-      await fillWithDemonstration(trx, people)
-    } else if (config.catalogue === 'published' && curator !== null) {
+      await fillWithDemonstration(trx, people, services)
+    } else if (config.catalogue === 'published') {
       log.info('Filling the catalogue with the published sample.')
-      await fillWithPublishedSample(trx, people)
+      await fillWithPublishedSample(services, { curator: personCalled(people, 'curator'), approver: personCalled(people, 'approver'), steward: personCalled(people, 'steward') })
     }
     return true
   })

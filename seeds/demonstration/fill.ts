@@ -2,6 +2,8 @@
 import type { Knex } from 'knex'
 import { random } from '../../core/random.ts'
 import { rebuildCatalogue } from '../../server/services/revision/rebuild.ts'
+import type { Services } from '../../server/http/route.ts'
+import { personCalled } from '../people.ts'
 import { layTheDesk } from './desk.ts'
 import { literature } from './literature.ts'
 import { addGalaxies, addSources, type Invented } from './load.ts'
@@ -18,7 +20,8 @@ const CHAPTERS = [
   { revision: 4, upTo: 1, at: '2026-09-29T08:40:00Z', summary: 'Resolved stars at the edge of three invented systems', release: { label: '2026.2', title: 'Fainter satellites, a better scale' } },
 ] as const
 
-export async function fillWithDemonstration(trx: Knex.Transaction, people: ReadonlyMap<string, number>): Promise<void> {
+/** @param services - within the transaction */
+export async function fillWithDemonstration(trx: Knex.Transaction, people: ReadonlyMap<string, number>, services: Services): Promise<void> {
   const person = (role: string): number => people.get(`${role}@demo.vicinage.test`) ?? 0
   const draw = random(SEED)
   const sources = literature(draw)
@@ -38,7 +41,7 @@ export async function fillWithDemonstration(trx: Knex.Transaction, people: Reado
     }
     from = to
   }
-  await layTheDesk(trx, people)
+  await layTheDesk(services, { curator: personCalled(people, 'curator'), approver: personCalled(people, 'approver') })
 }
 
 /** Bright galaxies come first, as they do in the sky; the order is otherwise kept. */

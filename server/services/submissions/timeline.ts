@@ -24,7 +24,8 @@ export async function timelineOf(knex: Knex, row: SubmissionRow): Promise<Timeli
     })),
     ...(row.state === 'withdrawn' && row.decidedAt ? [{ at: row.decidedAt, by: row.authorName, what: 'Withdrawn', note: null }] : []),
   ]
-  return entries.sort((a, b) => b.at.getTime() - a.at.getTime()).map((e) => ({ ...e, at: e.at.toISOString() }))
+  // Of two things at one moment, the later step stands first too.
+  return entries.sort((a, b) => a.at.getTime() - b.at.getTime()).reverse().map((e) => ({ ...e, at: e.at.toISOString() }))
 }
 
 export async function remarksOf(knex: Knex, submission: number): Promise<SubmissionAnswer['remarks']> {
