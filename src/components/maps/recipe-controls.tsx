@@ -1,3 +1,5 @@
+import { ChevronRight } from 'lucide-react'
+import type { ReactNode } from 'react'
 import { FRAMES } from '../../../core/astro/frames.ts'
 import { PLANE_AXES, PROJECTIONS, USUAL_CENTRE_DEG, type FigureRecipe, type PlaneAxes } from '../../../core/figure/recipe.ts'
 import { Checkbox } from '../checkbox.tsx'
@@ -10,6 +12,8 @@ export interface RecipeControlsProps {
   onChange: (recipe: FigureRecipe) => void
   /** Which section is drawn; false where all are shown side by side. */
   withAxes?: boolean
+  /** Between what is changed often and what is folded away. */
+  children?: ReactNode
 }
 
 const PROJECTION_WORDS = { hammer: 'Hammer', aitoff: 'Aitoff', mollweide: 'Mollweide' } as const
@@ -18,11 +22,30 @@ const LABEL_COUNTS = { none: 0, few: 12, some: 24, many: 90 } as const
 type LabelChoice = keyof typeof LABEL_COUNTS
 const RADII = ['1.5', '4', '8', '11'] as const
 
-/** How a map is drawn: everything of a recipe that changes the map itself. */
-export function RecipeControls({ recipe, onChange, withAxes = true }: RecipeControlsProps) {
+/** How a map is drawn: everything of a recipe that changes the map itself; what is seldom changed is folded away. */
+export function RecipeControls({ recipe, onChange, withAxes = true, children }: RecipeControlsProps) {
+  const isSky = recipe.view === 'sky'
   return (
     <div className="grid gap-4">
-      {recipe.view === 'sky' ? <SkyControls recipe={recipe} onChange={onChange} /> : <PlaneControls recipe={recipe} onChange={onChange} withAxes={withAxes} />}
+      {isSky ? <FrameControl recipe={recipe} onChange={onChange} /> : <PlaceControls recipe={recipe} onChange={onChange} withAxes={withAxes} />}
+      {children}
+      <details className="group">
+        <summary className="flex min-h-8 cursor-pointer list-none items-center gap-1.5 rounded-sm text-muted hover:text-ink [&::-webkit-details-marker]:hidden">
+          <ChevronRight size={14} aria-hidden className="transition-transform group-open:rotate-90" />
+          {isSky ? 'Projection, names, marks' : 'Lengths, names, marks'}
+        </summary>
+        <div className="grid gap-4 pt-2">
+          {isSky ? <SkyControls recipe={recipe} onChange={onChange} /> : <PlaneControls recipe={recipe} onChange={onChange} />}
+          <MarkControls recipe={recipe} onChange={onChange} />
+        </div>
+      </details>
+    </div>
+  )
+}
+
+function MarkControls({ recipe, onChange }: RecipeControlsProps) {
+  return (
+    <>
       <RadioGroup
         look="chips"
         label="Names"
@@ -30,21 +53,9 @@ export function RecipeControls({ recipe, onChange, withAxes = true }: RecipeCont
         options={[{ id: 'none', label: 'none' }, { id: 'few', label: 'few' }, { id: 'some', label: 'some' }, { id: 'many', label: 'many' }]}
         onChange={(choice) => onChange({ ...recipe, labels: { ...recipe.labels, count: LABEL_COUNTS[choice] } })}
       />
-      <RadioGroup
-        look="chips"
-        label="Colour"
-        value={recipe.colour}
-        options={[{ id: 'class', label: 'by class' }, { id: 'one-ink', label: 'one ink' }]}
-        onChange={(colour) => onChange({ ...recipe, colour })}
-      />
-      <RadioGroup
-        look="chips"
-        label="Size"
-        value={recipe.size}
-        options={[{ id: 'luminosity', label: 'by luminosity' }, { id: 'fixed', label: 'all equal' }]}
-        onChange={(size) => onChange({ ...recipe, size })}
-      />
-    </div>
+      <RadioGroup look="chips" label="Colour" value={recipe.colour} options={[{ id: 'class', label: 'by class' }, { id: 'one-ink', label: 'one ink' }]} onChange={(colour) => onChange({ ...recipe, colour })} />
+      <RadioGroup look="chips" label="Size" value={recipe.size} options={[{ id: 'luminosity', label: 'by luminosity' }, { id: 'fixed', label: 'all equal' }]} onChange={(size) => onChange({ ...recipe, size })} />
+    </>
   )
 }
 
@@ -53,12 +64,23 @@ function labelChoice(count: number): LabelChoice {
   return count <= 12 ? 'few' : count <= 24 ? 'some' : 'many'
 }
 
+function FrameControl({ recipe, onChange }: RecipeControlsProps) {
+  return (
+    <RadioGroup
+      look="chips"
+      label="Frame"
+      value={recipe.sky.frame}
+      options={FRAMES.map((id) => ({ id, label: id }))}
+      onChange={(frame) => onChange({ ...recipe, sky: { ...recipe.sky, frame, centreLon: USUAL_CENTRE_DEG[frame] } })}
+    />
+  )
+}
+
 function SkyControls({ recipe, onChange }: RecipeControlsProps) {
   const { sky } = recipe
   const change = (part: Partial<FigureRecipe['sky']>): void => onChange({ ...recipe, sky: { ...sky, ...part } })
   return (
     <>
-      <RadioGroup look="chips" label="Frame" value={sky.frame} options={FRAMES.map((id) => ({ id, label: id }))} onChange={(frame) => change({ frame, centreLon: USUAL_CENTRE_DEG[frame] })} />
       <Select label="Projection" value={sky.projection} options={PROJECTIONS.map((id) => ({ id, label: PROJECTION_WORDS[id] }))} onChange={(projection) => change({ projection })} />
       <NumberField label="Longitude in the middle" unit="°" value={sky.centreLon} min={-360} max={360} step={15} decimals={1} onChange={(centreLon) => change({ centreLon: centreLon ?? USUAL_CENTRE_DEG[sky.frame] })} />
       <div>
@@ -69,7 +91,7 @@ function SkyControls({ recipe, onChange }: RecipeControlsProps) {
   )
 }
 
-function PlaneControls({ recipe, onChange, withAxes }: RecipeControlsProps) {
+function PlaceControls({ recipe, onChange, withAxes }: RecipeControlsProps) {
   const { plane } = recipe
   const change = (part: Partial<FigureRecipe['plane']>): void => onChange({ ...recipe, plane: { ...plane, ...part } })
   const radius = String(plane.radius)
@@ -78,6 +100,15 @@ function PlaneControls({ recipe, onChange, withAxes }: RecipeControlsProps) {
     <>
       {withAxes && <RadioGroup look="chips" label="Seen" value={plane.axes} options={PLANE_AXES.map((id) => ({ id, label: AXES_WORDS[id] }))} onChange={(axes) => change({ axes })} />}
       <RadioGroup look="chips" label="Out to / Mpc" value={radius} options={options} onChange={(chosen) => change({ radius: Number(chosen) })} />
+    </>
+  )
+}
+
+function PlaneControls({ recipe, onChange }: RecipeControlsProps) {
+  const { plane } = recipe
+  const change = (part: Partial<FigureRecipe['plane']>): void => onChange({ ...recipe, plane: { ...plane, ...part } })
+  return (
+    <>
       <RadioGroup look="chips" label="Lengths in" value={recipe.units} options={[{ id: 'Mpc', label: 'Mpc' }, { id: 'Mly', label: 'million light-years' }]} onChange={(units) => onChange({ ...recipe, units })} />
       <div>
         <Checkbox isSelected={plane.zoneOfAvoidance} onChange={(zoneOfAvoidance) => change({ zoneOfAvoidance })}>Zone of avoidance</Checkbox>

@@ -36,6 +36,9 @@ const OTHER: Readonly<Record<View, { view: View; label: string; path: string }>>
   plane: { view: 'sky', label: 'The sky', path: paths.sky },
 }
 
+/** The room that the distances take, px, kept while they come. */
+const DISTANCE_HEIGHT = 94
+
 /** What stands around a map: title, filter, how it is drawn, the galaxy chosen, export. */
 export function AtlasFrame({ atlas, view, title, children, recipe, onCentre }: AtlasFrameProps) {
   const [isFiltering, setFiltering] = useState(false)
@@ -81,14 +84,13 @@ export function AtlasFrame({ atlas, view, title, children, recipe, onCentre }: A
         </div>
         <div className="grid content-start gap-5">
           <Sheet title="Draw">
-            <RecipeControls recipe={atlas.recipe} onChange={atlas.changeRecipe} withAxes={false} />
-            {distance && (
-              <div className="mt-5">
-                <RangeFacet column="distance" histogram={distance} filter={filter} onChange={atlas.change} />
-              </div>
-            )}
+            <RecipeControls recipe={atlas.recipe} onChange={atlas.changeRecipe} withAxes={false}>
+              <div style={{ minHeight: DISTANCE_HEIGHT }}>{distance && <RangeFacet column="distance" histogram={distance} filter={filter} onChange={atlas.change} />}</div>
+            </RecipeControls>
           </Sheet>
-          <SelectionCard slug={atlas.selected} at={filter.at} onCentre={onCentre} />
+          <div className="max-lg:order-first">
+            <SelectionCard slug={atlas.selected} at={filter.at} onCentre={onCentre} />
+          </div>
         </div>
       </div>
       <Drawer title="Filters" isOpen={isFiltering} onOpenChange={setFiltering} footer={<Button kind="primary" onPress={() => setFiltering(false)}>{`Show ${data.galaxies.length}`}</Button>}>
