@@ -3,6 +3,9 @@ import type { FigureRecipe, LengthUnit, PlaneAxes, ProjectionName } from './reci
 
 const THIN_SPACE = '\u2009'
 
+/** No-break: a fifth of an em in Source Sans, which is what a thin space should be; the font's own thin space is a tenth, too little at 6 pt. */
+const UNIT_SPACE = '\u00a0'
+
 /** IAU 2012 resolution B2 (au) and IAU definition of the parsec; Julian light-year of 365.25 days: 1 Mpc in million light-years. */
 export const MLY_PER_MPC = 3.261563777
 
@@ -23,9 +26,9 @@ export function numeral(value: number, digits = 0): string {
   return value < 0 && Number(size) !== 0 ? `−${size}` : size
 }
 
-/** A value with its unit, a thin space between. */
+/** A value with its unit, a thin gap between that no line breaks at. */
 export function withUnit(value: string, unit: string): string {
-  return `${value}${THIN_SPACE}${unit}`
+  return `${value}${UNIT_SPACE}${unit}`
 }
 
 /** How many of the unit a Mpc is. */

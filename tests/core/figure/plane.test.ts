@@ -57,7 +57,7 @@ describe('a section', () => {
     const path = marks.find((mark) => mark.kind === 'path')
     const [x1 = NaN, , x2 = NaN] = path?.kind === 'path' ? (path.subpaths[0]?.points ?? []) : []
     const [label] = [...textsOf(marks)]
-    expect(label?.text).toBe('2\u2009Mpc')
+    expect(label?.text).toBe('2\u00a0Mpc')
     expect((x2 - x1) / (scene.map.maxX - scene.map.minX)).toBeCloseTo(2 / 22, 9)
   })
 })
