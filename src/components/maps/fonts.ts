@@ -1,5 +1,6 @@
 /** The fonts that figures are lettered with, fetched before a canvas draws with them. */
 import '@fontsource-variable/source-sans-3/wght-italic.css'
+import '../../styles/figure-fonts.css'
 import { useSyncExternalStore } from 'react'
 import { FACES } from '../../../core/figure/scene.ts'
 import { canvasFont } from '../../../core/figure/paint-canvas.ts'
