@@ -20,7 +20,7 @@ const PROJECTION_WORDS = { hammer: 'Hammer', aitoff: 'Aitoff', mollweide: 'Mollw
 export const AXES_WORDS: Readonly<Record<PlaneAxes, string>> = { 'sgx-sgy': 'SGX–SGY', 'sgx-sgz': 'SGX–SGZ', 'sgy-sgz': 'SGY–SGZ' }
 const LABEL_COUNTS = { none: 0, few: 12, some: 24, many: 90 } as const
 type LabelChoice = keyof typeof LABEL_COUNTS
-const RADII = ['1.5', '4', '8', '11'] as const
+const RADII = ['0.5', '1.5', '4', '11'] as const
 
 /** How a map is drawn: everything of a recipe that changes the map itself; what is seldom changed is folded away. */
 export function RecipeControls({ recipe, onChange, withAxes = true, children }: RecipeControlsProps) {

@@ -11,6 +11,9 @@ import { useAtlas } from './use-atlas.ts'
 /** Face on and edge on: both hold SGX across, so a galaxy stands at the same place in each. */
 const SHOWN: readonly PlaneAxes[] = ['sgx-sgy', 'sgx-sgz']
 
+/** About the reach of a massive host, so that a system fills the section. */
+const SYSTEM_RADIUS_MPC = '0.5'
+
 /** Two sections of supergalactic space side by side, linked; about the observer, or about a galaxy. */
 export default function PlanePage() {
   useDocumentTitle('The supergalactic plane')
@@ -30,7 +33,7 @@ export default function PlanePage() {
       view="plane"
       title={middle ? `Round ${middle.name}` : 'The supergalactic plane'}
       recipe={recipe}
-      onCentre={(slug) => atlas.changeOwn({ [ABOUT]: slug, radius: '1.5' })}
+      onCentre={(slug) => atlas.changeOwn({ [ABOUT]: slug, radius: SYSTEM_RADIUS_MPC })}
     >
       {middle && (
         <p className="mb-3 flex flex-wrap items-center gap-3">

@@ -23,6 +23,7 @@ import { notify } from '../../components/toast.tsx'
 import { UnsavedGuard } from '../../components/unsaved-guard.tsx'
 import { formatDayTime } from '../../lib/format.ts'
 import { paths } from '../../paths.ts'
+import { WhichGalaxies } from './which-galaxies.tsx'
 
 const CRUMBS = [{ label: 'Figures', href: paths.figures }]
 const UNDO_SECONDS = 12
@@ -120,7 +121,9 @@ export function Studio({ figure, recipe: kept }: { figure: Figure; recipe: Figur
             </Sheet>
           )}
           <Sheet title="The map">
-            <RecipeControls recipe={recipe} onChange={setRecipe} />
+            <RecipeControls recipe={recipe} onChange={setRecipe}>
+              <WhichGalaxies recipe={recipe} onChange={setRecipe} />
+            </RecipeControls>
           </Sheet>
           <Sheet title="The figure">
             <ExportForm recipe={recipe} onChange={setRecipe} format={format} onFormat={setFormat} suggestedTitle={automaticTitle(recipe)} releaseLabel={data.releaseLabel} errorOf={file.errorOf} />

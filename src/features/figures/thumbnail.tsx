@@ -23,7 +23,7 @@ export function Thumbnail({ figure }: { figure: Figure }) {
     return () => observer.disconnect()
   }, [])
   return (
-    <div ref={frame} className="flex aspect-[3/2] items-center justify-center overflow-hidden bg-paper">
+    <div ref={frame} className="flex aspect-[7/5] items-center justify-center overflow-hidden bg-paper">
       {!recipe ? <p className="px-6 text-muted">This recipe is of a kind that cannot be drawn here.</p> : isNear && <Drawn recipe={recipe} />}
     </div>
   )
