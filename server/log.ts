@@ -1,6 +1,6 @@
 /** The log: JSON lines with times in UTC, a request's number on all that belongs to it, and no secrets. */
 import { randomUUID } from 'node:crypto'
-import type { RequestHandler } from 'express'
+import type { Request, RequestHandler } from 'express'
 import { pino, type DestinationStream, type Logger } from 'pino'
 import { pinoHttp } from 'pino-http'
 import type { Config } from './config.ts'
@@ -29,6 +29,11 @@ export function requestLog({ log }: Pick<Services, 'log'>): RequestHandler {
     serializers: {
       req: (request: { id: string; method: string; url: string }) => ({ id: request.id, method: request.method, url: request.url }),
       res: (response: { statusCode: number }) => ({ status: response.statusCode }),
+    },
+    // By number, so that who was refused what can be found, and a name cannot.
+    customProps: (request) => {
+      const { user } = request as Request
+      return user ? { user: user.id } : {}
     },
     customLogLevel: (_request, response, error) => (error || response.statusCode >= 500 ? 'error' : response.statusCode >= 400 ? 'info' : 'debug'),
   })

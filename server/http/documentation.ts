@@ -10,7 +10,7 @@ const escape = (text: string): string => text.replace(/&/g, '&amp;').replace(/</
 const STYLE = `body{font:17px/1.5 'Source Sans 3 Variable',system-ui,sans-serif;margin:2rem auto;max-width:64rem;padding:0 1rem;color:#1d2733;background:#f6f2e9}
 h1,h2,h3{font-family:'Source Serif 4 Variable',Georgia,serif;line-height:1.2}h2{margin-top:2.5rem}a{color:#8a3b22}
 table{border-collapse:collapse;width:100%;background:#fcfaf4}td,th{border:1px solid #d8cfbd;padding:.35rem .6rem;text-align:left;vertical-align:top}
-code,pre{font-family:ui-monospace,monospace;font-size:.88em}pre{overflow-x:auto;background:#fcfaf4;border:1px solid #d8cfbd;padding:.6rem;max-height:28rem}
+code,pre{font-family:ui-monospace,monospace;font-size:.88em}p code,td code{overflow-wrap:anywhere}pre{overflow-x:auto;background:#fcfaf4;border:1px solid #d8cfbd;padding:.6rem;max-height:28rem}
 .scroll{overflow-x:auto}article{border-top:1px solid #d8cfbd;padding:.7rem 0}article p{margin:.2rem 0}article h3{font:600 1rem/1.4 ui-monospace,monospace;margin:0;overflow-wrap:anywhere}
 summary{cursor:pointer}nav a{margin-right:.8rem;display:inline-block;padding:.2rem 0}
 @media(prefers-color-scheme:dark){body{color:#e6e1d6;background:#0e1420}table,pre{background:#151d2b}td,th,pre,article{border-color:#2b374a}a{color:#e8917a}}`
@@ -20,7 +20,7 @@ export function documentationPage(routes: readonly Route[], publicUrl: string): 
   const nav = [...byTag.keys()].map((tag) => `<a href="#${tag}">${tag}</a>`).join('')
   const sections = [...byTag].map(([tag, list]) => `<section aria-labelledby="${tag}"><h2 id="${tag}">${tag}</h2>${list.map(article).join('')}</section>`)
   const columns = COLUMNS.map((c) => `<tr><td><code>${c.key}</code></td><td>${escape(c.description)}</td><td>${escape(c.unit)}</td><td><code>${escape(c.ucd)}</code></td></tr>`)
-  return `<!doctype html><html lang="en"><head><meta charset="utf-8"><meta name="viewport" content="width=device-width,initial-scale=1"><title>Interface · Vicinage</title><style>${STYLE}</style></head><body><main>
+  return `<!doctype html><html lang="en"><head><meta charset="utf-8"><meta name="viewport" content="width=device-width,initial-scale=1"><title>Interface · Vicinage</title><link rel="icon" href="/mark.svg"><style>${STYLE}</style></head><body><main>
 <h1>The interface of Vicinage</h1>
 <p>JSON over HTTP, described in full by <a href="/api/openapi.json">OpenAPI 3.1</a>. Without signing in, reads answer from the newest release; <code>at=</code> chooses another release (or, signed in, a revision).
 Every answer of the catalogue says which revision it was read at (<code>X-Catalogue-Revision</code>). What went wrong is said as problem details (RFC 9457) that name the field and the reason.</p>

@@ -20,7 +20,7 @@ export function mountRoutes(app: Express, routes: readonly Route[], services: Se
   for (const route of routes as readonly unknown[] as readonly AnyRoute[]) {
     const guard: RequestHandler = (request, _response, next) => {
       requirePermission(route, request)
-      if (route.method !== 'get') requireOwnPage(request)
+      if (route.method !== 'get') requireOwnPage(request, services.config.publicUrl)
       next()
     }
     const reading: readonly RequestHandler[] = route.upload ? [readUpload(route.upload)] : route.body ? readJson : []

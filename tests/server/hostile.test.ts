@@ -166,6 +166,43 @@ describe('what cannot be taken', () => {
   })
 })
 
+describe('uploads that are none', () => {
+  const LIMIT = walkedRoutes.find((w) => w.title === 'POST /api/imports')?.route.upload?.maxBytes ?? 0
+  const part = (head: string, content: string): string => `--x\r\n${head}\r\n\r\n${content}\r\n`
+  const named = (name: string): string => `Content-Disposition: form-data; name="file"; filename="${name}"`
+  const table = 'galaxy,value\nOstrel,27.5\n'
+
+  it.each<[string, string, string, number]>([
+    ['JSON', 'application/json', '{}', 415],
+    ['a form that is not multipart', 'application/x-www-form-urlencoded', 'file=x', 415],
+    ['no boundary', 'multipart/form-data', part(named('a.csv'), table), 400],
+    ['another boundary', 'multipart/form-data; boundary=y', `${part(named('a.csv'), table)}--x--\r\n`, 400],
+    ['an end that is missing', 'multipart/form-data; boundary=x', part(named('a.csv'), table), 400],
+    ['a head that is missing', 'multipart/form-data; boundary=x', '--x\r\n\r\nabc\r\n--x--\r\n', 400],
+    ['no file', 'multipart/form-data; boundary=x', `${part('Content-Disposition: form-data; name="file"', 'a word')}--x--\r\n`, 400],
+    ['a file in another field', 'multipart/form-data; boundary=x', `${part(named('a.csv').replace('name="file"', 'name="other"'), table)}--x--\r\n`, 400],
+    ['two files', 'multipart/form-data; boundary=x', `${part(named('a.csv'), table)}${part(named('b.csv'), table)}--x--\r\n`, 400],
+    ['an empty file', 'multipart/form-data; boundary=x', `${part(named('a.csv'), '')}--x--\r\n`, 400],
+    ['a hundred fields', 'multipart/form-data; boundary=x', `${Array.from({ length: 100 }, (_, i) => part(`Content-Disposition: form-data; name="f${i}"`, 'x')).join('')}--x--\r\n`, 400],
+    ['a picture by another name', 'multipart/form-data; boundary=x', `${part(named('a.csv'), '\u0089PNG\r\n\u001a\n\u0000\u0000\u0000\rIHDR\u0000')}--x--\r\n`, 400],
+    ['a file too large', 'multipart/form-data; boundary=x', `${part(named('a.csv'), 'x'.repeat(LIMIT + 1))}--x--\r\n`, 413],
+  ])('%s', async (what, type, raw, status) => {
+    const curator = await server().as('curator')
+    const before = await footprint(server().knex)
+    const answer = await curator.send('POST', '/api/imports', { raw, headers: { 'content-type': type } })
+    expect(answer.status, `${what}: ${answer.text}`).toBe(status)
+    expect(answer.problem(status).detail).toMatch(/Nothing was kept/)
+    expect(await footprint(server().knex)).toBe(before)
+  })
+
+  it.each(['../../etc/passwd', '..\\\\..\\\\x.csv', 'a\u0000b.csv', `${'x'.repeat(400)}.csv`, '<img src=x>.csv', 'naïve 日本.csv', '.csv', 'con.csv'])('the name %j does no harm', async (name) => {
+    const curator = await server().as('curator')
+    const answer = await curator.upload('/api/imports', 'file', name, table)
+    expect([201, 400], answer.text).toContain(answer.status)
+    if (answer.status === 201) expect((JSON.parse(answer.text) as { fileName: string }).fileName).not.toMatch(/[\\/\u0000]/)
+  })
+})
+
 describe('methods', () => {
   it.each(['PUT', 'PATCH', 'DELETE', 'POST'])('%s where it has no meaning is 405 and says what has', async (method) => {
     const answer = await server().visitor().send(method, '/api/summary')

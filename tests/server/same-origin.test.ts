@@ -9,6 +9,7 @@ import { useServer } from './harness/server.ts'
 import { walkedRoutes } from './harness/walk.ts'
 
 const server = useServer({
+  environment: { PUBLIC_URL: 'https://atlas.example', COOKIE_SECURE: 'false' },
   fill: async (knex) => {
     await makeRevision(knex, 1, { release: '2026.1' })
     await placeGalaxy(knex, 1, { name: 'Ostrel', distance: 3 })
@@ -41,6 +42,7 @@ describe('every write, by somebody who may', () => {
       ['a sister site', { 'sec-fetch-site': 'same-site' }, false],
       ['another origin', { origin: 'https://elsewhere.example' }, false],
       ['another port', { origin: 'http://127.0.0.1:1' }, false],
+      ['the public name without its https', { origin: 'http://atlas.example' }, false],
       ['an origin that hides', { origin: 'null' }, false],
       ['an origin that begins alike', { origin: `http://${host}.elsewhere.example` }, false],
     ]
@@ -52,7 +54,7 @@ describe('every write, by somebody who may', () => {
     expect(await footprint(server().knex)).toBe(before)
     // Signing out would end the session of the next test.
     if (walked.path === '/api/session') return
-    for (const headers of [{}, { 'origin': client.base, 'sec-fetch-site': 'same-origin' }, { 'sec-fetch-site': 'none' }]) {
+    for (const headers of [{}, { 'origin': client.base, 'sec-fetch-site': 'same-origin' }, { 'sec-fetch-site': 'none' }, { 'origin': 'https://atlas.example', 'sec-fetch-site': 'same-origin' }]) {
       const answer = await client.send(walked.method, walked.address, { ...body, headers })
       expect([400, 404, 415], `${title}: ${answer.text.slice(0, 200)}`).toContain(answer.status)
     }

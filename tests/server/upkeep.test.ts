@@ -78,7 +78,8 @@ describe('the log', () => {
     const answer = await client.get('/api/submissions?state=draft')
     const id = answer.headers.get('x-request-id')
     await expect.poll(() => lines.some((l) => l.includes(id ?? '?'))).toBe(true)
-    const line = JSON.parse(lines.find((l) => l.includes(id ?? '?')) ?? '{}') as { time: string; req: unknown; res: unknown }
+    const line = JSON.parse(lines.find((l) => l.includes(id ?? '?')) ?? '{}') as { time: string; req: unknown; res: unknown; user: unknown }
+    expect(line.user).toBe(server().people.curator.id)
     expect(line.req).toEqual({ id, method: 'GET', url: '/api/submissions?state=draft' })
     expect(line.res).toEqual({ status: 200 })
     expect(line.time).toMatch(/^\d{4}-\d\d-\d\dT[\d:.]+Z$/)
