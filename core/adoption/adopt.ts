@@ -42,13 +42,18 @@ function adoptMean(key: QuantityKey, measurements: readonly Measurement[], scale
     const residual = (entry.value - mean.mean) / entry.error
     return { measurementId: m.id, used: true, weight: mean.weights[i] ?? 0, shift: 0, scaled: entry.value, error: entry.error, residual, tension: Math.abs(residual) > scale.policy.tension, reason: 'used', flags: [] }
   })
-  const q = quantity(key)
-  const n = withErrors.length
   return {
-    quantity: key, value: mean.mean, textValue: null, errPlus: mean.error, errMinus: mean.error, errSys: null, nUsed: n, nAll: measurements.length, chi2: mean.chi2,
+    quantity: key, value: mean.mean, textValue: null, errPlus: mean.error, errMinus: mean.error, errSys: null, nUsed: withErrors.length, nAll: measurements.length, chi2: mean.chi2,
     dof: mean.dof, scatter: null, method: null, reasons, override: override?.reason ?? null,
-    sentence: n === 1 ? `From one value (${withErrors[0]?.m.sourceLabel ?? ''}).` : `Weighted from ${n} values${mean.scaleFactor > 1 ? `; the error is enlarged ${mean.scaleFactor.toFixed(1)} times since they scatter more than their ${q.unit} errors allow` : ''}.`,
+    sentence: meanSentence(withErrors.map((c) => c.m.sourceLabel), mean.scaleFactor, override),
   }
+}
+
+function meanSentence(sources: readonly string[], scaleFactor: number, override: Chosen | null): string {
+  const n = sources.length
+  const from = n === 1 ? `one value (${sources[0] ?? ''})` : `${n} values`
+  const first = override ? `Set by an override from ${from}: ${override.reason}.` : `${n === 1 ? 'From' : 'Weighted from'} ${from}.`
+  return scaleFactor > 1 ? `${first} The error is enlarged ${scaleFactor.toFixed(1)} times, since they scatter more than their errors allow.` : first
 }
 
 /** The one measurement that comes first in an order. */

@@ -13,11 +13,11 @@ export function distanceSentence(candidates: readonly DistanceCandidate[], weigh
   const out = candidates.filter((c) => c.barred !== null)
   const sentences = [first(used, override)]
   if (lower.length > 0) sentences.push(`${byMethod(lower)} of a lower tier ${lower.length === 1 ? 'is' : 'are'} shown and not used.`)
-  if (!override) for (const [reason, n] of tally(out.map((c) => c.barred ?? ''))) sentences.push(`${counted(n, 'value')} not used: ${reason}.`)
+  if (!override) for (const [reason, n] of tally(out.map((c) => c.barred ?? ''))) sentences.push(leftOut(reason, n))
   const assumed = used.filter((c) => c.flags.includes('error assumed')).length
   if (assumed > 0) sentences.push(`${counted(assumed, 'value')} without a stated error ${assumed === 1 ? 'takes' : 'take'} the policy’s.`)
   const unscaled = used.filter((c) => c.flags.includes('scale unknown')).length
-  if (unscaled > 0) sentences.push(`${counted(unscaled, 'value')} ${unscaled === 1 ? 'does' : 'do'} not say on which scale.`)
+  if (unscaled > 0) sentences.push(`${counted(unscaled, 'value')} ${unscaled === 1 ? 'does not say on which scale, and is' : 'do not say on which scale, and are'} taken as published.`)
   sentences.push(...tension(used, weights, scale))
   return sentences.join(' ')
 }
@@ -25,8 +25,17 @@ export function distanceSentence(candidates: readonly DistanceCandidate[], weigh
 function first(used: readonly DistanceCandidate[], override: Chosen | null): string {
   if (override) return `Set by an override from ${byMethod(used)}: ${override.reason}.`
   const only = used[0]
-  if (used.length === 1 && only) return `From one ${method(only.rule.method).inWords} value${only.shift === 0 ? '' : ' on the catalogue’s scale'}.`
+  if (used.length === 1 && only) {
+    const onScale = only.measurement.anchorValueAssumed !== null && !only.flags.includes('scale unknown')
+    return `From one ${method(only.rule.method).inWords} value${onScale ? ' on the catalogue’s scale' : ''}.`
+  }
   return `Weighted from ${byMethod(used)} on the catalogue’s scale.`
+}
+
+/** "1 value is excluded: blended.", "2 upper limits are shown and not used." */
+function leftOut(reason: string, n: number): string {
+  const be = n === 1 ? 'is' : 'are'
+  return reason.endsWith(' limit') ? `${counted(n, reason)} ${be} shown and not used.` : `${counted(n, 'value')} ${be} ${reason}.`
 }
 
 function tension(used: readonly DistanceCandidate[], weights: ReadonlyMap<DistanceCandidate, number>, scale: Scale): string[] {

@@ -13,7 +13,8 @@ export interface Relation extends Place {
   columns: Readonly<Record<string, CatalogueValue>>
 }
 
-const NOWHERE: Relation = {
+/** The place of a galaxy without a distance, or without anybody who disturbs it. */
+export const NOWHERE: Relation = {
   indexDisturber: null,
   mainDisturber: null,
   isSatellite: false,

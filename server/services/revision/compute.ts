@@ -4,12 +4,12 @@
  */
 import type { Knex } from 'knex'
 import type { Scale } from '../../../core/adoption/adopted.ts'
-import type { CatalogueRow } from '../../../core/columns.ts'
 import { affectedBy } from '../../../core/derive/affected.ts'
 import { neighbourFrom, withChanges, type Neighbour, type Neighbourhood } from '../../../core/derive/neighbourhood.ts'
 import { placeIn } from '../../../core/derive/places.ts'
 import type { OwnColumns } from '../../../core/derive/own.ts'
-import { relationOf, relationsOf, relationWord, type Relation } from '../../../core/derive/relation.ts'
+import { NOWHERE, relationOf, relationsOf, type Relation } from '../../../core/derive/relation.ts'
+import { rowOf } from '../../../core/derive/row.ts'
 import { adoptGalaxies } from './adopt-galaxies.ts'
 import { adoptedDifferences, sameRow, standingRows } from './compare.ts'
 import { allGalaxies, loadScale } from './load.ts'
@@ -56,9 +56,10 @@ async function place(trx: Knex, own: ReadonlyMap<number, OwnColumns>, before: Su
     const stored = standing.get(id)
     const columns = own.get(id) ?? stored
     if (!columns) return []
-    const where = relations.get(id) ?? placeIn(before.neighbourhood, before.places, id)
-    const after: CatalogueRow = { ...columns, ...(relations.get(id)?.columns ?? {}), host_relation: relationWord(where?.isSatellite ?? false, satellitesOf(id) > 0) }
-    const planned = { galaxyId: id, before: stored ?? null, after, mainDisturber: where?.mainDisturber ?? null, indexDisturber: where?.indexDisturber ?? null }
+    // A host whose satellites alone came or went keeps its place.
+    const place = relations.get(id) ?? { ...NOWHERE, ...placeIn(before.neighbourhood, before.places, id), columns: {} }
+    const row = rowOf(columns, place, satellitesOf(id) > 0)
+    const planned = { galaxyId: id, before: stored ?? null, after: row, mainDisturber: place.mainDisturber, indexDisturber: place.indexDisturber }
     return sameRow(planned) ? [] : [planned]
   })
 }

@@ -2,7 +2,8 @@
 import type { Knex } from 'knex'
 import { neighbourFrom, neighbourhoodOf } from '../../../core/derive/neighbourhood.ts'
 import type { OwnColumns } from '../../../core/derive/own.ts'
-import { relationsOf, relationWord } from '../../../core/derive/relation.ts'
+import { relationsOf } from '../../../core/derive/relation.ts'
+import { rowOf } from '../../../core/derive/row.ts'
 import { adoptGalaxies } from './adopt-galaxies.ts'
 import { adoptedDifferences, sameRow, standingRows } from './compare.ts'
 import { allGalaxies, loadScale } from './load.ts'
@@ -42,7 +43,7 @@ export async function rebuildCatalogue(trx: Knex, revision: number, { onProgress
       const relation = relations.get(id)
       const columns = own.get(id)
       if (!relation || !columns) return []
-      const after = { ...columns, ...relation.columns, host_relation: relationWord(relation.isSatellite, hosting.has(id)) }
+      const after = rowOf(columns, relation, hosting.has(id))
       const row = { galaxyId: id, before: standing.get(id) ?? null, after, mainDisturber: relation.mainDisturber, indexDisturber: relation.indexDisturber }
       return sameRow(row) ? [] : [row]
     })

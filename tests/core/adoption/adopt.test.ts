@@ -67,6 +67,9 @@ describe('the adopted distance', () => {
     const found = adopt('distance_modulus', list, SCALE)
     expect(found?.value).toBeCloseTo(27.8, 9)
     expect(found?.reasons.map((r) => r.reason)).toEqual(['superseded by Harrow 2024', 'used', 'excluded: wrong galaxy', 'lower limit'])
+    expect(found?.sentence).toBe(
+      'From one TRGB value on the catalogue’s scale. 1 value is superseded by Harrow 2024. 1 value is excluded: wrong galaxy. 1 lower limit is shown and not used.',
+    )
   })
 
   it('lets a superseding measurement that is itself excluded supersede nothing', () => {
@@ -137,6 +140,7 @@ describe('other quantities', () => {
     const found = adopt('velocity', [velocity(-300, 2), velocity(-296, 2)], SCALE)
     expect(found?.value).toBeCloseTo(-298, 9)
     expect(found?.errPlus).toBeCloseTo(Math.SQRT2 * Math.SQRT2, 6)
+    expect(found?.sentence).toBe('Weighted from 2 values. The error is enlarged 1.4 times, since they scatter more than their errors allow.')
   })
 
   it('magnitudes: the smallest stated error, then the newest', () => {
