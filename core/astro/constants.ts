@@ -3,6 +3,9 @@
 /** Speed of light, km/s: exact by definition of the metre (SI). */
 export const SPEED_OF_LIGHT_KM_PER_S = 299_792.458
 
+/** Million light-years a Mpc: the au and parsec of IAU 2012 B2 and 2015 B2, the Julian year of 365.25 days. */
+export const MLY_PER_MPC = 3.2615637771674333
+
 /**
  * Gravitational constant, Mpc (km/s)² per solar mass: from GM_sun = 1.3271244e20 m³/s² (IAU 2015 resolution B3) and
  * 1 pc = 3.0856775814913673e16 m (IAU 2012 B2, 2015 B2).

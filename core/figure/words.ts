@@ -1,13 +1,11 @@
 /** Words of figures: titles that say themselves, axis names, numbers with true minus signs and thin spaces. */
+import { MLY_PER_MPC } from '../astro/constants.ts'
 import type { FigureRecipe, LengthUnit, PlaneAxes, ProjectionName } from './recipe.ts'
 
 const THIN_SPACE = '\u2009'
 
 /** No-break: a fifth of an em in Source Sans, which is what a thin space should be; the font's own thin space is a tenth, too little at 6 pt. */
 const UNIT_SPACE = '\u00a0'
-
-/** IAU 2012 resolution B2 (au) and IAU definition of the parsec; Julian light-year of 365.25 days: 1 Mpc in million light-years. */
-export const MLY_PER_MPC = 3.261563777
 
 const PROJECTION_NAMES: Readonly<Record<ProjectionName, string>> = { hammer: 'Hammer', aitoff: 'Aitoff', mollweide: 'Mollweide' }
 
