@@ -6,6 +6,7 @@ import { ReviewModel } from '../../models/review.ts'
 import { RevisionModel } from '../../models/revision.ts'
 import { SubmissionModel } from '../../models/submission.ts'
 import { record } from '../audit.ts'
+import { readSurroundings } from '../revision/neighbourhood-cache.ts'
 import { writeRevision } from '../revision/write.ts'
 import { answerOf } from '../submissions/answer.ts'
 import { changesOfSubmissions, findSubmission, personOf } from '../submissions/load.ts'
@@ -24,6 +25,7 @@ export async function approve(services: Services, reader: Reader, id: number, de
   const person = personOf(reader)
   // Asked once before queueing for the lock, so that a refusal need not wait, and once more when it is ours.
   await requireTransition(services.knex, await findSubmission(services.knex, id, reader), 'approve', reader)
+  await readSurroundings(services.knex)
   await retrying(() =>
     services.knex.transaction(async (trx) => {
       await lockCatalogue(trx)

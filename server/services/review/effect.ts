@@ -3,6 +3,7 @@ import type { Effect } from '../../../core/schema/submissions.ts'
 import { StateConflict } from '../../http/errors.ts'
 import type { Reader, Services } from '../../http/route.ts'
 import { effectOf } from '../revision/effect.ts'
+import { readSurroundings } from '../revision/neighbourhood-cache.ts'
 import { contentHash, contentOf } from '../submissions/content.ts'
 import { changesOfSubmissions, findSubmission } from '../submissions/load.ts'
 import { carryOut } from './carry-out.ts'
@@ -26,6 +27,7 @@ export async function effectOfSubmission(services: Services, reader: Reader, id:
   }
   const changes = await changesOfSubmissions(services.knex, [id])
   const hash = contentHash(contentOf(row, changes))
+  await readSurroundings(services.knex)
   try {
     await retrying(() =>
       services.knex.transaction(async (trx) => {

@@ -49,6 +49,15 @@ export async function surroundingsAt(trx: Knex, revision: number): Promise<Surro
   return fresh
 }
 
+/**
+ * Reads the surroundings of the newest revision, or brings them up to it, before the catalogue's lock is asked for: the first approval of a
+ * process would else hold up the others for as long as reading the whole catalogue takes.
+ */
+export async function readSurroundings(knex: Knex): Promise<void> {
+  const newest = (await knex('revisions').max('number as number').first()) as { number: number | null } | undefined
+  if (newest?.number != null) await surroundingsAt(knex, newest.number)
+}
+
 interface Maker {
   /** Tells a revision from another that got the same number after a rollback or a restore. */
   madeBy: string
