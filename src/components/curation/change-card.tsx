@@ -1,10 +1,11 @@
 import type { ReactNode } from 'react'
-import { quantity } from '../../../core/quantities.ts'
+import { quantityNamed } from '../../../core/quantities.ts'
 import type { ChangeAnswer } from '../../../core/schema/submissions.ts'
 import { paths } from '../../paths.ts'
 import { CheckMark } from '../badge.tsx'
 import { Link } from '../link.tsx'
 import { Missing } from '../measure.tsx'
+import { ScrollAcross } from '../scroll-across.tsx'
 import { Sheet } from '../sheet.tsx'
 import { ConflictTable } from './conflict-table.tsx'
 
@@ -46,7 +47,7 @@ export function ChangeCard({ change, number, of, actions, selected, children }: 
       actions={actions}
     >
       {change.standing ? <StandingTable standing={change.standing} /> : null}
-      {change.diff.length > 0 && <DiffTable diff={change.diff} isAddition={change.diff.every((d) => d.before === null)} />}
+      <Diff change={change} />
       {change.checks.length > 0 && (
         <ul className="mt-4 grid gap-1.5" aria-label="Automatic checks">
           {change.checks.map((c) => (
@@ -63,10 +64,9 @@ export function ChangeCard({ change, number, of, actions, selected, children }: 
 }
 
 function StandingTable({ standing }: { standing: NonNullable<ChangeAnswer['standing']> }) {
-  const q = quantity(standing.quantity)
-  const isDistance = q.adoption === 'distance'
+  const isDistance = quantityNamed(standing.quantity)?.adoption === 'distance'
   return (
-    <div className="mb-4 overflow-x-auto">
+    <ScrollAcross label="Where the value stands" className="mb-4">
       <table className="w-full min-w-[34rem] border-collapse figures">
         <thead className="text-left text-sm text-muted">
           <tr className="border-b border-line">
@@ -95,13 +95,26 @@ function StandingTable({ standing }: { standing: NonNullable<ChangeAnswer['stand
           </tr>
         </tbody>
       </table>
-    </div>
+    </ScrollAcross>
+  )
+}
+
+/** What differs, field by field. Of a new measurement the table above says most, so its fields are folded. */
+function Diff({ change: { diff, standing } }: { change: ChangeAnswer }) {
+  const isAddition = diff.every((d) => d.before === null)
+  if (diff.length === 0) return null
+  if (!standing || !isAddition) return <DiffTable diff={diff} isAddition={isAddition} />
+  return (
+    <details>
+      <summary className="w-fit cursor-pointer text-sm text-muted hover:text-ink">All {diff.length} fields as entered</summary>
+      <div className="mt-2"><DiffTable diff={diff} isAddition /></div>
+    </details>
   )
 }
 
 function DiffTable({ diff, isAddition }: { diff: ChangeAnswer['diff']; isAddition: boolean }) {
   return (
-    <div className="overflow-x-auto">
+    <ScrollAcross label="What differs">
       <table className="w-full border-collapse figures">
         <thead className="text-left text-sm text-muted">
           <tr className="border-b border-line">
@@ -120,6 +133,6 @@ function DiffTable({ diff, isAddition }: { diff: ChangeAnswer['diff']; isAdditio
           ))}
         </tbody>
       </table>
-    </div>
+    </ScrollAcross>
   )
 }

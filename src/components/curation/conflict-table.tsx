@@ -1,10 +1,11 @@
 import type { Conflict } from '../../../core/problem.ts'
+import { ScrollAcross } from '../scroll-across.tsx'
 
 /** Where the ground moved under a change: what it was made from, what holds now and by whom, what it proposes. */
 export function ConflictTable({ conflicts }: { conflicts: readonly Conflict[] }) {
   const words = (value: Conflict['base']): string => (value === null ? 'nothing' : String(value))
   return (
-    <div className="mt-4 overflow-x-auto rounded-md border border-caution bg-caution-soft p-3">
+    <ScrollAcross label="Conflicts" className="mt-4 rounded-md border border-caution bg-caution-soft p-3">
       <p className="font-semibold">The catalogue has moved on since this was written</p>
       <table className="mt-2 w-full border-collapse figures text-sm">
         <thead className="text-left">
@@ -28,6 +29,6 @@ export function ConflictTable({ conflicts }: { conflicts: readonly Conflict[] })
           ))}
         </tbody>
       </table>
-    </div>
+    </ScrollAcross>
   )
 }

@@ -1,27 +1,29 @@
-import { columnOf } from '../../../core/columns.ts'
+import { useState } from 'react'
 import type { Effect } from '../../../core/schema/submissions.ts'
-import { formatCounted, formatNumber, formatSigned, unitText } from '../../lib/format.ts'
+import { formatCounted, formatSigned } from '../../lib/format.ts'
 import { paths } from '../../paths.ts'
+import { Button } from '../button.tsx'
 import { Link } from '../link.tsx'
 import { Missing } from '../measure.tsx'
+import { ScrollAcross } from '../scroll-across.tsx'
+import { arrivalWords, effectSentence, isFirst, namesIn, shiftWords, valueWords, type Moved, type MovedGalaxy } from './effect-words.ts'
 
-type Value = Effect['galaxies'][number]['changes'][number]['before']
-
-/** So many galaxies are listed one by one; of the rest only the count is said. */
-const LISTED = 60
+/** So many galaxies are listed at a time. */
+const LISTED = 40
 
 /** What approving would do: every adopted and derived value that would differ, before beside after. */
 export function EffectView({ effect }: { effect: Effect }) {
-  const { counts } = effect
+  const [listed, setListed] = useState(LISTED)
+  const names = namesIn(effect)
   if (effect.galaxies.length === 0 && effect.systems.length === 0) {
     return <p className="text-muted">No adopted or derived value would change.</p>
   }
-  const listed = effect.galaxies.slice(0, LISTED)
+  const rest = effect.galaxies.length - listed
   return (
     <div>
-      <p className="mb-3">{sentence(counts)}</p>
-      <div className="overflow-x-auto">
-        <table className="w-full min-w-[36rem] border-collapse figures">
+      <p className="mb-3">{effectSentence(effect.counts)}</p>
+      <ScrollAcross label="Effect, value by value">
+        <table className="w-full border-collapse figures">
           <thead className="text-left text-sm text-muted">
             <tr className="border-b border-line">
               <th scope="col" className="py-1.5 pr-3 font-semibold">galaxy</th>
@@ -31,67 +33,101 @@ export function EffectView({ effect }: { effect: Effect }) {
               <th scope="col" className="py-1.5 pl-3 text-right font-semibold">shift</th>
             </tr>
           </thead>
-          <tbody>
-            {listed.flatMap((g) =>
-              g.changes.map((c, i) => (
-                <tr key={`${g.slug} ${c.column}`} className="border-b border-line">
-                  <th scope="row" className="py-1.5 pr-3 text-left font-normal">
-                    {i === 0 ? (
-                      <>
-                        {g.kind === 'added' ? g.name : <Link to={paths.galaxy(g.slug)} look="quiet">{g.name}</Link>}
-                        {g.kind === 'added' && <span className="ml-2 text-sm text-accent">new</span>}
-                      </>
-                    ) : (
-                      <span className="sr-only">{g.name}</span>
-                    )}
-                  </th>
-                  <td className="px-3 py-1.5 text-muted">{c.label}</td>
-                  <td className="px-3 py-1.5 text-right">{c.before === null ? <Missing /> : <del className="text-muted">{words(c.column, c.before, c.unit)}</del>}</td>
-                  <td className="px-3 py-1.5 text-right font-semibold">{c.after === null ? <Missing /> : words(c.column, c.after, c.unit)}</td>
-                  <td className="py-1.5 pl-3 text-right">{shift(c.column, c.before, c.after)}</td>
+          {effect.systems.length > 0 && (
+            <tbody>
+              {effect.systems.map((s) => (
+                <tr key={s.slug} className="border-b border-line align-top">
+                  <th scope="row" className="py-1.5 pr-3 text-left font-normal whitespace-nowrap">{s.name} system</th>
+                  <td className="px-3 py-1.5 text-muted">
+                    satellites
+                    <span className="block text-sm">
+                      {s.gained.length > 0 && `gains ${listOf(s.gained)}`}
+                      {s.gained.length > 0 && s.lost.length > 0 && '; '}
+                      {s.lost.length > 0 && `loses ${listOf(s.lost)}`}
+                    </span>
+                  </td>
+                  <td className="px-3 py-1.5 text-right"><del className="text-muted">{s.before}</del></td>
+                  <td className="px-3 py-1.5 text-right font-semibold">{s.after}</td>
+                  <td className="py-1.5 pl-3 text-right">{formatSigned(s.after - s.before, 0)}</td>
                 </tr>
-              )),
-            )}
-            {effect.systems.map((s) => (
-              <tr key={`system ${s.slug}`} className="border-b border-line">
-                <th scope="row" className="py-1.5 pr-3 text-left font-normal">{s.name} system</th>
-                <td className="px-3 py-1.5 text-muted">
-                  satellites
-                  <span className="block text-sm">
-                    {s.gained.length > 0 && `gains ${s.gained.join(', ')}`}
-                    {s.gained.length > 0 && s.lost.length > 0 && '; '}
-                    {s.lost.length > 0 && `loses ${s.lost.join(', ')}`}
-                  </span>
-                </td>
-                <td className="px-3 py-1.5 text-right"><del className="text-muted">{s.before}</del></td>
-                <td className="px-3 py-1.5 text-right font-semibold">{s.after}</td>
-                <td className="py-1.5 pl-3 text-right">{formatSigned(s.after - s.before, 0)}</td>
-              </tr>
-            ))}
-          </tbody>
+              ))}
+            </tbody>
+          )}
+          {effect.galaxies.slice(0, listed).map((g) => (g.kind === 'added' ? <Arrival key={g.slug} galaxy={g} names={names} /> : <Moves key={g.slug} galaxy={g} names={names} />))}
         </table>
-      </div>
-      {effect.galaxies.length > LISTED && <p className="mt-3 text-muted">and {formatCounted(effect.galaxies.length - LISTED, 'more galaxy', 'more galaxies')}.</p>}
+      </ScrollAcross>
+      {rest > 0 && (
+        <div className="mt-3">
+          <Button size="small" onPress={() => setListed(listed + 5 * LISTED)}>Show {formatCounted(Math.min(rest, 5 * LISTED), 'more galaxy', 'more galaxies')}</Button>
+        </div>
+      )}
     </div>
   )
 }
 
-function sentence(counts: Effect['counts']): string {
-  const parts = [
-    counts.measurements > 0 && formatCounted(counts.measurements, 'measurement'),
-    counts.galaxiesAdded > 0 && `${formatCounted(counts.galaxiesAdded, 'galaxy', 'galaxies')} added`,
-    counts.galaxiesChanged > 0 && `${formatCounted(counts.galaxiesChanged, 'galaxy', 'galaxies')} changed`,
-    counts.hostsChanged > 0 && `${formatCounted(counts.hostsChanged, 'galaxy', 'galaxies')} with another host`,
-  ].filter((p): p is string => p !== false)
-  return parts.length === 0 ? 'Nothing would change.' : `${parts.join(', ')}.`
+const MOST_NAMED = 8
+
+function listOf(names: readonly string[]): string {
+  const more = names.length - MOST_NAMED
+  return `${names.slice(0, MOST_NAMED).join(', ')}${more > 0 ? ` and ${more} more` : ''}`
 }
 
-function words(column: string, value: Value, unit: string): string {
-  if (typeof value !== 'number') return String(value)
-  const text = formatNumber(value, columnOf(column)?.decimals ?? 2)
-  return unit ? `${text}\u202f${unitText(unit)}` : text
+interface Props {
+  galaxy: MovedGalaxy
+  names: ReadonlyMap<string, string>
 }
 
-function shift(column: string, before: Value, after: Value): string {
-  return typeof before === 'number' && typeof after === 'number' ? formatSigned(after - before, columnOf(column)?.decimals ?? 2) : ''
+function Arrival({ galaxy, names }: Props) {
+  return (
+    <tbody>
+      <tr className="border-b border-line">
+        <th scope="row" className="py-1.5 pr-3 text-left font-normal whitespace-nowrap">{galaxy.name}</th>
+        <td className="px-3 py-1.5 text-accent">new</td>
+        <td colSpan={3} className="px-3 py-1.5 text-right font-semibold">{arrivalWords(galaxy, names)}</td>
+      </tr>
+    </tbody>
+  )
+}
+
+function Moves({ galaxy, names }: Props) {
+  const [all, setAll] = useState(false)
+  const first = galaxy.changes.filter(isFirst)
+  // Where nothing of the first kind moves, what does move is shown straight away.
+  const rest = first.length === 0 ? [] : galaxy.changes.filter((c) => !isFirst(c))
+  const shown = first.length === 0 || all ? galaxy.changes : first
+  return (
+    <tbody>
+      {shown.map((change, i) => (
+        <tr key={change.column} className={i === shown.length - 1 && rest.length === 0 ? 'border-b border-line' : 'border-b border-line/60'}>
+          <th scope="row" className="py-1.5 pr-3 text-left font-normal whitespace-nowrap">
+            {i === 0 ? <Link to={paths.galaxy(galaxy.slug)} look="quiet">{galaxy.name}</Link> : <span className="sr-only">{galaxy.name}</span>}
+          </th>
+          <Values change={change} names={names} />
+        </tr>
+      ))}
+      {rest.length > 0 && (
+        <tr className="border-b border-line">
+          <td />
+          <td colSpan={4} className="px-3 py-1">
+            <button type="button" aria-expanded={all} onClick={() => setAll(!all)} className="min-h-6 text-sm text-muted underline underline-offset-2 hover:text-ink">
+              {all ? 'Fewer' : `${formatCounted(rest.length, 'further value')}`}
+              <span className="sr-only"> of {galaxy.name}</span>
+            </button>
+          </td>
+        </tr>
+      )}
+    </tbody>
+  )
+}
+
+function Values({ change, names }: { change: Moved; names: ReadonlyMap<string, string> }) {
+  const { column, label, unit, before, after } = change
+  return (
+    <>
+      <td className="px-3 py-1.5 text-muted">{label}</td>
+      <td className="px-3 py-1.5 text-right">{before === null ? <Missing /> : <del className="text-muted">{valueWords(column, before, unit, names)}</del>}</td>
+      <td className="px-3 py-1.5 text-right font-semibold">{after === null ? <Missing /> : valueWords(column, after, unit, names)}</td>
+      <td className="py-1.5 pl-3 text-right">{shiftWords(change)}</td>
+    </>
+  )
 }

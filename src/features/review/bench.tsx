@@ -74,7 +74,7 @@ export function Bench({ submission, queue, onReread }: BenchProps) {
   }
 
   return (
-    <div className="grid min-w-0 gap-5">
+    <div className="grid min-w-0 grid-cols-[minmax(0,1fr)] gap-5">
       <header>
         <div className="flex flex-wrap items-start justify-between gap-x-6 gap-y-3">
           <h1 ref={heading} tabIndex={-1} className="min-w-0 text-xl tracking-[-0.01em] outline-none sm:text-2xl">{submission.title}</h1>

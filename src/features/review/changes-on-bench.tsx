@@ -41,7 +41,7 @@ export function ChangesOnBench({ items, at, onAt }: Props) {
   const cautions = items.flatMap((change, i) => (worstOf(change) === 'ok' ? [] : [i]))
   const nextCaution = cautions.find((i) => i > at) ?? cautions[0]
   return (
-    <section aria-label="Changes" className="grid min-w-0 gap-3">
+    <section aria-label="Changes" className="grid min-w-0 grid-cols-[minmax(0,1fr)] gap-3">
       {items.length > 1 && (
         <div className="rounded-lg border border-line bg-sheet">
           <div className="flex flex-wrap items-center justify-between gap-2 border-b border-line px-4 py-2">
@@ -58,7 +58,7 @@ export function ChangesOnBench({ items, at, onAt }: Props) {
               <IconButton label="Next change" keys="j" size="small" icon={<ChevronRight size={16} aria-hidden />} isDisabled={at === items.length - 1} onPress={() => onAt(at + 1)} />
             </span>
           </div>
-          <ol className="max-h-44 overflow-y-auto py-1">
+          <ol className="relative max-h-44 overflow-y-auto py-1">
             {items.map((change, i) => (
               <ListedChange key={change.id} change={change} isOpen={i === at} onOpen={() => onAt(i)} />
             ))}
@@ -75,7 +75,9 @@ export function ChangesOnBench({ items, at, onAt }: Props) {
 function ListedChange({ change, isOpen, onOpen }: { change: ChangeAnswer; isOpen: boolean; onOpen: () => void }) {
   const row = useRef<HTMLButtonElement>(null)
   useEffect(() => {
-    if (isOpen) row.current?.scrollIntoView({ block: 'nearest' })
+    const list = row.current?.closest('ol')
+    // Only the list scrolls; the page stays where the reader has it.
+    if (isOpen && row.current && list) list.scrollTop = Math.max(0, row.current.offsetTop - list.clientHeight / 2)
   }, [isOpen])
   const mark = MARKS[worstOf(change)]
   return (

@@ -65,7 +65,7 @@ function Desk({ id }: { id: string | undefined }) {
   }
   return (
     <div className="page">
-      <div className="grid items-start gap-6 lg:grid-cols-[17rem_minmax(0,1fr)] xl:grid-cols-[20rem_minmax(0,1fr)]">
+      <div className="grid grid-cols-[minmax(0,1fr)] items-start gap-6 lg:grid-cols-[17rem_minmax(0,1fr)] xl:grid-cols-[20rem_minmax(0,1fr)]">
         <Queue queue={queue} open={open} />
         <OnTheBench key={open} id={open} queue={queue} />
       </div>
