@@ -1,4 +1,4 @@
-import { beforeAll, describe, expect, it } from 'vitest'
+import { beforeAll, describe, expect, it, vi } from 'vitest'
 import sharp from 'sharp'
 import { figureListSchema, figureSchema } from '../../core/schema/figures.ts'
 import { figureRecipeSchema } from '../../core/figure/recipe.ts'
@@ -6,6 +6,9 @@ import { makeRevision, placeGalaxy } from './harness/catalogue-rows.ts'
 import type { Client } from './harness/client.ts'
 import { addPerson } from './harness/people.ts'
 import { useServer } from './harness/server.ts'
+
+// The first picture waits for its thread to start.
+vi.setConfig({ testTimeout: 90_000 })
 
 const server = useServer({
   fill: async (knex) => {

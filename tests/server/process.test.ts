@@ -1,11 +1,14 @@
 import { spawn, type ChildProcess } from 'node:child_process'
 import { once } from 'node:events'
 import { connect } from 'node:net'
-import { afterEach, describe, expect, it } from 'vitest'
+import { afterEach, describe, expect, it, vi } from 'vitest'
 import { findFreePort } from '../../scripts/postgres/postmaster.mjs'
 import type { Problem } from '../../core/problem.ts'
 import { administer, databaseName } from './harness/cluster.ts'
 import { useTestDatabase } from './harness/database.ts'
+
+// Starting a whole server takes seconds on a busy machine.
+vi.setConfig({ testTimeout: 90_000 })
 
 const database = useTestDatabase()
 const children: ChildProcess[] = []

@@ -54,7 +54,8 @@ describe('every write, by somebody who may', () => {
     expect(await footprint(server().knex)).toBe(before)
     // Signing out would end the session of the next test.
     if (walked.path === '/api/session') return
-    for (const headers of [{}, { 'origin': client.base, 'sec-fetch-site': 'same-origin' }, { 'sec-fetch-site': 'none' }, { 'origin': 'https://atlas.example', 'sec-fetch-site': 'same-origin' }]) {
+    const own: Record<string, string>[] = [{}, { 'origin': client.base, 'sec-fetch-site': 'same-origin' }, { 'sec-fetch-site': 'none' }, { 'origin': 'https://atlas.example', 'sec-fetch-site': 'same-origin' }]
+    for (const headers of own) {
       const answer = await client.send(walked.method, walked.address, { ...body, headers })
       expect([400, 404, 415], `${title}: ${answer.text.slice(0, 200)}`).toContain(answer.status)
     }
@@ -66,7 +67,7 @@ describe('every write, by somebody who may', () => {
 })
 
 describe('a visitor', () => {
-  it.each([{ 'sec-fetch-site': 'cross-site' }, { origin: 'https://elsewhere.example' }, { origin: 'null' }])('cannot be signed in by another site: %j', async (headers) => {
+  it.each<Record<string, string>>([{ 'sec-fetch-site': 'cross-site' }, { origin: 'https://elsewhere.example' }, { origin: 'null' }])('cannot be signed in by another site: %j', async (headers) => {
     const answer = await server().visitor().send('POST', '/api/session', { body: { email: emailOf('curator'), password: PASSWORD }, headers })
     answer.problem(403)
     expect(answer.headers.getSetCookie()).toEqual([])
