@@ -14,7 +14,7 @@ import { adoptGalaxies } from './adopt-galaxies.ts'
 import { adoptedDifferences, sameRow, standingRows } from './compare.ts'
 import { allGalaxies, loadScale } from './load.ts'
 import { surroundingsAt, type Surroundings } from './neighbourhood-cache.ts'
-import type { PlannedRow, RevisionPlan } from './plan.ts'
+import type { PlannedAdopted, PlannedRow, RevisionPlan } from './plan.ts'
 
 export type { RevisionPlan } from './plan.ts'
 
@@ -27,13 +27,20 @@ export interface Touched {
   scaleChanged?: boolean
 }
 
+/** Galaxies whose measurements are in memory at a time: a changed scale touches all there are. */
+const CHUNK = 2000
+
 export async function computeRevision(trx: Knex, { revision, touched, scaleChanged }: Touched): Promise<RevisionPlan> {
   const scale = await loadScale(trx)
   const surroundings = await surroundingsAt(trx, revision - 1)
   const ids = scaleChanged ? await allGalaxies(trx) : [...new Set(touched)]
-  const computed = await adoptGalaxies(trx, ids, scale)
-  const adopted = await adoptedDifferences(trx, computed)
-  const own = new Map(computed.map((c) => [c.galaxy.id, c.own]))
+  const own = new Map<number, OwnColumns>()
+  const adopted: PlannedAdopted[] = []
+  for (let i = 0; i < ids.length; i += CHUNK) {
+    const computed = await adoptGalaxies(trx, ids.slice(i, i + CHUNK), scale)
+    adopted.push(...(await adoptedDifferences(trx, computed)))
+    for (const c of computed) own.set(c.galaxy.id, c.own)
+  }
   const rows = await place(trx, own, surroundings, scale)
   return { revision, rows, adopted, before: surroundings }
 }
@@ -45,7 +52,8 @@ const MANY = 200
 async function place(trx: Knex, own: ReadonlyMap<number, OwnColumns>, before: Surroundings, scale: Scale): Promise<PlannedRow[]> {
   const moved = movedNeighbours(own, before.neighbourhood)
   const after = withChanges(before.neighbourhood, moved)
-  const affected = affectedBy(before.neighbourhood, before.places, after, new Set(moved.keys()), scale.policy.host.massRatio)
+  const everybody = before.neighbourhood.ids.every((id) => own.has(id))
+  const affected = everybody ? [] : affectedBy(before.neighbourhood, before.places, after, new Set(moved.keys()), scale.policy.host.massRatio)
   const asked = new Set([...affected, ...own.keys()])
   const relations = asked.size < MANY ? new Map([...asked].map((id) => [id, relationOf(after, id, scale.policy)])) : relationsOf(after, asked, scale.policy)
   const gains = satelliteGains(relations, before)

@@ -36,13 +36,13 @@ const anyChange = fc.tuple(fc.nat(1e6), fc.integer({ min: 2, max: 50 }), fc.nat(
 })
 
 describe('affectedBy', () => {
-  it('names everybody whose relation differs', () => {
+  it.each([['one mover after the other', 10_000], ['a search for everybody', 0]])('names everybody whose relation differs, by %s', (_way, manyMovers) => {
     fc.assert(
       fc.property(anyChange, ({ before, changes }) => {
         const was = relations(before)
         const after = withChanges(before, changes)
         const is = relations(after)
-        const affected = affectedBy(before, placesOf(before, was), after, new Set(changes.keys()), POLICY.host.massRatio)
+        const affected = affectedBy(before, placesOf(before, was), after, new Set(changes.keys()), POLICY.host.massRatio, manyMovers)
         for (const [id, relation] of is) if (!affected.has(id)) expect(relation).toEqual(was.get(id))
       }),
       { numRuns: 300 },
