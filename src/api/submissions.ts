@@ -122,7 +122,8 @@ export function useDecide(id: number | string) {
     mutationFn: ({ verdict, ...body }: Decision) => sendJson('POST', address(id, `/${verdict}`), body, submissionSchema),
     onSuccess: (submission) => {
       keep(submission)
-      if (submission.state === 'approved') void client.invalidateQueries({ predicate: (q) => q.queryKey[0] !== 'submissions' })
+      // What waits was computed on the revision before: effects, conflicts and checks of all of it are read again too.
+      if (submission.state === 'approved') void client.invalidateQueries()
     },
   })
 }

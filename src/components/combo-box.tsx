@@ -53,7 +53,8 @@ export function ComboBox({
       onInputChange={onInputChange}
       defaultFilter={onInputChange ? everything : undefined}
       allowsCustomValue={allowsCustom}
-      allowsEmptyCollection
+      // Before anything is typed into a search there is nothing to say.
+      allowsEmptyCollection={inputValue === undefined || inputValue.trim() !== ''}
       menuTrigger="focus"
       isRequired={isRequired}
       validationBehavior="aria"

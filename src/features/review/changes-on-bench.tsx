@@ -32,10 +32,12 @@ const MARKS = {
 export function ChangesOnBench({ items, at, onAt }: Props) {
   const open = items[at]
   const card = useRef<HTMLDivElement>(null)
-  const first = useRef(true)
+  const before = useRef(at)
   useEffect(() => {
-    if (!first.current) card.current?.focus({ preventScroll: false })
-    first.current = false
+    if (before.current === at) return
+    before.current = at
+    card.current?.focus({ preventScroll: true })
+    card.current?.scrollIntoView({ block: 'nearest' })
   }, [at])
   if (!open) return null
   const cautions = items.flatMap((change, i) => (worstOf(change) === 'ok' ? [] : [i]))

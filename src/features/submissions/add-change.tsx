@@ -28,7 +28,7 @@ export function AddChange({ submission, action, onAction }: AddChangeProps) {
     <Sheet title={offered?.title ?? 'Add a change'} actions={open && <Button size="small" onPress={() => onAction(null)}>Close</Button>}>
       <div className="flex flex-wrap gap-2" role="group" aria-label="Kinds of change">
         {OFFERED.map((o) => (
-          <Button key={o.action} size="small" kind={o.action === open ? 'primary' : 'quiet'} onPress={() => onAction(o.action)}>{o.label}</Button>
+          <Button key={o.action} size="small" aria-pressed={o.action === open} className={o.action === open ? 'border-accent text-accent' : undefined} onPress={() => onAction(o.action)}>{o.label}</Button>
         ))}
       </div>
       {open && (

@@ -31,7 +31,7 @@ export function ChangeList({ submission }: { submission: SubmissionAnswer }) {
         }),
     })
   return (
-    <section aria-label="Changes" className="grid gap-5">
+    <section aria-label="Changes" className="grid min-w-0 grid-cols-[minmax(0,1fr)] gap-5">
       {remove.isError && <ProblemNote error={remove.error} />}
       {restore.isError && <ProblemNote error={restore.error} />}
       {items.slice(0, shown).map((change, i) => (

@@ -66,14 +66,14 @@ function SubmissionView({ submission }: { submission: SubmissionAnswer }) {
           <p className="prose-measure whitespace-pre-line">{submission.decisionNote}</p>
         </div>
       )}
-      <div className="grid grid-cols-[minmax(0,1fr)] items-start gap-5 lg:grid-cols-[minmax(0,1fr)_24rem]">
+      <div className="grid grid-cols-[minmax(0,1fr)] items-start gap-5 lg:grid-cols-[minmax(0,1fr)_20rem]">
         <div className="grid min-w-0 grid-cols-[minmax(0,1fr)] gap-5">
           {may.edit ? <SummaryEditor submission={submission} /> : submission.summary && <Sheet title="Summary"><p className="prose-measure whitespace-pre-line">{submission.summary}</p></Sheet>}
           <ChangeList submission={submission} />
           {may.edit && <AddChange submission={submission} action={adding} onAction={(action) => setSearch(action ? { add: action } : {}, { replace: true })} />}
+          <EffectSheet submission={submission} />
         </div>
         <div className="grid min-w-0 grid-cols-[minmax(0,1fr)] gap-5">
-          <EffectSheet submission={submission} />
           {submission.overlaps.length > 0 && (
             <Sheet title="Also being changed">
               <ul className="grid gap-2">
@@ -86,7 +86,7 @@ function SubmissionView({ submission }: { submission: SubmissionAnswer }) {
               </ul>
             </Sheet>
           )}
-          <Sheet title="Talk"><Remarks submission={submission} /></Sheet>
+          <Sheet title="Remarks"><Remarks submission={submission} /></Sheet>
           <Sheet title="What happened"><Timeline entries={submission.timeline} /></Sheet>
         </div>
       </div>

@@ -16,6 +16,9 @@ import { useDocumentTitle } from '../../lib/document-title.ts'
 import { formatAge, formatCounted } from '../../lib/format.ts'
 import { paths } from '../../paths.ts'
 
+/** Only these are checked: of what has been decided on, checks are history. */
+const OPEN: readonly string[] = ['draft', 'submitted', 'returned']
+
 const COLUMNS: readonly DataColumn<SubmissionSummary>[] = [
   { key: 'title', header: 'Submission', text: (s) => s.title, render: (s) => <Link to={paths.submission(s.id)}>{s.title}</Link>, sortable: true, width: 320 },
   { key: 'state', header: 'State', text: (s) => s.state, render: (s) => <StateBadge state={s.state} />, sortable: true, width: 130 },
@@ -25,7 +28,8 @@ const COLUMNS: readonly DataColumn<SubmissionSummary>[] = [
     render: (s) =>
       s.conflicts > 0 ? <Badge tone="stop" shape="cross">{formatCounted(s.conflicts, 'conflict')}</Badge>
       : s.cautions > 0 ? <Badge tone="caution" shape="mark">{formatCounted(s.cautions, 'caution')}</Badge>
-      : <Badge tone="good" shape="tick">in order</Badge>,
+      : OPEN.includes(s.state) ? <Badge tone="good" shape="tick">in order</Badge>
+      : <span className="text-muted">decided</span>,
   },
   { key: 'author', header: 'Author', text: (s) => s.author.name, sortable: true, width: 150 },
   { key: 'updatedAt', header: 'Last touched', text: (s) => s.updatedAt, render: (s) => formatAge(s.updatedAt), sortable: true, width: 130 },
