@@ -1,4 +1,4 @@
-import { useId, useLayoutEffect, useMemo, useRef, useState, useSyncExternalStore, type KeyboardEvent, type PointerEvent } from 'react'
+import { useEffect, useId, useLayoutEffect, useMemo, useRef, useState, useSyncExternalStore, type KeyboardEvent, type PointerEvent } from 'react'
 import type { FigureGalaxy } from '../../../core/figure/galaxy.ts'
 import type { FigureRecipe } from '../../../core/figure/recipe.ts'
 import { sceneOf } from '../../../core/figure/scene-of.ts'
@@ -65,18 +65,25 @@ export function MapCanvas({ galaxies, recipe, selected, onSelect, onOpen, label 
     if (!box || scale === 0) return null
     return hitAt(scene.hits, (event.clientX - box.left) / scale, (event.clientY - box.top) / scale, reachPx / scale)
   }
+  // Keys may come faster than the page's state follows: the walk goes on from where it has got to.
+  const walkedTo = useRef(selected)
+  useEffect(() => {
+    walkedTo.current = selected
+  }, [selected])
   const choose = (hit: Hit | null): void => {
+    walkedTo.current = hit?.slug ?? null
     onSelect(hit?.slug ?? null)
     const galaxy = hit && bySlug.get(hit.slug)
     if (galaxy) announce(hoverWords(galaxy))
   }
   function onKeyDown(event: KeyboardEvent): void {
     const direction = directionOf(event.key)
-    const brightest = scene.hits[0]
-    if (direction) choose(chosen ? (nextHit(scene.hits, chosen, direction) ?? chosen) : (brightest ?? null))
-    else if (event.key === 'Home') choose(brightest ?? null)
-    else if (event.key === 'Enter' && chosen) onOpen?.(chosen.slug)
-    else if (event.key === 'Escape' && chosen) choose(null)
+    const brightest = scene.hits[0] ?? null
+    const from = scene.hits.find((hit) => hit.slug === walkedTo.current)
+    if (direction) choose(from ? (nextHit(scene.hits, from, direction) ?? from) : brightest)
+    else if (event.key === 'Home') choose(brightest)
+    else if (event.key === 'Enter' && from) onOpen?.(from.slug)
+    else if (event.key === 'Escape' && from) choose(null)
     else return
     event.preventDefault()
   }

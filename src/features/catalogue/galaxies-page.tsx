@@ -30,7 +30,7 @@ import { NameSearch } from './name-search.tsx'
 import { NoGalaxies } from './no-galaxies.tsx'
 
 /** More than the table draws at once, so that a page is asked for before the reader reaches the end. */
-const PAGE_ROWS = 300
+const PAGE_ROWS = 240
 
 const copyLink = (): void => void copyText(window.location.href, 'the link to this table')
 
