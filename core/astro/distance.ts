@@ -34,7 +34,7 @@ export function distanceWithErrors(modulus: Mag, plus: Mag, minus: Mag = plus): 
   requireWithin(plus, 0, Number.MAX_VALUE, 'upper error (mag)')
   requireWithin(minus, 0, Number.MAX_VALUE, 'lower error (mag)')
   const value = distanceOf(modulus)
-  return { value, plus: value * (10 ** (plus / 5) - 1), minus: value * (1 - 10 ** (-minus / 5)) }
+  return { value, plus: value * (10 ** (plus / 5) - 1), minus: value * (1 - 1 / 10 ** (minus / 5)) }
 }
 
 /** The modulus of a distance with its errors, through the exact map. @throws RangeError when the lower bound is not above 0 */
