@@ -25,7 +25,8 @@ export function useDeleteFigure() {
   const client = useQueryClient()
   return useMutation({
     mutationFn: (id: number) => sendJson('DELETE', `/api/figures/${id}`, undefined, null),
-    onSuccess: () => client.invalidateQueries({ queryKey: keys.figures.all }),
+    // Not the figure itself: its page may still be open for a moment, and would ask for what is gone.
+    onSuccess: () => client.invalidateQueries({ queryKey: keys.figures.list() }),
   })
 }
 

@@ -64,7 +64,7 @@ export default function GalaxiesPage() {
     <div className="page">
       <PageHeader
         title="Galaxies"
-        aside={total !== undefined && <Aside total={total} revision={list.data?.pages[0]?.revision} />}
+        aside={total !== undefined && <Aside total={total} revision={list.data?.pages[0]?.revision} at={filter.at} />}
         actions={
           <>
             <Link look="button" to={withQuery(paths.sky, Object.fromEntries(new URLSearchParams(choiceOf(filter))))}>
@@ -136,9 +136,10 @@ function countWords(loaded: number, total: number | undefined): string | undefin
 }
 
 /** How many, and which state of the catalogue they are read from. */
-function Aside({ total, revision }: { total: number; revision: number | undefined }) {
-  const release = useSummary().data?.release
-  const state = revision === undefined ? '' : release?.revision === revision ? ` · release ${release.label}` : ` · revision ${revision}`
+function Aside({ total, revision, at }: { total: number; revision: number | undefined; at: string | null }) {
+  const newest = useSummary().data?.release
+  const release = at !== null && !/^\d+$/.test(at) ? at : newest?.revision === revision ? newest?.label : undefined
+  const state = release !== undefined ? ` · release ${release}` : revision !== undefined ? ` · revision ${revision}` : ''
   return `${formatCounted(total, 'galaxy', 'galaxies')}${state}`
 }
 

@@ -63,10 +63,11 @@ export function Studio({ figure, recipe: kept }: { figure: Figure; recipe: Figur
   const remove = (): void =>
     deleting.mutate(figure.id, {
       onSuccess: () => {
+        // By then this page is gone: what is asked of a mutation by callback would go unheard.
         const undo = (): void =>
-          restoring.mutate(
-            { title: figure.title, shared: figure.shared, recipe: kept },
-            { onSuccess: (made) => void navigate(paths.figure(made.id)), onError: () => notify('The figure could not be brought back. Try again from the atlas: Export, Keep.', { tone: 'stop' }) },
+          void restoring.mutateAsync({ title: figure.title, shared: figure.shared, recipe: kept }).then(
+            (made) => navigate(paths.figure(made.id)),
+            () => notify('The figure could not be brought back. Nothing else is lost: draw it in the atlas and keep it again.', { tone: 'stop' }),
           )
         notify(`Deleted “${figure.title}”.`, { action: { label: 'Undo', onPress: undo }, seconds: UNDO_SECONDS })
         leave(paths.figures)
