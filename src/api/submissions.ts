@@ -122,8 +122,9 @@ export function useDecide(id: number | string) {
     mutationFn: ({ verdict, ...body }: Decision) => sendJson('POST', address(id, `/${verdict}`), body, submissionSchema),
     onSuccess: (submission) => {
       keep(submission)
-      // What waits was computed on the revision before: effects, conflicts and checks of all of it are read again too.
-      if (submission.state === 'approved') void client.invalidateQueries()
+      // What waits was computed on the revision before: effects, conflicts and checks of all other submissions are read again too.
+      const isOfThis = ([resource, part, of]: readonly unknown[]): boolean => resource === 'submissions' && part === 'one' && String(of) === String(id)
+      if (submission.state === 'approved') void client.invalidateQueries({ predicate: (q) => !isOfThis(q.queryKey) })
     },
   })
 }

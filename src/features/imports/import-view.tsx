@@ -38,7 +38,7 @@ export function ImportView({ id, held }: { id: string; held: ImportAnswer }) {
         actions={held.submission !== null && <Link look="button" to={paths.submission(held.submission)}>Open submission {held.submission}</Link>}
       />
       <Counts held={held} isReading={patch.isPending} />
-      <div className="grid gap-5">
+      <div className="grid grid-cols-[minmax(0,1fr)] gap-5">
         <MappingEditor held={held} mapping={mapping} onChange={change} error={patch.error} isReading={patch.isPending} />
         <ConstantsEditor mapping={mapping} onChange={change} error={patch.error} />
         <RowsList id={id} held={held} mapping={mapping} />

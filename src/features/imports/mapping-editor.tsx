@@ -22,7 +22,7 @@ export function MappingEditor({ held, mapping, onChange, error, isReading }: Pro
     <Sheet title="What the columns hold" actions={<span role="status" className="text-sm text-muted">{isReading ? 'Reading the rows …' : ''}</span>}>
       <p className="prose-measure mb-3 text-muted">Guessed from the head line. Correct what is wrong: every row is read again at once.</p>
       {error !== null && <div className="mb-3"><ProblemNote error={error} safe="Your choices are kept on this page." /></div>}
-      <ul className="grid gap-px overflow-hidden rounded-md border border-line bg-line md:grid-cols-2 2xl:grid-cols-3">
+      <ul className="grid grid-cols-[minmax(0,1fr)] gap-px overflow-hidden rounded-md border border-line bg-line md:grid-cols-[repeat(2,minmax(0,1fr))] 2xl:grid-cols-[repeat(3,minmax(0,1fr))]">
         {held.headers.map((header, i) => (
           <MappedColumn
             key={`${header} ${String(i)}`}
