@@ -27,7 +27,8 @@ export function useAtlas(view: View) {
   const open = useCallback((slug: string) => void navigate(withQuery(paths.galaxy(slug), { at })), [navigate, at])
   const changeRecipe = useCallback((next: FigureRecipe) => changeOwn(writeRecipe(next), true), [changeOwn])
   const chips = filterChips(filter, labels)
-  const aside = data.revision === null ? undefined : `${formatCounted(data.galaxies.length, 'galaxy', 'galaxies')} · ${/^revision/.test(data.releaseLabel) ? data.releaseLabel : `release ${data.releaseLabel}`}`
+  // Words from the start, so that nothing moves when the galaxies are there.
+  const aside = data.revision === null ? 'reading the galaxies' : `${formatCounted(data.galaxies.length, 'galaxy', 'galaxies')} · ${/^revision/.test(data.releaseLabel) ? data.releaseLabel : `release ${data.releaseLabel}`}`
   return { ...catalogue, usable, query, data, facets: facets.data, labels, recipe, changeRecipe, selected, select, open, chips, aside, sentence: chips.length > 0 ? describeFilter(filter, labels) : 'All galaxies' }
 }
 
