@@ -3,12 +3,12 @@ import { classLabel, type GalaxyClass } from '../classes.ts'
 import { COLUMNS, columnOf, type Column } from '../columns.ts'
 import { labelInSentence, numberWords } from '../formats/measure-words.ts'
 import { METHODS } from '../methods.ts'
+import { GAP } from '../spaces.ts'
 import type { Condition, Filter, Range } from './filter.ts'
 
 /** Names of galaxies by their slugs, for hosts and centres; a slug without one is shown as it is. */
 export type FilterLabels = Readonly<Record<string, string>>
 
-const THIN = '\u202f'
 const MAGNITUDES = COLUMNS.filter((c) => /^(phot\.mag|phys\.magAbs);em/.test(c.ucd) || c.key === 'mu_half').map((c) => c.key)
 const PROPER = /^(Galactic|Local|CMB)\b/
 
@@ -32,10 +32,10 @@ export function inList(words: readonly string[], last: 'or' | 'and'): string {
   return `${words.slice(0, -1).join(', ')} ${last} ${words.at(-1) ?? ''}`
 }
 
-const UNIT_WORDS: Readonly<Record<string, string>> = { deg: '°', mag: '', 'mag/arcsec**2': `${THIN}mag/arcsec²`, 'Jy.km/s': `${THIN}Jy${THIN}km/s` }
+const UNIT_WORDS: Readonly<Record<string, string>> = { deg: '°', mag: '', 'mag/arcsec**2': `${GAP}mag/arcsec²`, 'Jy.km/s': `${GAP}Jy${GAP}km/s` }
 
 function withUnit(text: string, { unit }: Column): string {
-  return text + (UNIT_WORDS[unit] ?? (unit === '' ? '' : THIN + unit))
+  return text + (UNIT_WORDS[unit] ?? (unit === '' ? '' : GAP + unit))
 }
 
 /** A range of numbers in words: "2 to 5 Mpc", "brighter than −10", "at least 3". */
@@ -71,7 +71,7 @@ export function coneWords({ ra, dec, radius }: NonNullable<Filter['cone']>): str
 }
 
 export function withinWords({ host, radius }: NonNullable<Filter['within']>, labels: FilterLabels): string {
-  return `within ${numberWords(radius, 0)}${THIN}kpc of ${labels[host] ?? host}`
+  return `within ${numberWords(radius, 0)}${GAP}kpc of ${labels[host] ?? host}`
 }
 
 export function presenceWords(key: string, present: boolean): string {

@@ -1,9 +1,9 @@
 /** Measurements in words, as tables and notices print them: `27.78 ± 0.05 mag`, `3.61 +0.09 −0.08 Mpc`. */
 import { quantity } from '../quantities.ts'
 import type { QuantityKey } from '../quantities.ts'
+import { GAP } from '../spaces.ts'
 
 const MINUS = '\u2212'
-const THIN = '\u202f'
 
 export interface MeasureToPrint {
   value: number | null
@@ -34,17 +34,17 @@ export function measureWords(m: MeasureToPrint, decimals?: number): string {
     const text = Math.abs(x).toFixed(decimals)
     return x < 0 && Number(text) !== 0 ? MINUS + text : text
   }
-  const parts = [`${m.limitFlag === 'upper' ? `<${THIN}` : m.limitFlag === 'lower' ? `>${THIN}` : ''}${print(m.value)}`]
+  const parts = [`${m.limitFlag === 'upper' ? `<${GAP}` : m.limitFlag === 'lower' ? `>${GAP}` : ''}${print(m.value)}`]
   const up = m.errPlus ?? null
   const down = m.errMinus ?? null
-  if (up !== null && down !== null && print(up) === print(down)) parts.push(`±${THIN}${print(up)}`)
+  if (up !== null && down !== null && print(up) === print(down)) parts.push(`±${GAP}${print(up)}`)
   else {
     if (up !== null) parts.push(`+${print(up)}`)
     if (down !== null) parts.push(`${MINUS}${print(down)}`)
   }
-  if (m.errSys != null) parts.push(`±${THIN}${print(m.errSys)}${THIN}(sys)`)
+  if (m.errSys != null) parts.push(`±${GAP}${print(m.errSys)}${GAP}(sys)`)
   if (m.unit !== '') parts.push(m.unit)
-  return parts.join(THIN)
+  return parts.join(GAP)
 }
 
 /** A measurement held in the canonical unit of its quantity, rounded as that quantity prints. */

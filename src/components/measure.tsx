@@ -1,4 +1,5 @@
-import { formatMeasure, formatNumber, MISSING, NBSP, unitText, type MeasureParts } from '../lib/format.ts'
+import { GAP } from '../../core/spaces.ts'
+import { formatMeasure, formatNumber, MISSING, unitText, type MeasureParts } from '../lib/format.ts'
 import { classNames } from '../lib/class-names.ts'
 import { Unit } from './unit.tsx'
 
@@ -43,7 +44,7 @@ export function Measure({ value, plus, minus, unit, decimals = 2, size = 'text',
       <span aria-hidden className={large ? 'text-2xl' : undefined}>
         {formatNumber(value, decimals)}
       </span>
-      {hasErrors && !apart && <span aria-hidden className={large ? 'ml-1.5 text-lg text-muted' : 'ml-1'}>{`±${NBSP}${above}`}</span>}
+      {hasErrors && !apart && <span aria-hidden className={large ? 'ml-1.5 text-lg text-muted' : 'ml-1'}>{`±${GAP}${above}`}</span>}
       {apart && (
         <span aria-hidden className={classNames('ml-1 inline-flex flex-col text-muted', large ? 'text-base leading-[1.1]' : 'text-[0.75em] leading-[1.12]')}>
           <span>+{above}</span>

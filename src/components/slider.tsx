@@ -1,5 +1,6 @@
 import { Label, Slider, SliderOutput, SliderThumb, SliderTrack } from 'react-aria-components'
-import { formatNumber, THIN } from '../lib/format.ts'
+import { GAP } from '../../core/spaces.ts'
+import { formatNumber } from '../lib/format.ts'
 
 export interface RangeSliderProps {
   label: string
@@ -24,7 +25,7 @@ export function RangeSlider({ label, value, onChange, onChangeEnd, min, max, ste
     <Slider value={[...value]} onChange={(next) => onChange(pair(next))} onChangeEnd={onChangeEnd && ((next) => onChangeEnd(pair(next)))} minValue={min} maxValue={max} step={step}>
       <div className="flex justify-between text-sm text-muted">
         <Label>{unit ? `${label} / ${unit}` : label}</Label>
-        <SliderOutput className="figures text-ink">{`${formatNumber(value[0], decimals)}${THIN}–${THIN}${formatNumber(value[1], decimals)}`}</SliderOutput>
+        <SliderOutput className="figures text-ink">{`${formatNumber(value[0], decimals)}${GAP}to${GAP}${formatNumber(value[1], decimals)}`}</SliderOutput>
       </div>
       <SliderTrack className="relative mx-2 h-8">
         <div aria-hidden className="absolute top-1/2 h-1 w-full -translate-y-1/2 rounded-full bg-line" />

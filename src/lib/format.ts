@@ -1,11 +1,9 @@
 /** How numbers, errors and dates are written for people. Nothing here is read back by a program. */
 
+import { GAP } from '../../core/spaces.ts'
+
 /** U+2212, the true minus. */
 export const MINUS = '\u2212'
-/** U+202F, a thin space that does not break: between value and unit, and between thousands. */
-export const THIN = '\u202f'
-/** A space that does not break, where a thin one would vanish: round ± and within units. */
-export const NBSP = '\u00a0'
 /** What stands for a missing value. */
 export const MISSING = '—'
 
@@ -25,7 +23,7 @@ export function formatSigned(value: number | null | undefined, decimals = 2): st
 /** A count, thousands parted by thin spaces from five digits on: 1500, 12 345. */
 export function formatCount(value: number): string {
   const digits = Math.abs(Math.round(value)).toString()
-  const grouped = digits.length > 4 ? digits.replace(/\B(?=(\d{3})+$)/g, THIN) : digits
+  const grouped = digits.length > 4 ? digits.replace(/\B(?=(\d{3})+$)/g, GAP) : digits
   return value < 0 ? MINUS + grouped : grouped
 }
 
@@ -36,7 +34,7 @@ export function formatCounted(value: number, one: string, many = `${one}s`): str
 
 /** A fraction 0..1 as a percentage: 0.31 is "31 %". */
 export function formatPercent(fraction: number | null | undefined, decimals = 0): string {
-  return fraction == null || !Number.isFinite(fraction) ? MISSING : `${formatNumber(fraction * 100, decimals)}${THIN}%`
+  return fraction == null || !Number.isFinite(fraction) ? MISSING : `${formatNumber(fraction * 100, decimals)}${GAP}%`
 }
 
 export interface MeasureParts {
@@ -58,10 +56,10 @@ export function formatMeasure({ value, plus, minus, unit, decimals = 2 }: Measur
   if (up != null && down != null) {
     const above = formatNumber(up, decimals)
     const below = formatNumber(down, decimals)
-    parts.push(above === below ? `±${NBSP}${above}` : `+${above}${NBSP}${MINUS}${below}`)
+    parts.push(above === below ? `±${GAP}${above}` : `+${above}${GAP}${MINUS}${below}`)
   }
   if (unit) parts.push(unit)
-  return parts.join(NBSP)
+  return parts.join(GAP)
 }
 
 const DAY = new Intl.DateTimeFormat('en-GB', { day: 'numeric', month: 'short', year: 'numeric' })
@@ -102,9 +100,9 @@ export function formatAge(moment: string | Date | null | undefined, now: Date = 
   if (!date) return MISSING
   const age = now.getTime() - date.getTime()
   if (age < MINUTE_MS) return 'just now'
-  if (age < HOUR_MS) return `${Math.floor(age / MINUTE_MS)}${THIN}min`
-  if (age < DAY_MS) return `${Math.floor(age / HOUR_MS)}${THIN}h`
-  if (age < 14 * DAY_MS) return `${Math.floor(age / DAY_MS)}${THIN}d`
+  if (age < HOUR_MS) return `${Math.floor(age / MINUTE_MS)}${GAP}min`
+  if (age < DAY_MS) return `${Math.floor(age / HOUR_MS)}${GAP}h`
+  if (age < 14 * DAY_MS) return `${Math.floor(age / DAY_MS)}${GAP}d`
   return DAY.format(date)
 }
 
@@ -117,15 +115,15 @@ export function formatBytes(bytes: number): string {
     size /= 1000
     step += 1
   }
-  return `${size.toFixed(step === 0 || size >= 100 ? 0 : 1)}${THIN}${units[step] ?? 'B'}`
+  return `${size.toFixed(step === 0 || size >= 100 ? 0 : 1)}${GAP}${units[step] ?? 'B'}`
 }
 
 const UNIT_WORDS: Record<string, string> = {
-  'km/s': `km${NBSP}s⁻¹`,
+  'km/s': `km${GAP}s⁻¹`,
   deg: '°',
   arcmin: 'arcmin',
-  'mag/arcsec2': `mag${NBSP}arcsec⁻²`,
-  'Jy km/s': `Jy${NBSP}km${NBSP}s⁻¹`,
+  'mag/arcsec2': `mag${GAP}arcsec⁻²`,
+  'Jy km/s': `Jy${GAP}km${GAP}s⁻¹`,
   'log(solMass)': 'log M☉',
 }
 

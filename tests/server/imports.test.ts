@@ -37,7 +37,7 @@ describe('an uploaded table', () => {
   ])('is read with %s', async (_what, bytes, format) => {
     const made = await upload(bytes)
     expect(made).toMatchObject({ format, rows: 1, rowsOk: 1, rowsBad: 0, newGalaxies: 1, newSources: 1, headers: HEAD.trim().split(',') })
-    expect((await rows(made.id))[0]).toMatchObject({ reading: 'Söl A (new), heliocentric velocity 10\u202f±\u202f1\u202fkm/s, Ref+2020 (new source)', problems: [] })
+    expect((await rows(made.id))[0]).toMatchObject({ reading: 'Söl A (new), heliocentric velocity 10\u00a0±\u00a01\u00a0km/s, Ref+2020 (new source)', problems: [] })
   })
 
   it.each([

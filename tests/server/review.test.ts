@@ -240,7 +240,7 @@ describe('a conflict', () => {
     // The galaxy was amended by both, in different fields: that is no conflict.
     expect(refused.problem().conflicts).toEqual([
       {
-        change: mine.items[0]?.id, subject: 'Contested, distance modulus', field: 'Value', base: '27.100\u202fmag', theirs: '27.300\u202fmag', yours: '27.200\u202fmag',
+        change: mine.items[0]?.id, subject: 'Contested, distance modulus', field: 'Value', base: '27.100\u00a0mag', theirs: '27.300\u00a0mag', yours: '27.200\u00a0mag',
         by: otherCurator.name, revision: moved.revision,
       },
     ])

@@ -68,7 +68,7 @@ describe('reading the literature', () => {
     const { contributed } = (await visitor.get(`/api/sources/${ids.released}`)).ok(sourceDetailSchema)
     expect(contributed).toHaveLength(2)
     const modulus = contributed.find((c) => /modulus/i.test(c.quantity))
-    expect(modulus?.value).toBe('27.390 +0.090 −0.080 mag'.replaceAll(' ', '\u202f'))
+    expect(modulus?.value).toBe('27.390 +0.090 −0.080 mag'.replaceAll(' ', '\u00a0'))
     expect(modulus?.used).toBe(true)
     expect(contributed.find((c) => /velocity/i.test(c.quantity))?.value).toContain('−120')
   })

@@ -39,8 +39,8 @@ describe('a draft', () => {
     expect(filled.items[1]).toMatchObject({
       subject: 'Fenwick A, distance modulus',
       standing: {
-        quantity: 'Distance modulus', unit: 'mag', published: '3.2\u202f±\u202f0.2\u202fMpc', scaled: '27.525\u202f+0.132\u202f−0.140\u202fmag', adopted: null,
-        source: 'Ansel et al. 2021', method: 'TRGB', anchor: 'TRGB absolute I magnitude, −4.05\u202fmag assumed',
+        quantity: 'Distance modulus', unit: 'mag', published: '3.2\u00a0±\u00a00.2\u00a0Mpc', scaled: '27.525\u00a0+0.132\u00a0−0.140\u00a0mag', adopted: null,
+        source: 'Ansel et al. 2021', method: 'TRGB', anchor: 'TRGB absolute I magnitude, −4.05\u00a0mag assumed',
       },
     })
     const kept = await curator.delete(`/api/submissions/${made.id}/changes/${added}`)

@@ -6,9 +6,8 @@ import { METHODS } from '../../../core/methods.ts'
 import { numberWords } from '../../../core/formats/measure-words.ts'
 import type { Galaxy, Measurement } from '../../../core/catalogue/types.ts'
 import type { MeasurementInput } from '../../../core/schema/measurement.ts'
+import { GAP } from '../../../core/spaces.ts'
 import type { Plain } from './types.ts'
-
-const THIN = '\u202f'
 
 export const GALAXY_FIELDS = ['designation', 'ra', 'dec', 'class', 'status', 'note'] as const
 export type GalaxyField = (typeof GALAXY_FIELDS)[number]
@@ -61,7 +60,7 @@ export interface Wording {
 export function fieldWords(field: string, value: Plain | undefined, wording: Wording): string | null {
   if (value === null || value === undefined || value === '') return null
   const q = wording.quantity === undefined ? undefined : quantity(wording.quantity)
-  const unit = q && q.unit !== '' ? `${THIN}${q.unit}` : ''
+  const unit = q && q.unit !== '' ? `${GAP}${q.unit}` : ''
   switch (field) {
     case 'ra':
     case 'dec':
@@ -72,7 +71,7 @@ export function fieldWords(field: string, value: Plain | undefined, wording: Wor
     case 'errSys':
       return `${q ? rounded(Number(value), q.decimals) : numberWords(Number(value), 0)}${unit}`
     case 'anchorValueAssumed':
-      return `${numberWords(Number(value), 2)}${THIN}mag`
+      return `${numberWords(Number(value), 2)}${GAP}mag`
     case 'quantity':
       return quantity(String(value)).label
     case 'class':

@@ -2,6 +2,7 @@
 import { columnOf } from '../../../core/columns.ts'
 import { METHODS } from '../../../core/methods.ts'
 import type { Effect } from '../../../core/schema/submissions.ts'
+import { GAP } from '../../../core/spaces.ts'
 import { formatCounted, formatNumber, formatSigned, unitText } from '../../lib/format.ts'
 
 export type MovedGalaxy = Effect['galaxies'][number]
@@ -26,7 +27,7 @@ export function valueWords(column: string, value: Moved['before'], unit: string,
     return text.replaceAll('-', ' ')
   }
   const text = formatNumber(value, columnOf(column)?.decimals ?? 2)
-  return unit ? `${text}\u202f${unitText(unit)}` : text
+  return unit ? `${text}${GAP}${unitText(unit)}` : text
 }
 
 export function shiftWords({ column, before, after }: Moved): string {

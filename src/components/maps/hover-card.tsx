@@ -1,6 +1,7 @@
+import { GAP } from '../../../core/spaces.ts'
 import { classLabel } from '../../../core/classes.ts'
 import type { FigureGalaxy } from '../../../core/figure/galaxy.ts'
-import { formatNumber, THIN } from '../../lib/format.ts'
+import { formatNumber } from '../../lib/format.ts'
 import { ClassMark } from '../class-mark.tsx'
 
 /** A galaxy in a line: "Ostrel IX, dwarf spheroidal, 3.58 Mpc, M_V −9.4". */
@@ -9,7 +10,7 @@ export function hoverWords(galaxy: FigureGalaxy): string {
 }
 
 function distanceWords({ distance }: FigureGalaxy): string {
-  return distance === null ? 'no distance' : `${formatNumber(distance, distance < 1 ? 3 : 2)}${THIN}Mpc`
+  return distance === null ? 'no distance' : `${formatNumber(distance, distance < 1 ? 3 : 2)}${GAP}Mpc`
 }
 
 export interface HoverCardProps {

@@ -1,3 +1,4 @@
+import { GAP } from '../../../core/spaces.ts'
 import { classLabel, GALAXY_CLASSES } from '../../../core/classes.ts'
 import { columnOf } from '../../../core/columns.ts'
 import { METHODS } from '../../../core/methods.ts'
@@ -8,7 +9,7 @@ import { FailedState } from '../../components/failed-state.tsx'
 import { Link } from '../../components/link.tsx'
 import { Sheet } from '../../components/sheet.tsx'
 import { Skeleton } from '../../components/skeleton.tsx'
-import { formatDay, formatNumber, MISSING, THIN } from '../../lib/format.ts'
+import { formatDay, formatNumber, MISSING } from '../../lib/format.ts'
 import { paths, withQuery } from '../../paths.ts'
 
 /** Every designation, the preferred one first. */
@@ -45,7 +46,7 @@ export function Neighbours({ slug, at }: { slug: string; at: string | null }) {
                 {n.name}
               </Link>
               <span className="figures whitespace-nowrap">
-                {`${formatNumber(n.separation, 0)}${THIN}kpc`}
+                {`${formatNumber(n.separation, 0)}${GAP}kpc`}
               </span>
             </li>
           ))}
@@ -100,7 +101,7 @@ function Changes({ changes }: { changes: History['entries'][number]['changes'] }
 function shown(column: string, value: string | number | null): string {
   if (value === null) return MISSING
   const found = columnOf(column)
-  if (typeof value === 'number') return `${formatNumber(value, found?.decimals ?? 2)}${found?.unit ? THIN + found.unit : ''}`
+  if (typeof value === 'number') return `${formatNumber(value, found?.decimals ?? 2)}${found?.unit ? GAP + found.unit : ''}`
   if (column === 'class') return classLabel(GALAXY_CLASSES.find((one) => one === value) ?? 'unknown')
   return METHODS.find((method) => column === 'distance_method' && method.key === value)?.label ?? value
 }

@@ -1,10 +1,11 @@
 import type { ReactNode } from 'react'
+import { GAP } from '../../../core/spaces.ts'
 import type { GalaxyAnswer } from '../../../core/schema/catalogue.ts'
 import { DefinitionRows, type DefinitionRow } from '../../components/definition-rows.tsx'
 import { Link } from '../../components/link.tsx'
 import { Measure } from '../../components/measure.tsx'
 import { Sheet } from '../../components/sheet.tsx'
-import { formatNumber, NBSP, THIN } from '../../lib/format.ts'
+import { formatNumber } from '../../lib/format.ts'
 import { paths, withQuery } from '../../paths.ts'
 import { away, rowNumber } from './adopted-words.ts'
 
@@ -28,7 +29,7 @@ export function AdoptedDistance({ galaxy }: { galaxy: GalaxyAnswer }) {
         <Measure value={value} plus={away(hi ?? null, value)} minus={away(value, lo ?? null)} unit="Mpc" decimals={decimals} size="large" stacked />
       </p>
       <p className="figures">
-        {`μ = ${formatNumber(dm, 2)}${stat == null ? '' : `${NBSP}±${NBSP}${formatNumber(stat, 2)} (stat)`}${sys == null ? '' : `${NBSP}±${NBSP}${formatNumber(sys, 2)} (sys)`}${THIN}mag`}
+        {`μ = ${formatNumber(dm, 2)}${stat == null ? '' : `${GAP}±${GAP}${formatNumber(stat, 2)} (stat)`}${sys == null ? '' : `${GAP}±${GAP}${formatNumber(sys, 2)} (sys)`}${GAP}mag`}
       </p>
     </Sheet>
   )
@@ -39,7 +40,7 @@ export function Standing({ galaxy, at }: { galaxy: GalaxyAnswer; at: string | nu
   const value = (key: string): number | null => rowNumber(galaxy, key)
   const rows: (DefinitionRow | null)[] = [
     separation(galaxy, at),
-    line(galaxy, <>SGX, SGY, SGZ</>, value('sgx') === null ? null : <span className="whitespace-nowrap">{`${['sgx', 'sgy', 'sgz'].map((key) => formatNumber(value(key), 2)).join(', ')}${THIN}Mpc`}</span>),
+    line(galaxy, <>SGX, SGY, SGZ</>, value('sgx') === null ? null : <span className="whitespace-nowrap">{`${['sgx', 'sgy', 'sgz'].map((key) => formatNumber(value(key), 2)).join(', ')}${GAP}Mpc`}</span>),
     measured(galaxy, <>M<sub>V</sub></>, 'abs_v', 1, 'mag'),
     measured(galaxy, <>M<sub>B</sub></>, 'abs_b', 1, 'mag'),
     measured(galaxy, <>M<sub>K</sub></>, 'abs_k', 1, 'mag'),

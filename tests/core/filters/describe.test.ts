@@ -6,7 +6,7 @@ import { parseFilter } from '../../../core/filters/parse.ts'
 import { printFilter } from '../../../core/filters/print.ts'
 
 const labels = { ostrel: 'Ostrel', mirrow: 'Mirrow' }
-const plain = (text: string): string => text.replace(/\u202f/g, ' ')
+const plain = (text: string): string => text.replace(/\u00a0/g, ' ')
 
 function filterOf(query: string) {
   const { filter, errors } = parseFilter(new URLSearchParams(query))

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { canonicalWords, labelInSentence, measureWords, numberWords } from '../../../core/formats/measure-words.ts'
 
-const plain = (words: string): string => words.replaceAll('\u202f', ' ')
+const plain = (words: string): string => words.replaceAll('\u00a0', ' ')
 
 describe('measurements in words', () => {
   it.each([
