@@ -3,6 +3,7 @@ import { Button, Focusable } from 'react-aria-components'
 import { classNames } from '../lib/class-names.ts'
 import { isNumeric, type DataColumn, type SortState } from './data-column.ts'
 import { Tooltip } from './tooltip.tsx'
+import { Subscripted } from './subscripted.tsx'
 import { Unit } from './unit.tsx'
 
 export interface DataTableHeadProps<Row> {
@@ -49,7 +50,7 @@ interface HeadCellProps<Row> {
 function HeadCell<Row>({ column, sorted, onSort }: HeadCellProps<Row>) {
   const words = (
     <>
-      <span className="truncate">{column.header}</span>
+      <span className="truncate"><Subscripted text={column.header} /></span>
       {column.unit && <span className="font-normal"><Unit unit={column.unit} /></span>}
     </>
   )
