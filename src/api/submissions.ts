@@ -69,7 +69,8 @@ export function useDeleteSubmission() {
   const client = useQueryClient()
   return useMutation({
     mutationFn: (id: number) => sendJson('DELETE', address(id), undefined, null),
-    onSuccess: () => client.invalidateQueries({ queryKey: keys.submissions.all }),
+    // Its own page is still shown until the reader is led away, and must not ask for what is gone.
+    onSuccess: () => client.invalidateQueries({ queryKey: ['submissions', 'list'] }),
   })
 }
 

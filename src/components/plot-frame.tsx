@@ -16,10 +16,12 @@ export interface PlotFrameProps {
   /** The same in numbers, shown in the picture's place on demand. */
   table?: ReactNode
   level?: 2 | 3
+  /** Links or buttons stand in the picture, so that it is read as a group of them. */
+  holdsControls?: boolean
 }
 
 /** What every picture has: title, text alternative, its numbers, downloads. */
-export function PlotFrame({ title, alt, fileName, children, note, table, level = 2 }: PlotFrameProps) {
+export function PlotFrame({ title, alt, fileName, children, note, table, level = 2, holdsControls }: PlotFrameProps) {
   const picture = useRef<HTMLDivElement>(null)
   const [asTable, setAsTable] = useState(false)
   const Heading = level === 2 ? 'h2' : 'h3'
@@ -51,7 +53,7 @@ export function PlotFrame({ title, alt, fileName, children, note, table, level =
       {asTable ? (
         table
       ) : (
-        <div ref={picture} role="img" aria-label={alt}>
+        <div ref={picture} role={holdsControls ? 'group' : 'img'} aria-label={alt}>
           {children}
         </div>
       )}

@@ -13,7 +13,7 @@ export function ScrollAcross({ label, children, className }: { label: string; ch
     return () => observer.disconnect()
   }, [])
   return (
-    <div ref={box} role={overflows ? 'group' : undefined} aria-label={overflows ? label : undefined} tabIndex={overflows ? 0 : undefined} className={classNames('overflow-x-auto', className)}>
+    <div ref={box} role={overflows ? 'group' : undefined} aria-label={overflows ? label : undefined} tabIndex={overflows ? 0 : undefined} className={classNames('relative overflow-x-auto', className)}>
       {children}
     </div>
   )

@@ -27,7 +27,7 @@ export function SystemPlan({ answer }: { answer: HostAnswer }) {
   const ticks = across.ticks(5)
   const label = (kpc: number): string => (kpc < 0 ? MINUS : '') + Math.abs(kpc)
   return (
-    <PlotFrame
+    <PlotFrame holdsControls
       title="Plan of the system"
       fileName={`${answer.host.slug}-plan`}
       alt={`${answer.host.name} with ${placed.length} satellites ${words}; the sphere has a radius of ${formatNumber(sphere, 0)} kpc.`}
@@ -43,7 +43,7 @@ export function SystemPlan({ answer }: { answer: HostAnswer }) {
         value={view}
         onChange={(id) => setView(id === 'sgx-sgz' ? 'sgx-sgz' : 'sgx-sgy')}
       />
-      <svg viewBox={`0 0 ${SIZE} ${SIZE}`} className="mx-auto block w-full max-w-[36rem]" role="img" aria-label={`Plan of the ${answer.host.name} system`} fontFamily="var(--font-sans)" fontSize={12}>
+      <svg viewBox={`0 0 ${SIZE} ${SIZE}`} className="mx-auto block w-full max-w-[36rem]" role="group" aria-label={`Plan of the ${answer.host.name} system`} fontFamily="var(--font-sans)" fontSize={12}>
         <rect x={MARGIN} y={MARGIN} width={SIZE - 2 * MARGIN} height={SIZE - 2 * MARGIN} fill="none" stroke="var(--line)" />
         {sphere > 0 && <circle cx={across(0)} cy={up(0)} r={across(sphere) - across(0)} fill="var(--zone)" fillOpacity={0.45} stroke="var(--accent)" strokeDasharray="4 3" />}
         <line x1={across(0)} x2={across(0)} y1={MARGIN} y2={SIZE - MARGIN} stroke="var(--line)" />

@@ -33,7 +33,7 @@ export function ConstantsEditor({ mapping, onChange, error }: Props) {
   return (
     <Sheet title="What holds for every row">
       <p className="prose-measure mb-4 text-muted">Unless the row says otherwise.{holds('source') ? ' The table names its sources itself.' : ''}</p>
-      <div className="grid gap-4 md:grid-cols-2 xl:grid-cols-3">
+      <div className="grid grid-cols-[minmax(0,1fr)] gap-4 md:grid-cols-2 xl:grid-cols-3">
         <ConstantSource sourceId={constants.sourceId} onChange={(sourceId) => set({ sourceId })} error={fieldError(error, 'mapping.constants.sourceId')} />
         {!isWide && (
           <Select

@@ -1,4 +1,4 @@
-import { useParams } from 'react-router-dom'
+import { Navigate, useParams } from 'react-router-dom'
 import { useCan, useSession } from '../../api/session.ts'
 import { useSubmission, useSubmissions } from '../../api/submissions.ts'
 import { EmptyState } from '../../components/empty-state.tsx'
@@ -43,7 +43,6 @@ function Waiting() {
 function Desk({ id }: { id: string | undefined }) {
   const query = useSubmissions({ review: true })
   const queue = query.data?.submissions ?? []
-  const open = id ?? (queue[0] ? String(queue[0].id) : undefined)
   if (query.isError && !query.data) {
     return (
       <div className="page">
@@ -53,7 +52,9 @@ function Desk({ id }: { id: string | undefined }) {
     )
   }
   if (!query.data) return <Waiting />
-  if (open === undefined) {
+  // The bench always has its own address: what is read must not change under the reader when the queue does.
+  if (id === undefined && queue[0]) return <Navigate replace to={paths.reviewOf(queue[0].id)} />
+  if (id === undefined) {
     return (
       <div className="page">
         <PageHeader title="Review" aside="nothing waits" />
@@ -66,8 +67,8 @@ function Desk({ id }: { id: string | undefined }) {
   return (
     <div className="page">
       <div className="grid grid-cols-[minmax(0,1fr)] items-start gap-6 lg:grid-cols-[17rem_minmax(0,1fr)] xl:grid-cols-[20rem_minmax(0,1fr)]">
-        <Queue queue={queue} open={open} />
-        <OnTheBench key={open} id={open} queue={queue} />
+        <Queue queue={queue} open={id} />
+        <OnTheBench key={id} id={id} queue={queue} />
       </div>
     </div>
   )

@@ -30,7 +30,9 @@ export function MeasurementForm({ submission, change, onSave, isSaving, error }:
   const [tried, setTried] = useState(false)
   const typed = form.watch()
   const ref: GalaxyRef | null = typed.newGalaxy !== null ? { change: typed.newGalaxy } : typed.galaxy ? { slug: typed.galaxy.slug } : null
-  const parsed = schema.safeParse({ galaxy: ref ?? undefined, measurement: measurementBody(typed.measurement) })
+  const body = measurementBody(typed.measurement)
+  // A source still to be chosen must not hide what else is wrong: its own field says so.
+  const parsed = schema.safeParse({ galaxy: ref ?? undefined, measurement: { ...body, sourceId: body.sourceId || 1 } })
   const issues = tried && !parsed.success ? parsed.error.issues : []
   useEffect(() => {
     const watching = form.watch((value) => keep(value as Typed))
@@ -40,7 +42,7 @@ export function MeasurementForm({ submission, change, onSave, isSaving, error }:
 
   const save = async (): Promise<void> => {
     setTried(true)
-    if (!parsed.success || !ref) return
+    if (!parsed.success || !ref || !typed.measurement.source) return
     const taken = await onSave({ action: 'measurement.add', payload: parsed.data })
     if (!taken) return
     keep(null)
