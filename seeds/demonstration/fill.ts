@@ -5,6 +5,7 @@ import { rebuildCatalogue } from '../../server/services/revision/rebuild.ts'
 import type { Services } from '../../server/http/route.ts'
 import { personCalled } from '../people.ts'
 import { layTheDesk } from './desk.ts'
+import { hangTheGallery } from './gallery.ts'
 import { literature } from './literature.ts'
 import { addGalaxies, addSources, type Invented } from './load.ts'
 import { measure } from './measure.ts'
@@ -42,6 +43,7 @@ export async function fillWithDemonstration(trx: Knex.Transaction, people: Reado
     from = to
   }
   await layTheDesk(services, { curator: personCalled(people, 'curator'), approver: personCalled(people, 'approver') })
+  await hangTheGallery(services, personCalled(people, 'outreach'))
 }
 
 /** Bright galaxies come first, as they do in the sky; the order is otherwise kept. */

@@ -49,7 +49,7 @@ export default function HostPage() {
         }
       />
       {answer ? (
-        <div className="grid gap-5 lg:grid-cols-[minmax(0,1fr)_22rem]">
+        <div className="grid items-start gap-5 lg:grid-cols-[minmax(0,1fr)_22rem]">
           <SystemPlan answer={answer} />
           <Sheet title="Where it stands">
             <DefinitionRows rows={facts(answer)} />

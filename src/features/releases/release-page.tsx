@@ -22,7 +22,7 @@ export default function ReleasePage() {
       {query.isError && <FailedState error={query.error} onRetry={() => void query.refetch()} />}
       {query.isPending && <Skeleton height={300} />}
       {release && (
-        <div className="grid gap-5 lg:grid-cols-[minmax(0,1fr)_24rem]">
+        <div className="grid items-start gap-5 lg:grid-cols-[minmax(0,1fr)_24rem]">
           <Sheet title="Notes">
             {release.notes ? <div className="prose-measure whitespace-pre-line font-serif">{release.notes}</div> : <p className="text-muted">No notes were written for this release.</p>}
           </Sheet>

@@ -58,7 +58,7 @@ export default function ScalePage() {
 function PolicyView({ policy }: { policy: Policy }) {
   const { host } = policy
   return (
-    <div className="mt-8 grid gap-5 lg:grid-cols-[minmax(0,1fr)_24rem]">
+    <div className="mt-8 grid items-start gap-5 lg:grid-cols-[minmax(0,1fr)_24rem]">
       <div className="min-w-0">
         <SectionHeading note={policy.name}>Methods</SectionHeading>
         <DataTable label="Methods by tier" columns={METHOD_COLUMNS} rows={policy.methods} rowKey={(m) => m.method} showTools={false} maxHeight="none" />
