@@ -49,6 +49,8 @@ export function useGalaxy(slug: string, at: string | null = null) {
   return useQuery({
     queryKey: keys.galaxies.one(slug, { at }),
     queryFn: ({ signal }) => getJson(address(slug), galaxySchema, { query: { at }, signal }),
+    // Before a galaxy is chosen there is nothing to ask for.
+    enabled: slug !== '',
   })
 }
 
@@ -56,6 +58,7 @@ export function useMeasurements(slug: string, at: string | null = null) {
   return useQuery({
     queryKey: keys.galaxies.part(slug, 'measurements', { at }),
     queryFn: ({ signal }) => getJson(address(slug, '/measurements'), measurementsSchema, { query: { at }, signal }),
+    enabled: slug !== '',
   })
 }
 

@@ -44,6 +44,7 @@ describe('the queue', () => {
     await page.getByRole('option', { name: /^Ostrel( |$)/ }).first().click()
     await page.getByLabel('Name', { exact: true }).fill('The steward’s own')
     await page.getByRole('button', { name: 'Add to the draft' }).click()
+    await page.getByRole('article').filter({ hasText: 'The steward’s own' }).waitFor()
     await page.getByRole('button', { name: 'Submit for review' }).click()
     await page.getByText('submitted', { exact: true }).first().waitFor()
     const id = new URL(page.url()).pathname.split('/').pop() ?? ''

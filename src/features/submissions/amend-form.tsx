@@ -24,7 +24,7 @@ export function AmendForm(props: ChangeFormProps<'galaxy.amend'>) {
   const [galaxy, setGalaxy] = useState<PickedGalaxy | null>(props.change?.galaxy ?? asked)
   const query = useGalaxy(galaxy?.slug ?? '', null)
   return (
-    <div className="grid gap-4">
+    <div className="grid grid-cols-[minmax(0,1fr)] gap-4">
       {!props.change && <GalaxyPicker value={galaxy} onChange={setGalaxy} autoFocus={!asked} />}
       {galaxy && query.isError && <FailedState error={query.error} onRetry={() => void query.refetch()} />}
       {galaxy && query.isPending && <Skeleton lines={5} />}
@@ -74,13 +74,13 @@ function Fields({ galaxy, change, onSave, isSaving, error }: ChangeFormProps<'ga
   }
   return (
     <form
-      className="grid gap-4"
+      className="grid grid-cols-[minmax(0,1fr)] gap-4"
       onSubmit={(event) => {
         event.preventDefault()
         void save()
       }}
     >
-      <div className="grid gap-4 sm:grid-cols-2">
+      <div className="grid grid-cols-[minmax(0,1fr)] gap-4 sm:grid-cols-2">
         <TextField label="Designation" value={typed.designation} onChange={(designation) => set({ designation })} error={errorAt(issues, error, 'set.designation')} />
         <TextField label="Position, ICRS" value={typed.position} onChange={(text) => set({ position: text })} error={position.ok ? errorAt(issues, error, 'set.ra', 'set.dec') : position.error} reading={moved ? `Read as ${formatPosition(position.ra, position.dec)}` : undefined} />
         <Select label="Class" options={GALAXY_CLASSES.map((id) => ({ id, label: classLabel(id) }))} value={typed.class} onChange={(id) => set({ class: GALAXY_CLASSES.find((c) => c === id) ?? typed.class })} />

@@ -34,7 +34,7 @@ export function ExcludeForm({ change, onSave, isSaving, error }: ChangeFormProps
   }
   return (
     <form
-      className="grid gap-4"
+      className="grid grid-cols-[minmax(0,1fr)] gap-4"
       onSubmit={(event) => {
         event.preventDefault()
         void save()

@@ -52,13 +52,13 @@ export function GalaxyForm({ submission, change, onSave, isSaving, error }: Chan
   }
   return (
     <form
-      className="grid gap-4"
+      className="grid grid-cols-[minmax(0,1fr)] gap-4"
       onSubmit={(event) => {
         event.preventDefault()
         void save()
       }}
     >
-      <div className="grid gap-4 sm:grid-cols-2">
+      <div className="grid grid-cols-[minmax(0,1fr)] gap-4 sm:grid-cols-2">
         <TextField label="Designation" value={typed.designation} onChange={(designation) => set({ designation })} error={errorAt(issues, error, 'designation')} autoFocus={!change} />
         <TextField
           label="Position, ICRS"

@@ -69,7 +69,7 @@ export function MeasurementFields({ form, errorOf }: Props<{ measurement: TypedM
   const anchor = scale.data?.anchors.find((a) => a.key === typed.anchor)
   return (
     <>
-      <div className="grid gap-4 sm:grid-cols-2">
+      <div className="grid grid-cols-[minmax(0,1fr)] gap-4 sm:grid-cols-2">
         <ComboBox
           label="Quantity"
           options={QUANTITIES.map((item) => ({ id: item.key, label: item.label, hint: item.unit }))}
@@ -99,7 +99,7 @@ export function MeasurementFields({ form, errorOf }: Props<{ measurement: TypedM
         )}
       </div>
       {q.kind === 'number' && (
-        <div className="grid gap-4 sm:grid-cols-4">
+        <div className="grid grid-cols-[minmax(0,1fr)] gap-4 sm:grid-cols-4">
           {text('errPlus', 'Error +', { unit: typed.unit })}
           {text('errMinus', 'Error −', { unit: typed.unit, help: 'Empty: the same as +' })}
           {text('errSys', 'Systematic', { unit: typed.unit })}
@@ -116,14 +116,14 @@ export function MeasurementFields({ form, errorOf }: Props<{ measurement: TypedM
       )}
       {q.conventions && errorOf('convention') && <p className="text-sm text-stop">{errorOf('convention')}</p>}
       {q.needsMethod && (
-        <div className="grid gap-4 sm:grid-cols-3">
+        <div className="grid grid-cols-[minmax(0,1fr)] gap-4 sm:grid-cols-3">
           <ComboBox label="Method" options={METHODS.map((m) => ({ id: m.key, label: m.label }))} value={typed.method || null} onChange={(key) => set('method', key ?? '')} error={errorOf('method')} />
           <Select label="Anchor it hangs on" options={[{ id: NONE, label: 'not stated' }, ...anchors.map((a) => ({ id: a.key, label: a.label }))]} value={typed.anchor || NONE} onChange={(id) => set('anchor', id === NONE ? '' : String(id))} error={errorOf('anchor')} />
           {text('anchorValueAssumed', 'Value they assumed', { unit: 'mag', help: anchor ? `Ours is ${anchor.value.toFixed(3)}` : undefined })}
         </div>
       )}
       <SourcePicker value={typed.source} onChange={(source) => set('source', source)} error={errorOf('sourceId')} />
-      <div className="grid gap-4 sm:grid-cols-2">
+      <div className="grid grid-cols-[minmax(0,1fr)] gap-4 sm:grid-cols-2">
         {text('locator', 'Where in the source', { placeholder: 'table 3, row 12' })}
         <Controller control={form.control} name="measurement.note" render={({ field }) => <TextArea label="Note" rows={1} value={field.value} onChange={field.onChange} error={errorOf('note')} />} />
       </div>

@@ -51,13 +51,13 @@ export function MeasurementForm({ submission, change, onSave, isSaving, error }:
   }
   return (
     <form
-      className="grid gap-4"
+      className="grid grid-cols-[minmax(0,1fr)] gap-4"
       onSubmit={(event) => {
         event.preventDefault()
         void save()
       }}
     >
-      <div className="grid gap-4 sm:grid-cols-2">
+      <div className="grid grid-cols-[minmax(0,1fr)] gap-4 sm:grid-cols-2">
         <GalaxyPicker key={typed.galaxy?.slug ?? 'none'} value={typed.galaxy} onChange={(galaxy) => { form.setValue('galaxy', galaxy); if (galaxy) form.setValue('newGalaxy', null) }} error={tried && !ref ? 'Choose the galaxy.' : errorAt(issues, error, 'galaxy', 'galaxy.slug')} autoFocus={!change && !preset} />
         {added.length > 0 && <NewGalaxySelect added={added} value={typed.newGalaxy} onChange={(id) => { form.setValue('newGalaxy', id); if (id !== null) form.setValue('galaxy', null) }} />}
       </div>

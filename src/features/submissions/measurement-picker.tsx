@@ -24,7 +24,7 @@ function words(m: MeasurementAnswer): string {
 /** Chooses one measurement that the catalogue holds: first the galaxy, then the value. */
 export function MeasurementPicker({ galaxy, onGalaxy, value, onChange, error }: Props) {
   return (
-    <div className="grid gap-4">
+    <div className="grid grid-cols-[minmax(0,1fr)] gap-4">
       <GalaxyPicker value={galaxy} onChange={onGalaxy} autoFocus={!galaxy} />
       {galaxy && <Choices slug={galaxy.slug} value={value} onChange={onChange} error={error} />}
     </div>

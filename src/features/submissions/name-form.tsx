@@ -32,13 +32,13 @@ export function NameForm({ change, onSave, isSaving, error }: ChangeFormProps<'n
   }
   return (
     <form
-      className="grid gap-4"
+      className="grid grid-cols-[minmax(0,1fr)] gap-4"
       onSubmit={(event) => {
         event.preventDefault()
         void save()
       }}
     >
-      <div className="grid gap-4 sm:grid-cols-2">
+      <div className="grid grid-cols-[minmax(0,1fr)] gap-4 sm:grid-cols-2">
         <GalaxyPicker value={galaxy} onChange={setGalaxy} error={tried && !ref ? 'Choose the galaxy.' : undefined} autoFocus={!change && !asked} />
         <TextField label="Name" value={name} onChange={setName} error={errorAt(issues, error, 'name')} />
       </div>

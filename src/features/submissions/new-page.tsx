@@ -49,7 +49,7 @@ export default function NewSubmissionPage() {
       <PageHeader title="New submission" breadcrumbs={[{ label: 'Submissions', href: paths.submissions }]} />
       <Sheet className="max-w-2xl">
         <form
-          className="grid gap-4"
+          className="grid grid-cols-[minmax(0,1fr)] gap-4"
           onSubmit={(event) => {
             event.preventDefault()
             begin()

@@ -33,7 +33,7 @@ export function ReplaceForm(props: ChangeFormProps<'measurement.replace'>) {
     return <Mend {...props} measurementId={before.measurementId} start={typedFrom(before.measurement, change.standing?.source ?? `source ${before.measurement.sourceId}`)} startReason={before.reason} />
   }
   return (
-    <div className="grid gap-4">
+    <div className="grid grid-cols-[minmax(0,1fr)] gap-4">
       <MeasurementPicker galaxy={galaxy} onGalaxy={setGalaxy} value={target?.id ?? null} onChange={setChosen} />
       {target && <Mend key={target.versionId} {...props} measurementId={target.id} start={typedAnswer(target)} startReason="" />}
     </div>
@@ -58,7 +58,7 @@ function Mend({ measurementId, start, startReason, change, onSave, isSaving, err
   }
   return (
     <form
-      className="grid gap-4"
+      className="grid grid-cols-[minmax(0,1fr)] gap-4"
       onSubmit={(event) => {
         event.preventDefault()
         void save()

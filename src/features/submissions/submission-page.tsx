@@ -127,13 +127,13 @@ function Moves({ submission }: { submission: SubmissionAnswer }) {
   const remove = useDeleteSubmission()
   const [asking, setAsking] = useState(false)
   const submit = (): void => move.mutate({ event: 'submit', lockVersion }, { onSuccess: () => notify('Submitted. An approver will see it in the queue.', { tone: 'good' }) })
-  useActions([{ name: 'submission.submit', label: 'Submit for review', keys: 'mod+Enter', group: 'Submission', when: may.submit, perform: submit }])
+  useActions([{ name: 'submission.submit', label: 'Submit for review', keys: 'mod+Enter', group: 'Submission', when: may.submit && submission.changes > 0, perform: submit }])
   return (
     <>
       {may.review && <Link look="button" to={paths.reviewOf(submission.id)}>Review</Link>}
       {may.remove && <Button onPress={() => setAsking(true)}>Delete the draft</Button>}
       {may.withdraw && <Button isPending={move.isPending} onPress={() => move.mutate({ event: 'withdraw', lockVersion })}>Withdraw</Button>}
-      {may.submit && <Button kind="primary" isPending={move.isPending} onPress={submit}>Submit for review</Button>}
+      {may.submit && <Button kind="primary" isDisabled={submission.changes === 0} isPending={move.isPending} onPress={submit}>Submit for review</Button>}
       {move.isError && <div className="basis-full"><ProblemNote error={move.error} /></div>}
       <Dialog
         title="Delete this draft?"

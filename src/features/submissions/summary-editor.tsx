@@ -36,7 +36,7 @@ export function SummaryEditor({ submission }: { submission: SubmissionAnswer }) 
   const state = patch.isError ? (offline ? 'Not saved: kept on this device' : 'Not saved') : differs || isPending ? 'Saving …' : `Saved ${formatClock(submission.updatedAt)}`
   return (
     <Sheet title="Title and summary" actions={<span role="status" className="text-sm text-muted">{state}</span>}>
-      <div className="grid gap-4">
+      <div className="grid grid-cols-[minmax(0,1fr)] gap-4">
         <TextField label="Title" value={typed.title} onChange={(title) => change({ title })} error={typed.title.trim() === '' ? 'Give it a title.' : undefined} />
         <TextArea label="Summary" rows={3} value={typed.summary} onChange={(summary) => change({ summary })} help="What changes, and why it should be believed" />
         {patch.isError && <ProblemNote error={patch.error} safe="What you typed is kept on this page." />}
