@@ -1,5 +1,5 @@
 /** What a change of the catalogue does: two states in, the list of differences that matter out. */
-import { COLUMNS, type CatalogueRow, type CatalogueValue } from './columns.ts'
+import { COLUMNS, columnOf, type CatalogueRow, type CatalogueValue } from './columns.ts'
 
 export interface RowChange {
   galaxyId: number
@@ -24,14 +24,31 @@ export interface SystemEffect {
   lost: string[]
 }
 
+/** A galaxy whose adopted distance modulus moves. */
+export interface Shift {
+  slug: string
+  name: string
+  /** Mpc, before. */
+  distance: number
+  /** mag */
+  before: number
+  after: number
+  /** Of the modulus before, statistical and systematic, mag. */
+  error: number
+  method: string | null
+  hostChanged: boolean
+}
+
 export interface CatalogueEffect {
   galaxies: GalaxyEffect[]
   systems: SystemEffect[]
-  counts: { galaxiesAdded: number; galaxiesChanged: number; hostsChanged: number }
+  shifts: Shift[]
+  counts: { galaxiesAdded: number; galaxiesChanged: number; distancesMoved: number; hostsChanged: number }
 }
 
 /** Follow from others that are listed, or say nothing about the galaxy. */
 const UNTOLD: ReadonlySet<string> = new Set(['slug', 'revision', 'updated_at', 'glon', 'glat', 'sgl', 'sgb', 'distance_lo', 'distance_hi', 'n_sources', 'n_distance_all', 'host_sep_lo', 'host_sep_hi', 'v_cmb'])
+const DM_DECIMALS = columnOf('dm')?.decimals ?? 3
 const TOLD = COLUMNS.filter((c) => !UNTOLD.has(c.key))
 
 /**
@@ -48,12 +65,15 @@ export function effectOfRows(rows: readonly RowChange[], membersBefore: (slug: s
     return [{ slug: String(row.after.slug), name: String(row.after.name), kind: row.before === null ? 'added' : 'changed', changes }]
   })
   const systems = systemsOf(rows, membersBefore, nameOf)
+  const shifts = rows.flatMap((row) => shiftOf(row) ?? [])
   return {
     galaxies: galaxies.sort(byWeight),
     systems,
+    shifts: shifts.sort(byShift),
     counts: {
       galaxiesAdded: rows.filter((r) => r.before === null).length,
       galaxiesChanged: galaxies.filter((g) => g.kind === 'changed').length,
+      distancesMoved: shifts.length,
       hostsChanged: rows.filter((r) => r.before !== null && r.before.host !== r.after.host).length,
     },
   }
@@ -66,6 +86,22 @@ function differences({ before, after }: RowChange): GalaxyEffect['changes'] {
     if (printed(was, column.decimals) === printed(is, column.decimals)) return []
     return [{ column: column.key, label: column.label, unit: column.unit, before: was, after: is }]
   })
+}
+
+/** Null for a galaxy that has no distance before or after, or whose modulus prints as before. */
+function shiftOf({ before, after }: RowChange): Shift | null {
+  if (before === null || typeof before.dm !== 'number' || typeof after.dm !== 'number' || typeof before.distance !== 'number') return null
+  if (printed(before.dm, DM_DECIMALS) === printed(after.dm, DM_DECIMALS)) return null
+  const part = (key: string): number => (typeof before[key] === 'number' ? before[key] : 0)
+  return {
+    slug: String(after.slug), name: String(after.name), distance: before.distance, before: before.dm, after: after.dm, error: Math.hypot(part('dm_err'), part('dm_err_sys')),
+    method: after.distance_method === null ? null : String(after.distance_method), hostChanged: before.host !== after.host,
+  }
+}
+
+/** Farthest first, then by name. */
+function byShift(a: Shift, b: Shift): number {
+  return Math.abs(b.after - b.before) - Math.abs(a.after - a.before) || a.name.localeCompare(b.name, 'en')
 }
 
 function printed(value: CatalogueValue, decimals: number): string {
@@ -94,7 +130,8 @@ function systemsOf(rows: readonly RowChange[], membersBefore: (slug: string) => 
   })
 }
 
-/** New galaxies first, then those with most that changes, then by name. */
+/** New galaxies first, then those that change host, then those with most that changes, then by name. */
 function byWeight(a: GalaxyEffect, b: GalaxyEffect): number {
-  return Number(b.kind === 'added') - Number(a.kind === 'added') || b.changes.length - a.changes.length || a.name.localeCompare(b.name, 'en')
+  const movesHost = (g: GalaxyEffect): number => Number(g.changes.some((c) => c.column === 'host'))
+  return Number(b.kind === 'added') - Number(a.kind === 'added') || movesHost(b) - movesHost(a) || b.changes.length - a.changes.length || a.name.localeCompare(b.name, 'en')
 }

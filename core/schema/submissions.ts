@@ -1,6 +1,6 @@
 /** Submissions, their changes, the effect of approving them, and decisions. */
 import { z } from 'zod'
-import { conflictSchema } from '../problem.ts'
+import { conflictSchema, problemSchema } from '../problem.ts'
 import { CHANGE_ACTIONS } from './changes.ts'
 
 const text = z.string().nullable()
@@ -83,7 +83,7 @@ export const effectSchema = z.object({
   /** The catalogue the effect was computed on. */
   revision: z.int(),
   contentHash: z.string(),
-  /** Adopted and derived values that would differ, by galaxy. */
+  /** Adopted and derived values that would differ, by galaxy: those that change most first, at most EFFECT_MOST_GALAXIES. */
   galaxies: z.array(
     z.object({
       slug: z.string(),
@@ -94,8 +94,35 @@ export const effectSchema = z.object({
   ),
   /** Systems that gain or lose members. */
   systems: z.array(z.object({ slug: z.string(), name: z.string(), before: z.int(), after: z.int(), gained: z.array(z.string()), lost: z.array(z.string()) })),
-  counts: z.object({ galaxiesAdded: z.int(), galaxiesChanged: z.int(), hostsChanged: z.int(), measurements: z.int() }),
+  /** Galaxies whose adopted distance modulus moves (mag), the farthest first, at most EFFECT_MOST_SHIFTS: for a plot of the whole catalogue moving. */
+  shifts: z.array(
+    z.object({
+      slug: z.string(),
+      name: z.string(),
+      /** Mpc, before. */
+      distance: z.number(),
+      before: z.number(),
+      after: z.number(),
+      /** Of the modulus before, statistical and systematic, mag. */
+      error: z.number(),
+      method: text,
+      hostChanged: z.boolean(),
+    }),
+  ),
+  /** Of the whole effect, whatever is listed. */
+  counts: z.object({ galaxiesAdded: z.int(), galaxiesChanged: z.int(), distancesMoved: z.int(), hostsChanged: z.int(), measurements: z.int() }),
 })
+
+/** The largest effects are listed in part, so that they can be read at all; the counts are of all. */
+export const EFFECT_MOST_GALAXIES = 1000
+export const EFFECT_MOST_SHIFTS = 20_000
+
+/** GET /api/submissions/:id/effect/progress, one a line: how far the computation is, then the effect or what went wrong. */
+export const effectLineSchema = z.union([
+  z.object({ progress: z.number().min(0).max(1), step: z.string() }),
+  z.object({ effect: effectSchema }),
+  z.object({ problem: problemSchema }),
+])
 
 /** POST .../return, .../reject: the note is obligatory; .../approve: it is not. */
 export const decisionSchema = z.strictObject({ contentHash: z.string().min(8), note: z.string().trim().max(8000).default('') })

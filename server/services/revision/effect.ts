@@ -1,8 +1,9 @@
 import { effectOfRows, type CatalogueEffect } from '../../../core/effect.ts'
+import { EFFECT_MOST_GALAXIES, EFFECT_MOST_SHIFTS } from '../../../core/schema/submissions.ts'
 import type { Neighbour } from '../../../core/derive/neighbourhood.ts'
 import type { RevisionPlan } from './plan.ts'
 
-/** The effect of a plan, as an approver reads it. */
+/** The effect of a plan, as an approver reads it: the largest differences of it, and the counts of all. */
 export function effectOf({ rows, before }: RevisionPlan): CatalogueEffect {
   const newName = new Map(rows.map((r) => [String(r.after.slug), String(r.after.name)]))
   // Asked for only where a system gains or loses members.
@@ -15,5 +16,6 @@ export function effectOf({ rows, before }: RevisionPlan): CatalogueEffect {
     const host = known(slug)
     return host ? (before.satellites.get(host.id) ?? 0) : 0
   }
-  return effectOfRows(rows, membersBefore, (slug) => newName.get(slug) ?? known(slug)?.name ?? slug)
+  const effect = effectOfRows(rows, membersBefore, (slug) => newName.get(slug) ?? known(slug)?.name ?? slug)
+  return { ...effect, galaxies: effect.galaxies.slice(0, EFFECT_MOST_GALAXIES), shifts: effect.shifts.slice(0, EFFECT_MOST_SHIFTS) }
 }
