@@ -8,7 +8,7 @@ const effect = (before: CatalogueRow | null, after: CatalogueRow) => effectOfRow
 
 describe('effectOfRows', () => {
   it('of nothing is nothing', () => {
-    expect(effectOfRows([], () => 0, String)).toEqual({ galaxies: [], systems: [], counts: { galaxiesAdded: 0, galaxiesChanged: 0, hostsChanged: 0 } })
+    expect(effectOfRows([], () => 0, String)).toEqual({ galaxies: [], systems: [], shifts: [], counts: { galaxiesAdded: 0, galaxiesChanged: 0, distancesMoved: 0, hostsChanged: 0 } })
     const value = fc.oneof(fc.double({ noDefaultInfinity: true, noNaN: true }), fc.string(), fc.constant(null)) as fc.Arbitrary<CatalogueValue>
     fc.assert(
       fc.property(fc.record(Object.fromEntries(COLUMNS.map((c) => [c.key, value]))), (any) => {
@@ -43,7 +43,24 @@ describe('effectOfRows', () => {
       { slug: 'ostrel', name: 'OSTREL', before: 5, after: 4, gained: [], lost: ['Ostrel IX'] },
       { slug: 'marl', name: 'MARL', before: 2, after: 3, gained: ['Ostrel IX'], lost: [] },
     ])
-    expect(found.counts).toEqual({ galaxiesAdded: 0, galaxiesChanged: 1, hostsChanged: 1 })
+    expect(found.counts).toEqual({ galaxiesAdded: 0, galaxiesChanged: 1, distancesMoved: 0, hostsChanged: 1 })
+  })
+
+  it('tells which distance moduli move, the farthest first', () => {
+    const at = (slug: string, dm: number, more: Partial<CatalogueRow> = {}): CatalogueRow => row({ slug, name: slug, dm, dm_err: 0.03, dm_err_sys: 0.04, distance_method: 'trgb', ...more })
+    const rows = [
+      { galaxyId: 1, before: at('a', 27.5), after: at('a', 27.52) },
+      { galaxyId: 2, before: at('b', 27.5), after: at('b', 27.45, { host: 'marl' }) },
+      { galaxyId: 3, before: at('c', 27.5), after: at('c', 27.50001) },
+      { galaxyId: 4, before: null, after: at('d', 27.5) },
+    ]
+    const found = effectOfRows(rows, () => 0, String)
+    expect(found.shifts).toMatchObject([
+      { slug: 'b', before: 27.5, after: 27.45, method: 'trgb', hostChanged: true, distance: 3.6 },
+      { slug: 'a', before: 27.5, after: 27.52, hostChanged: false },
+    ])
+    expect(found.shifts[0]?.error).toBeCloseTo(0.05, 12)
+    expect(found.counts.distancesMoved).toBe(2)
   })
 
   it('puts new galaxies first, and counts them apart', () => {
@@ -53,7 +70,7 @@ describe('effectOfRows', () => {
     ]
     const found = effectOfRows(rows, () => 0, String)
     expect(found.galaxies.map((g) => [g.slug, g.kind])).toEqual([['new', 'added'], ['ostrel-ix', 'changed']])
-    expect(found.counts).toEqual({ galaxiesAdded: 1, galaxiesChanged: 1, hostsChanged: 0 })
+    expect(found.counts).toEqual({ galaxiesAdded: 1, galaxiesChanged: 1, distancesMoved: 0, hostsChanged: 0 })
     expect(found.systems).toEqual([])
   })
 })
