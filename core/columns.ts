@@ -98,14 +98,16 @@ export const COLUMNS: readonly Column[] = [
 
   choice('environment', 'host', 'Host', 'Host', 'meta.id.parent', undefined, 'Identifier of the host that the galaxy is a satellite of'),
   choice('environment', 'host_relation', 'Host or satellite', 'Relation', 'meta.code', HOST_RELATIONS, 'Host of satellites, satellite, or in the field'),
-  real('environment', 'host_probability', 'Membership probability', 'P', '', 2, 'stat.probability', 'Fraction of draws from the distance errors in which the assignment holds'),
+  real('environment', 'host_probability', 'Membership probability', 'P', '', 2, 'stat.probability', 'Fraction of draws from the distance errors in which the assignment (satellite of this host, or in the field) holds'),
   real('environment', 'tidal_index', 'Tidal index', 'Θ', '', 2, 'stat.value', 'Tidal index over all neighbours; above 0 within a neighbour’s reach'),
   choice('environment', 'main_disturber', 'Main disturber', 'Disturber', 'meta.id.assoc', undefined, 'Galaxy with the largest tidal influence among those enough more massive'),
-  real('environment', 'host_sep', 'Separation from the host', 'r', 'kpc', 0, 'pos.distance', '3-D separation from the main disturber'),
+  real('environment', 'host_sep', 'Separation from the host', 'r', 'kpc', 0, 'pos.distance', '3-D separation from the main disturber, of the adopted distances'),
+  real('environment', 'host_sep_median', 'Separation, median', 'r½', 'kpc', 0, 'pos.distance;stat.median', 'Median of the 3-D separation from the main disturber, distance errors drawn'),
   real('environment', 'host_sep_lo', 'Separation, lower bound', 'r−', 'kpc', 0, 'pos.distance;stat.min', '16th percentile of the separation'),
   real('environment', 'host_sep_hi', 'Separation, upper bound', 'r+', 'kpc', 0, 'pos.distance;stat.max', '84th percentile of the separation'),
   real('environment', 'host_angle', 'Angle from the host', 'θ', 'deg', 2, 'pos.angDistance', 'Angle on the sky from the main disturber'),
   real('environment', 'host_dv', 'Velocity against the host', 'Δv', 'km/s', 1, 'spect.dopplerVeloc', 'Velocity less that of the main disturber, Galactic standard of rest'),
+  real('environment', 'host_dv_err', 'Error of the velocity against the host', 'σ(Δv)', 'km/s', 1, 'stat.error;spect.dopplerVeloc', 'Error of the velocity difference, from those of both velocities'),
 
   integer('bookkeeping', 'n_measurements', 'Measurements', 'Meas.', 'meta.number', 'Measurements held, all quantities'),
   integer('bookkeeping', 'n_sources', 'Sources', 'Sources', 'meta.number', 'Sources that the measurements come from'),

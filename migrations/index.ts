@@ -5,6 +5,7 @@ import * as catalogue from './0003_catalogue.ts'
 import * as outlets from './0004_outlets.ts'
 import * as sessionsEnd from './0005_sessions_end.ts'
 import * as catalogueSorts from './0006_catalogue_sorts.ts'
+import * as possibleHosts from './0008_possible_hosts.ts'
 
 /** One step of the schema. `up` runs in a transaction of its own; `down` undoes it. */
 export interface Migration {
@@ -14,7 +15,7 @@ export interface Migration {
 
 /**
  * Every migration by name, oldest first. The map is written out by hand, not read from the folder, so that one name is recorded
- * whether the code runs as .ts or compiled as .js. A new one: a file `0007_what_it_does.ts` exporting `up` and `down`, and
+ * whether the code runs as .ts or compiled as .js. A new one: a file `0009_what_it_does.ts` exporting `up` and `down`, and
  * a line here.
  *
  * A migration that has been released is never edited; a further one mends it.
@@ -26,4 +27,5 @@ export const migrations: Readonly<Record<string, Migration>> = {
   '0004_outlets': outlets,
   '0005_sessions_end': sessionsEnd,
   '0006_catalogue_sorts': catalogueSorts,
+  '0008_possible_hosts': possibleHosts,
 }

@@ -2,7 +2,7 @@
 import type { Neighbourhood } from './neighbourhood.ts'
 
 /** Two galaxies at one point still have a finite influence: closer than this they count as so far apart, Mpc. */
-const CLOSEST_MPC = 1e-4
+export const CLOSEST_MPC = 1e-4
 /** What a bound is widened by, so that rounding never hides a neighbour. */
 export const ROOM = 1 + 1e-9
 

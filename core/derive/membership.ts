@@ -1,75 +1,109 @@
-/** Satellite or not, and how sure: a galaxy's place against its main disturber, with the distance errors drawn through. */
-import { TIDAL_INDEX_CONSTANT } from '../astro/constants.ts'
-import { RELATIVE_PER_MAG } from '../astro/distance.ts'
+/** Whose satellite a galaxy is, and how sure: its place among its possible hosts, with the distance errors drawn through. */
 import { virialRadius } from '../astro/environment.ts'
 import { length, type Vector } from '../astro/vector.ts'
-import { normals } from '../random.ts'
 import type { Policy } from '../scale/policy.ts'
+import { CLOSEST_MPC } from './disturber.ts'
+import { drawnDistances } from './draws.ts'
 import type { Neighbour } from './neighbourhood.ts'
+import { tidalReach } from './possible-hosts.ts'
 import { quantilesInPlace } from './quantile.ts'
 
 export interface Membership {
   isSatellite: boolean
-  /** Fraction of draws in which the assignment (satellite of it, or not) holds. */
+  /** Fraction of draws in which the assignment (satellite of its main disturber, or of nobody) holds. */
   probability: number
-  /** 3-D separation, Mpc: from the adopted distances, and the 16th and 84th percentile of the draws. */
+  /** 3-D separation from the main disturber, Mpc: of the adopted distances; then the median, 16th and 84th percentile of the draws. */
   separation: number
+  separationMedian: number
   separationLo: number
   separationHi: number
+  /** Fraction of draws in which it is a satellite of each, most likely first; those of no draw left out. They sum to at most 1. */
+  hosts: { slug: string; probability: number }[]
 }
 
-/** Radius of a host's sphere, Mpc: a multiple of its R200, with the total mass from the stellar one. */
+/** Radius of a host's sphere, Mpc: a multiple of its R200, with the total mass from the stellar one. A host by decree may have no known mass: 0. */
 export function sphereOf(mass: number, policy: Policy['host']): number {
+  if (mass === 0) return 0
   return policy.sphere * virialRadius(policy.totalOverStellar * mass, policy.hubble)
 }
 
 /** How near a satellite has to be, Mpc: within the host's sphere, and where its term of the tidal index is above 0. */
 export function reachOf(mass: number, policy: Policy['host']): number {
-  return Math.min(sphereOf(mass, policy), Math.cbrt(mass * 10 ** TIDAL_INDEX_CONSTANT))
+  return Math.min(sphereOf(mass, policy), tidalReach(mass))
 }
 
 /**
- * Distances of a galaxy, Mpc, drawn from the errors of its modulus.
+ * Membership of a galaxy. Masses are held, distances are drawn. In each draw the galaxy belongs to whichever of its possible hosts then exerts
+ * the largest M★/d³, if it lies within reach of that one: the rule of the assignment itself, draw by draw.
  *
- * The systematic part moves by one number a draw, the same for all galaxies, since a wrong scale moves them all alike. What is a galaxy's own
- * is seeded by the policy and its slug: so a draw of one galaxy is the same whatever it is compared with, and a result does not depend on
- * what else is computed. (The database's numbers would not do: a galaxy that is only foreseen gets another number when it is made.)
+ * @param main - its main disturber
+ * @param others - its other possible hosts (core/derive/possible-hosts.ts)
+ * @param drawn - gives the drawn distances of a galaxy, not to be changed: handed in where many are asked for
  */
-export function drawnDistances(galaxy: Neighbour, policy: Policy['host']): Float64Array {
-  const scale = scaleDraws(policy)
-  const own = normals(policy.seed, streamOf(galaxy.slug), policy.draws)
-  const statistical = galaxy.statistical ?? policy.unknownError
-  const systematic = galaxy.systematic ?? 0
-  const distances = new Float64Array(policy.draws)
-  for (let i = 0; i < policy.draws; i++) {
-    distances[i] = Math.exp(RELATIVE_PER_MAG * (galaxy.modulus - 25 + systematic * (scale[i] ?? 0) + statistical * (own[i] ?? 0)))
+export function membershipOf(
+  galaxy: Neighbour,
+  main: Neighbour,
+  others: readonly Neighbour[],
+  policy: Policy['host'],
+  drawn: (galaxy: Neighbour) => Float64Array = (g) => drawnDistances(g, policy),
+): Membership {
+  const own = drawn(galaxy)
+  const separations = new Float64Array(own.length)
+  const counts = countDraws(galaxy, [main, ...others], own, drawn, policy, separations)
+  const separation = Math.hypot(galaxy.x - main.x, galaxy.y - main.y, galaxy.z - main.z)
+  const isSatellite = separation <= reachOf(main.mass, policy)
+  const [lo = NaN, median = NaN, hi = NaN] = quantilesInPlace(separations, [0.16, 0.5, 0.84])
+  const total = own.length
+  const bound = counts.reduce((sum, c) => sum + c, 0)
+  return {
+    isSatellite, probability: (isSatellite ? (counts[0] ?? 0) : total - bound) / total, separation, separationMedian: Math.sqrt(median), separationLo: Math.sqrt(lo),
+    separationHi: Math.sqrt(hi),
+    hosts: [main, ...others]
+      .map((host, k) => ({ slug: host.slug, probability: (counts[k] ?? 0) / total }))
+      .filter((h) => h.probability > 0)
+      .sort((a, b) => b.probability - a.probability || (a.slug < b.slug ? -1 : 1)),
   }
-  return distances
 }
 
 /**
- * Membership of a galaxy in the system of its main disturber. Masses are held, distances are drawn.
+ * In how many draws the galaxy is a satellite of each host.
  *
- * @param hostDistances - `drawnDistances` of the host: handed in where many share it
+ * @param separations - filled with the squares of the separation from the first host, Mpc²
  */
-export function membershipOf(galaxy: Neighbour, host: Neighbour, policy: Policy['host'], hostDistances: Float64Array = drawnDistances(host, policy)): Membership {
-  const reach = reachOf(host.mass, policy)
-  const separation = Math.hypot(galaxy.x - host.x, galaxy.y - host.y, galaxy.z - host.z)
-  const isSatellite = separation <= reach
-  const chord2 = chordSquared(unit(galaxy), unit(host))
-  const drawn = drawnDistances(galaxy, policy)
-  const reach2 = reach * reach
-  let within = 0
-  for (let i = 0; i < drawn.length; i++) {
-    const d1 = drawn[i] ?? NaN
-    const d2 = hostDistances[i] ?? NaN
+function countDraws(galaxy: Neighbour, hosts: readonly Neighbour[], own: Float64Array, drawn: (g: Neighbour) => Float64Array, policy: Policy['host'], separations: Float64Array): number[] {
+  const direction = unit(galaxy)
+  // The largest m/d³ is the least d²/m^(2/3): no roots are taken.
+  const least = new Float64Array(own.length).fill(Infinity)
+  const holder = new Int32Array(own.length)
+  const bounds = hosts.map((host, k) => {
+    const weight = host.mass > 0 ? 1 / Math.cbrt(host.mass) ** 2 : Infinity
+    nearest(own, drawn(host), chordSquared(direction, unit(host)), weight, k, least, holder, k === 0 ? separations : null)
+    return host.mass > 0 ? reachOf(host.mass, policy) ** 2 * weight : 0
+  })
+  const counts = hosts.map(() => 0)
+  for (let i = 0; i < own.length; i++) {
+    const k = holder[i] ?? 0
+    if ((least[i] ?? Infinity) <= (bounds[k] ?? 0)) counts[k] = (counts[k] ?? 0) + 1
+  }
+  return counts
+}
+
+const CLOSEST_SQUARED = CLOSEST_MPC ** 2
+
+/** Lets one host stand for the holder of each draw. The loop that everything waits for. */
+function nearest(own: Float64Array, host: Float64Array, chord2: number, weight: number, k: number, least: Float64Array, holder: Int32Array, separations: Float64Array | null): void {
+  for (let i = 0; i < own.length; i++) {
+    const d1 = own[i] ?? NaN
+    const d2 = host[i] ?? NaN
     // The law of cosines in the form that keeps its digits when the two are close to one another.
     const r2 = (d1 - d2) * (d1 - d2) + d1 * d2 * chord2
-    drawn[i] = r2
-    if (r2 <= reach2) within++
+    if (separations) separations[i] = r2
+    const pull = (r2 > CLOSEST_SQUARED ? r2 : CLOSEST_SQUARED) * weight
+    if (pull < (least[i] ?? Infinity)) {
+      least[i] = pull
+      holder[i] = k
+    }
   }
-  const [lo = NaN, hi = NaN] = quantilesInPlace(drawn, [0.16, 0.84])
-  return { isSatellite, probability: (isSatellite ? within : drawn.length - within) / drawn.length, separation, separationLo: Math.sqrt(lo), separationHi: Math.sqrt(hi) }
 }
 
 function chordSquared(a: Vector, b: Vector): number {
@@ -79,21 +113,4 @@ function chordSquared(a: Vector, b: Vector): number {
 function unit(g: Neighbour): Vector {
   const d = length([g.x, g.y, g.z])
   return [g.x / d, g.y / d, g.z / d]
-}
-
-let lastScale: { seed: number; draws: Float64Array } | null = null
-
-/** The common scale error of each draw, in standard deviations; the last list is kept, since all galaxies ask for the same. */
-function scaleDraws({ seed, draws }: Policy['host']): Float64Array {
-  if (lastScale?.seed !== seed || lastScale.draws.length !== draws) {
-    lastScale = { seed, draws: normals(seed, streamOf(''), draws) }
-  }
-  return lastScale.draws
-}
-
-/** A stream of its own for every slug: FNV-1a. */
-function streamOf(slug: string): number {
-  let hash = 0x811c9dc5
-  for (let i = 0; i < slug.length; i++) hash = Math.imul(hash ^ slug.charCodeAt(i), 0x01000193)
-  return hash >>> 0
 }

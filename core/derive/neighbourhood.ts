@@ -21,6 +21,8 @@ export interface Neighbour {
   systematic: number | null
   /** km/s, Galactic standard of rest. */
   vGsr: number | null
+  /** Its error, km/s. */
+  vError: number | null
 }
 
 /** What is known of a galaxy's place among the others, by their ids; null for none. */
@@ -127,6 +129,6 @@ export function neighbourFrom(id: number, row: Readonly<Record<string, Catalogue
   const logMass = number('log_mstar')
   return {
     id, slug: String(row.slug), name: String(row.name), x, y, z, modulus, mass: logMass === null ? 0 : 10 ** logMass, statistical: number('dm_err'),
-    systematic: number('dm_err_sys'), vGsr: number('v_gsr'),
+    systematic: number('dm_err_sys'), vGsr: number('v_gsr'), vError: number('v_hel_err'),
   }
 }

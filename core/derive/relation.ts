@@ -6,12 +6,29 @@ import type { CatalogueValue, HostRelation } from '../columns.ts'
 import type { Policy } from '../scale/policy.ts'
 import { disturbersOf, type Disturbers } from './disturber.ts'
 import { disturberSearch } from './disturber-tree.ts'
-import { drawnDistances, membershipOf } from './membership.ts'
+import { drawsKept } from './draws.ts'
+import { membershipOf, type Membership } from './membership.ts'
 import type { Neighbour, Neighbourhood, Place } from './neighbourhood.ts'
+import { possibleHostsOf } from './possible-hosts.ts'
+import { possibleHostSearch } from './possible-hosts-tree.ts'
+
+/** A host that a galaxy may belong to, and how likely, as it is stored. */
+export interface PossibleHost {
+  host: string
+  p: number
+}
 
 export interface Relation extends Place {
   columns: Readonly<Record<string, CatalogueValue>>
+  /** Most likely first; what is less likely than 1 in 200 is left out. */
+  possibleHosts: readonly PossibleHost[]
 }
+
+/** What people decided against the rule: the host (id) of a galaxy (id), or that it has none. One that has no distance cannot be a host. */
+export type HostOverrides = ReadonlyMap<number, number | null>
+
+const NO_OVERRIDES: HostOverrides = new Map()
+const WORTH_TELLING = 0.005
 
 /** The place of a galaxy without a distance, or without anybody who disturbs it. */
 export const NOWHERE: Relation = {
@@ -19,59 +36,70 @@ export const NOWHERE: Relation = {
   mainDisturber: null,
   isSatellite: false,
   columns: {
-    host: null, host_probability: null, tidal_index: null, main_disturber: null, host_sep: null, host_sep_lo: null, host_sep_hi: null, host_angle: null, host_dv: null,
+    host: null, host_probability: null, tidal_index: null, main_disturber: null, host_sep: null, host_sep_median: null, host_sep_lo: null, host_sep_hi: null, host_angle: null,
+    host_dv: null, host_dv_err: null,
   },
+  possibleHosts: [],
+}
+
+/** What the place of one galaxy is found with, over and over. */
+interface Ground {
+  n: Neighbourhood
+  policy: Policy
+  overrides: HostOverrides
+  drawn: (galaxy: Neighbour) => Float64Array
 }
 
 /** Where a galaxy stands among the others. Without a distance it stands nowhere; without neighbours of any mass it has no index. */
-export function relationOf(n: Neighbourhood, id: number, policy: Policy): Relation {
-  const i = n.indexOf.get(id)
-  const galaxy = i === undefined ? undefined : n.galaxies[i]
-  if (i === undefined || !galaxy) return NOWHERE
-  return relationTo(n, galaxy, disturbersOf(n, i, policy.host.massRatio), policy)
+export function relationOf(n: Neighbourhood, id: number, policy: Policy, overrides: HostOverrides = NO_OVERRIDES): Relation {
+  return relationFinder(n, policy, overrides)(id)
+}
+
+/** Finds one place after the other: for a handful of galaxies, by looking at all neighbours of each. */
+export function relationFinder(n: Neighbourhood, policy: Policy, overrides: HostOverrides = NO_OVERRIDES): (id: number) => Relation {
+  const ground: Ground = { n, policy, overrides, drawn: drawsKept(policy.host) }
+  return (id) => {
+    const i = n.indexOf.get(id)
+    return i === undefined ? NOWHERE : relationAt(ground, i, disturbersOf(n, i, policy.host.massRatio), () => possibleHostsOf(n, i, policy.host))
+  }
 }
 
 /**
- * The same for many galaxies, far faster: the neighbours are searched through a tree, and the draws of a host are made once for all that
- * it disturbs.
+ * The same for many galaxies, far faster: the neighbours are searched through trees, and galaxies that share hosts follow one another, so
+ * that the draws of a host are made once for nearly all of them. The answer does not depend on who else is asked for.
  *
  * @param onProgress - called now and then with how many are done
  */
-export function relationsOf(n: Neighbourhood, ids: Iterable<number>, policy: Policy, onProgress?: (done: number) => void): Map<number, Relation> {
-  const search = disturberSearch(n, policy.host.massRatio)
+export function relationsOf(n: Neighbourhood, ids: Iterable<number>, policy: Policy, overrides: HostOverrides = NO_OVERRIDES, onProgress?: (done: number) => void): Map<number, Relation> {
+  const ground: Ground = { n, policy, overrides, drawn: drawsKept(policy.host) }
+  const disturbers = disturberSearch(n, policy.host.massRatio)
+  const possible = possibleHostSearch(n, policy.host)
+  // The order of the answer is that of the question.
   const relations = new Map<number, Relation>()
-  const byMain = new Map<number, { galaxy: Neighbour; found: Disturbers }[]>()
-  for (const id of ids) {
-    // The order of the answer is that of the question.
-    relations.set(id, NOWHERE)
-    const i = n.indexOf.get(id)
-    const galaxy = i === undefined ? undefined : n.galaxies[i]
-    if (i === undefined || !galaxy) continue
-    const found = search(i)
-    const group = byMain.get(found.main)
-    if (group) group.push({ galaxy, found })
-    else byMain.set(found.main, [{ galaxy, found }])
-  }
+  for (const id of ids) relations.set(id, NOWHERE)
   let done = 0
-  for (const [main, group] of byMain) {
-    const host = n.galaxies[main]
-    const distances = host && drawnDistances(host, policy.host)
-    for (const { galaxy, found } of group) {
-      relations.set(galaxy.id, relationTo(n, galaxy, found, policy, distances))
-      if (++done % PROGRESS_EVERY === 0) onProgress?.(done)
-    }
+  for (const i of possible.order) {
+    const id = n.ids[i] ?? 0
+    if (!relations.has(id)) continue
+    relations.set(id, relationAt(ground, i, disturbers(i), () => possible.of(i)))
+    if (++done % PROGRESS_EVERY === 0) onProgress?.(done)
   }
   return relations
 }
 
-const PROGRESS_EVERY = 1000
+const PROGRESS_EVERY = 500
 
-function relationTo(n: Neighbourhood, galaxy: Neighbour, found: Disturbers, policy: Policy, mainDistances?: Float64Array): Relation {
+function relationAt({ n, policy, overrides, drawn }: Ground, i: number, found: Disturbers, possibleHosts: () => readonly number[]): Relation {
+  const galaxy = n.galaxies[i]
+  if (!galaxy) return NOWHERE
   const index = n.galaxies[found.index]
-  const main = n.galaxies[found.main]
   const tidalIndex = index ? Math.log10(found.indexPull) + TIDAL_INDEX_CONSTANT : null
+  const override = overrides.get(galaxy.id)
+  const chosen = override == null ? undefined : n.galaxies[n.indexOf.get(override) ?? -1]
+  const main = chosen ?? n.galaxies[found.main]
   if (!main) return { ...NOWHERE, indexDisturber: index?.id ?? null, columns: { ...NOWHERE.columns, tidal_index: tidalIndex } }
-  const membership = membershipOf(galaxy, main, policy.host, mainDistances)
+  const others = possibleHosts().flatMap((j) => n.galaxies[j] ?? []).filter((g) => g !== main)
+  const membership = overridden(membershipOf(galaxy, main, others, policy.host, drawn), chosen, override)
   return {
     indexDisturber: index?.id ?? null,
     mainDisturber: main.id,
@@ -82,12 +110,29 @@ function relationTo(n: Neighbourhood, galaxy: Neighbour, found: Disturbers, poli
       tidal_index: tidalIndex,
       main_disturber: main.slug,
       host_sep: membership.separation * 1000,
+      host_sep_median: membership.separationMedian * 1000,
       host_sep_lo: membership.separationLo * 1000,
       host_sep_hi: membership.separationHi * 1000,
       host_angle: degrees(angleBetween([galaxy.x, galaxy.y, galaxy.z], [main.x, main.y, main.z])),
-      host_dv: galaxy.vGsr === null || main.vGsr === null ? null : galaxy.vGsr - main.vGsr,
+      ...velocityDifference(galaxy, main),
     },
+    possibleHosts: membership.hosts.filter((h) => h.probability >= WORTH_TELLING).map((h) => ({ host: h.slug, p: h.probability })),
   }
+}
+
+/** The assignment is what somebody decided; its probability stays that of the draws, so that nobody is made to look surer than he is. */
+function overridden(membership: Membership, chosen: Neighbour | undefined, override: number | null | undefined): Membership {
+  const isSatellite = chosen ? true : override === null ? false : membership.isSatellite
+  if (isSatellite === membership.isSatellite) return membership
+  const share = membership.hosts.reduce((sum, h) => sum + h.probability, 0)
+  const own = membership.hosts.find((h) => h.slug === chosen?.slug)?.probability ?? 0
+  return { ...membership, isSatellite, probability: isSatellite ? own : 1 - share }
+}
+
+function velocityDifference(galaxy: Neighbour, main: Neighbour): { host_dv: number | null; host_dv_err: number | null } {
+  if (galaxy.vGsr === null || main.vGsr === null) return { host_dv: null, host_dv_err: null }
+  const both = galaxy.vError !== null && main.vError !== null
+  return { host_dv: galaxy.vGsr - main.vGsr, host_dv_err: both ? Math.hypot(galaxy.vError ?? 0, main.vError ?? 0) : null }
 }
 
 /** Host of satellites, satellite, or in the field; a satellite that has satellites of its own is a satellite. */

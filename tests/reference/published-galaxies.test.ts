@@ -75,7 +75,7 @@ describe('the tidal index over all neighbours', () => {
   const others = neighbourhoodOf(
     rows.map((r, i) => ({
       id: i + 1, slug: r.name ?? '', name: r.name ?? '', x: Number(r.sgx_mpc), y: Number(r.sgy_mpc), z: Number(r.sgz_mpc), mass: Number(r.mstar_msun_SYNTHETIC), modulus: 25,
-      statistical: 0.05, systematic: 0.05, vGsr: null,
+      statistical: 0.05, systematic: 0.05, vGsr: null, vError: null,
     })),
   )
   // Our Galaxy stands at the origin in this table, where no direction can be drawn; its index needs none.

@@ -8,11 +8,11 @@ import { rebuildCatalogue } from '../../server/services/revision/rebuild.ts'
 import { writeRevision } from '../../server/services/revision/write.ts'
 import { useTestDatabase } from './harness/database.ts'
 import {
-  addGalaxy, addMeasurement, amendGalaxy, approve, changeScale, currentRevision, excludeMeasurement, laySources, propose, replaceMeasurement, setOverride, several, type Change,
+  addGalaxy, addMeasurement, amendGalaxy, approve, changeScale, currentRevision, excludeMeasurement, laySources, propose, replaceMeasurement, setHost, setOverride, several, type Change,
 } from './revision/shifting.ts'
 
 const database = useTestDatabase()
-const ANY: readonly Change[] = [addGalaxy, addMeasurement, addMeasurement, replaceMeasurement, replaceMeasurement, excludeMeasurement, amendGalaxy, amendGalaxy, setOverride, several, changeScale]
+const ANY: readonly Change[] = [addGalaxy, addMeasurement, addMeasurement, replaceMeasurement, replaceMeasurement, excludeMeasurement, amendGalaxy, amendGalaxy, setOverride, setHost, setHost, several, changeScale]
 
 /** Ends a transaction of which nothing is to stay. */
 class Undone extends Error {}
@@ -92,7 +92,7 @@ describe('a revision', () => {
       const plan = await computeRevision(trx, { revision: (await currentRevision(trx)) + 1, touched: rows.map((r) => r.galaxy), scaleChanged: true })
       expect(plan.rows).toEqual([])
       expect(plan.adopted).toEqual([])
-      expect(effectOf(plan)).toEqual({ galaxies: [], systems: [], counts: { galaxiesAdded: 0, galaxiesChanged: 0, hostsChanged: 0 } })
+      expect(effectOf(plan)).toEqual({ galaxies: [], systems: [], shifts: [], counts: { galaxiesAdded: 0, galaxiesChanged: 0, distancesMoved: 0, hostsChanged: 0 } })
     })
   })
 

@@ -14,21 +14,24 @@ export interface StoredRow extends CatalogueRow {
   galaxy: number
   main_disturber_galaxy: number | null
   index_disturber_galaxy: number | null
+  /** JSON as it was written: a list of PossibleHost. */
+  possible_hosts: string
 }
 
 /** The rows that stand for these galaxies, by galaxy id. */
 export async function standingRows(trx: Knex, ids: readonly number[]): Promise<Map<number, StoredRow>> {
   if (ids.length === 0) return new Map()
   const { rows } = (await trx.raw(
-    `select galaxy, main_disturber_galaxy, index_disturber_galaxy, ${COMPUTED_COLUMNS.join(', ')} from catalogue_rows where rev_to is null and galaxy = any(?)`,
+    `select galaxy, main_disturber_galaxy, index_disturber_galaxy, possible_hosts::text, ${COMPUTED_COLUMNS.join(', ')} from catalogue_rows where rev_to is null and galaxy = any(?)`,
     [[...ids]],
   )) as { rows: StoredRow[] }
   return new Map(rows.map((row) => [row.galaxy, row]))
 }
 
 /** Whether the row that stands is the one that is planned. */
-export function sameRow({ before, after, mainDisturber, indexDisturber }: PlannedRow): boolean {
+export function sameRow({ before, after, mainDisturber, indexDisturber, possibleHosts }: PlannedRow): boolean {
   if (!before || before.main_disturber_galaxy !== mainDisturber || before.index_disturber_galaxy !== indexDisturber) return false
+  if (before.possible_hosts !== JSON.stringify(possibleHosts)) return false
   return COMPUTED_COLUMNS.every((key) => (before[key] ?? null) === (after[key] ?? null))
 }
 

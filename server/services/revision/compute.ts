@@ -8,11 +8,11 @@ import { affectedBy } from '../../../core/derive/affected.ts'
 import { neighbourFrom, withChanges, type Neighbour, type Neighbourhood } from '../../../core/derive/neighbourhood.ts'
 import { placeIn } from '../../../core/derive/places.ts'
 import type { OwnColumns } from '../../../core/derive/own.ts'
-import { NOWHERE, relationOf, relationsOf, type Relation } from '../../../core/derive/relation.ts'
+import { NOWHERE, relationFinder, relationsOf, type HostOverrides, type PossibleHost, type Relation } from '../../../core/derive/relation.ts'
 import { rowOf } from '../../../core/derive/row.ts'
 import { adoptGalaxies } from './adopt-galaxies.ts'
-import { adoptedDifferences, sameRow, standingRows } from './compare.ts'
-import { allGalaxies, loadScale } from './load.ts'
+import { adoptedDifferences, sameRow, standingRows, type StoredRow } from './compare.ts'
+import { allGalaxies, loadHostOverrides, loadScale } from './load.ts'
 import { surroundingsAt, type Surroundings } from './neighbourhood-cache.ts'
 import type { PlannedAdopted, PlannedRow, RevisionPlan } from './plan.ts'
 
@@ -53,9 +53,11 @@ async function place(trx: Knex, own: ReadonlyMap<number, OwnColumns>, before: Su
   const moved = movedNeighbours(own, before.neighbourhood)
   const after = withChanges(before.neighbourhood, moved)
   const everybody = before.neighbourhood.ids.every((id) => own.has(id))
-  const affected = everybody ? [] : affectedBy(before.neighbourhood, before.places, after, new Set(moved.keys()), scale.policy.host.massRatio)
-  const asked = new Set([...affected, ...own.keys()])
-  const relations = asked.size < MANY ? new Map([...asked].map((id) => [id, relationOf(after, id, scale.policy)])) : relationsOf(after, asked, scale.policy)
+  const affected = everybody ? [] : affectedBy(before.neighbourhood, before.places, after, new Set(moved.keys()), scale.policy.host)
+  const overrides = await loadHostOverrides(trx)
+  const assigned = [...overrides].flatMap(([id, host]) => (host !== null && moved.has(host) ? [id] : []))
+  const asked = new Set([...affected, ...assigned, ...own.keys()])
+  const relations = relationsAmong(after, asked, scale, overrides)
   const gains = satelliteGains(relations, before)
   const satellitesOf = (id: number): number => (before.satellites.get(id) ?? 0) + (gains.get(id) ?? 0)
   const ids = [...new Set([...relations.keys(), ...gains.keys()])]
@@ -65,11 +67,21 @@ async function place(trx: Knex, own: ReadonlyMap<number, OwnColumns>, before: Su
     const columns = own.get(id) ?? stored
     if (!columns) return []
     // A host whose satellites alone came or went keeps its place.
-    const place = relations.get(id) ?? { ...NOWHERE, ...placeIn(before.neighbourhood, before.places, id), columns: {} }
+    const place = relations.get(id) ?? { ...NOWHERE, ...placeIn(before.neighbourhood, before.places, id), columns: {}, possibleHosts: possibleHostsIn(stored) }
     const row = rowOf(columns, place, satellitesOf(id) > 0)
-    const planned = { galaxyId: id, before: stored ?? null, after: row, mainDisturber: place.mainDisturber, indexDisturber: place.indexDisturber }
+    const planned = { galaxyId: id, before: stored ?? null, after: row, mainDisturber: place.mainDisturber, indexDisturber: place.indexDisturber, possibleHosts: place.possibleHosts }
     return sameRow(planned) ? [] : [planned]
   })
+}
+
+function relationsAmong(n: Neighbourhood, asked: ReadonlySet<number>, { policy }: Scale, overrides: HostOverrides): Map<number, Relation> {
+  if (asked.size >= MANY) return relationsOf(n, asked, policy, overrides)
+  const find = relationFinder(n, policy, overrides)
+  return new Map([...asked].map((id) => [id, find(id)]))
+}
+
+function possibleHostsIn(stored: StoredRow | undefined): readonly PossibleHost[] {
+  return stored ? (JSON.parse(stored.possible_hosts) as PossibleHost[]) : []
 }
 
 /** Galaxies whose place or pull differs from before; null for one that left. */

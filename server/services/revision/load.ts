@@ -50,3 +50,13 @@ export async function loadOverrides(trx: Knex, galaxyIds: readonly number[]): Pr
   }[]
   return new Map(rows.flatMap((r) => (r.choice.measurements ? [[`${r.galaxy} ${r.about}`, { measurements: r.choice.measurements, reason: r.reason }] as const] : [])))
 }
+
+/** Hosts that people decided on: the host (id), or null for none, by galaxy. A choice is kept by slug, which a galaxy may have given up since. */
+export async function loadHostOverrides(trx: Knex): Promise<Map<number, number | null>> {
+  const { rows } = (await trx.raw(
+    `select o.galaxy, o.choice ->> 'host' is null as none,
+            (select v.galaxy from galaxy_versions v where v.slug = o.choice ->> 'host' order by v.rev_to is null desc, v.rev_from desc limit 1) as host
+       from overrides o where o.rev_to is null and o.about = 'host'`,
+  )) as { rows: { galaxy: number; none: boolean; host: number | null }[] }
+  return new Map(rows.flatMap((r) => (r.none || r.host !== null ? [[r.galaxy, r.none ? null : r.host] as const] : [])))
+}

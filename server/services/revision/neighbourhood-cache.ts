@@ -29,7 +29,7 @@ interface PlaceRow extends CatalogueRow {
   index_disturber_galaxy: number | null
 }
 
-const COLUMNS = 'galaxy, slug, name, status, sgx, sgy, sgz, dm, dm_err, dm_err_sys, log_mstar, v_gsr, host_relation, main_disturber_galaxy, index_disturber_galaxy'
+const COLUMNS = 'galaxy, slug, name, status, sgx, sgy, sgz, dm, dm_err, dm_err_sys, log_mstar, v_gsr, v_hel_err, host_relation, main_disturber_galaxy, index_disturber_galaxy'
 
 /**
  * The surroundings as of a revision.

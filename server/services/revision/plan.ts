@@ -2,6 +2,7 @@
 import type { Adopted } from '../../../core/adoption/adopted.ts'
 import type { CatalogueRow } from '../../../core/columns.ts'
 import type { QuantityKey } from '../../../core/quantities.ts'
+import type { PossibleHost } from '../../../core/derive/relation.ts'
 import type { StoredRow } from './compare.ts'
 import type { Surroundings } from './neighbourhood-cache.ts'
 
@@ -12,6 +13,7 @@ export interface PlannedRow {
   after: CatalogueRow
   mainDisturber: number | null
   indexDisturber: number | null
+  possibleHosts: readonly PossibleHost[]
 }
 
 export interface PlannedAdopted {

@@ -6,7 +6,7 @@ import { relationsOf } from '../../../core/derive/relation.ts'
 import { rowOf } from '../../../core/derive/row.ts'
 import { adoptGalaxies } from './adopt-galaxies.ts'
 import { adoptedDifferences, sameRow, standingRows } from './compare.ts'
-import { allGalaxies, loadScale } from './load.ts'
+import { allGalaxies, loadHostOverrides, loadScale } from './load.ts'
 import type { PlannedRow } from './plan.ts'
 import { writeAdopted, writeRows } from './write.ts'
 
@@ -33,7 +33,7 @@ export async function rebuildCatalogue(trx: Knex, revision: number, { onProgress
     onProgress?.((0.6 * Math.min(ids.length, i + CHUNK)) / ids.length)
   }
   const neighbourhood = neighbourhoodOf([...own].flatMap(([id, columns]) => neighbourFrom(id, columns) ?? []))
-  const relations = relationsOf(neighbourhood, ids, scale.policy, (done) => onProgress?.(0.6 + (0.2 * done) / ids.length))
+  const relations = relationsOf(neighbourhood, ids, scale.policy, await loadHostOverrides(trx), (done) => onProgress?.(0.6 + (0.2 * done) / ids.length))
   const hosting = new Set([...relations.values()].flatMap((r) => (r.isSatellite && r.mainDisturber !== null ? [r.mainDisturber] : [])))
   let written = 0
   for (let i = 0; i < ids.length; i += CHUNK) {
@@ -44,7 +44,7 @@ export async function rebuildCatalogue(trx: Knex, revision: number, { onProgress
       const columns = own.get(id)
       if (!relation || !columns) return []
       const after = rowOf(columns, relation, hosting.has(id))
-      const row = { galaxyId: id, before: standing.get(id) ?? null, after, mainDisturber: relation.mainDisturber, indexDisturber: relation.indexDisturber }
+      const row = { galaxyId: id, before: standing.get(id) ?? null, after, mainDisturber: relation.mainDisturber, indexDisturber: relation.indexDisturber, possibleHosts: relation.possibleHosts }
       return sameRow(row) ? [] : [row]
     })
     await writeRows(trx, revision, planned)

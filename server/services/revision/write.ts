@@ -42,11 +42,11 @@ export async function writeRows(trx: Knex, revision: number, planned: readonly P
   }
 }
 
-function record({ galaxyId, after, mainDisturber, indexDisturber }: PlannedRow, revision: number, updatedAt: string): Record<string, unknown> {
+function record({ galaxyId, after, mainDisturber, indexDisturber, possibleHosts }: PlannedRow, revision: number, updatedAt: string): Record<string, unknown> {
   const columns = Object.fromEntries(COMPUTED_COLUMNS.map((key) => [key, after[key] ?? null]))
   const { sgx, sgy, sgz, ra, dec } = columns
   return {
-    ...columns, galaxy: galaxyId, revision, updated_at: updatedAt, main_disturber_galaxy: mainDisturber, index_disturber_galaxy: indexDisturber,
+    ...columns, galaxy: galaxyId, revision, updated_at: updatedAt, main_disturber_galaxy: mainDisturber, index_disturber_galaxy: indexDisturber, possible_hosts: possibleHosts,
     unit_vector: `(${unitVector(Number(ra), Number(dec)).join(',')})`, sg_position: sgx === null ? null : `(${String(sgx)},${String(sgy)},${String(sgz)})`, rev_from: revision,
   }
 }

@@ -42,7 +42,7 @@ describe('affectedBy', () => {
         const was = relations(before)
         const after = withChanges(before, changes)
         const is = relations(after)
-        const affected = affectedBy(before, placesOf(before, was), after, new Set(changes.keys()), POLICY.host.massRatio, manyMovers)
+        const affected = affectedBy(before, placesOf(before, was), after, new Set(changes.keys()), POLICY.host, manyMovers)
         for (const [id, relation] of is) if (!affected.has(id)) expect(relation).toEqual(was.get(id))
       }),
       { numRuns: 300 },
@@ -54,12 +54,12 @@ describe('affectedBy', () => {
     const before = neighbourhoodOf([neighbour(1, [4, 0, 0], 5e10), near, neighbour(3, [-4, 0, 0], 5e10), neighbour(4, [-4.1, 0, 0], 1e8)])
     const places = placesOf(before, relations(before))
     const after = withChanges(before, new Map([[2, moved(near, near.modulus + 0.02)]]))
-    expect([...affectedBy(before, places, after, new Set([2]), 5)].sort()).toEqual([1, 2])
+    expect([...affectedBy(before, places, after, new Set([2]), POLICY.host)].sort()).toEqual([1, 2])
   })
 
   it('is empty when nothing changed', () => {
     const before = neighbourhoodOf(crowd(1, 20))
-    expect(affectedBy(before, placesOf(before, relations(before)), before, new Set(), 5).size).toBe(0)
+    expect(affectedBy(before, placesOf(before, relations(before)), before, new Set(), POLICY.host).size).toBe(0)
   })
 })
 

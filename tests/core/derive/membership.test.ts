@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { virialRadius } from '../../../core/astro/environment.ts'
-import { drawnDistances, membershipOf, reachOf, sphereOf } from '../../../core/derive/membership.ts'
+import { drawnDistances } from '../../../core/derive/draws.ts'
+import { membershipOf, reachOf, sphereOf } from '../../../core/derive/membership.ts'
 import { quantilesInPlace } from '../../../core/derive/quantile.ts'
 import { neighbourhoodOf } from '../../../core/derive/neighbourhood.ts'
 import { relationOf, relationsOf } from '../../../core/derive/relation.ts'
@@ -28,13 +29,13 @@ describe('the sphere of a host', () => {
 describe('membershipOf', () => {
   it('is sure where the distances are', () => {
     const sure = { statistical: 1e-6, systematic: 0.05 }
-    expect(membershipOf(beside(100, sure), { ...host, ...sure }, policy)).toMatchObject({ isSatellite: true, probability: 1 })
-    expect(membershipOf(beside(500, sure), { ...host, ...sure }, policy)).toMatchObject({ isSatellite: false, probability: 1 })
+    expect(membershipOf(beside(100, sure), { ...host, ...sure }, [], policy)).toMatchObject({ isSatellite: true, probability: 1 })
+    expect(membershipOf(beside(500, sure), { ...host, ...sure }, [], policy)).toMatchObject({ isSatellite: false, probability: 1 })
   })
 
   it('does not let the error of the scale part a galaxy from its host: it moves both alike', () => {
     const exact = { statistical: 1e-9, systematic: 0.1 }
-    const found = membershipOf(beside(200, exact), { ...host, ...exact }, policy)
+    const found = membershipOf(beside(200, exact), { ...host, ...exact }, [], policy)
     expect(found.probability).toBe(1)
     // The separation itself scales with the distance: by 5 % a standard deviation.
     expect(found.separationHi / found.separation).toBeCloseTo(10 ** (0.1 / 5), 2)
@@ -43,7 +44,7 @@ describe('membershipOf', () => {
   it('agrees with the closed form where the line of sight decides', () => {
     // Behind one another, separation is the difference of the distances: near normal, with sqrt(2) of the single errors.
     const behind = neighbour(2, [3.75, 0, 0], 1e7, { statistical: 0.05 })
-    const found = membershipOf(behind, { ...host, statistical: 0.05 }, { ...policy, draws: 20_000 })
+    const found = membershipOf(behind, { ...host, statistical: 0.05 }, [], { ...policy, draws: 20_000 })
     const sigma = 0.4605 * 0.05 * Math.hypot(3.75, 3.6)
     const reach = reachOf(host.mass, policy)
     const expected = normalShare((reach - 0.15) / sigma) - normalShare((-reach - 0.15) / sigma)
@@ -51,16 +52,16 @@ describe('membershipOf', () => {
   })
 
   it('repeats itself, whatever else is computed and in whatever order', () => {
-    const first = membershipOf(beside(250), host, policy)
-    membershipOf(neighbour(9, [5, 1, 0], 1e7), host, policy)
-    expect(membershipOf(beside(250), host, policy)).toEqual(first)
-    expect(membershipOf(beside(250), host, policy, drawnDistances(host, policy))).toEqual(first)
-    expect(membershipOf(beside(250), host, { ...policy, seed: policy.seed + 1 }, undefined).separationLo).not.toBe(first.separationLo)
+    const first = membershipOf(beside(250), host, [], policy)
+    membershipOf(neighbour(9, [5, 1, 0], 1e7), host, [], policy)
+    expect(membershipOf(beside(250), host, [], policy)).toEqual(first)
+    expect(membershipOf(beside(250), host, [], policy, (g) => drawnDistances(g, policy))).toEqual(first)
+    expect(membershipOf(beside(250), host, [], { ...policy, seed: policy.seed + 1 }).separationLo).not.toBe(first.separationLo)
   })
 
   it('takes the policy’s error for a distance that has none', () => {
-    const narrow = membershipOf(beside(100, { statistical: 0.01, systematic: null }), host, policy)
-    const unknown = membershipOf(beside(100, { statistical: null, systematic: null }), host, policy)
+    const narrow = membershipOf(beside(100, { statistical: 0.01, systematic: null }), host, [], policy)
+    const unknown = membershipOf(beside(100, { statistical: null, systematic: null }), host, [], policy)
     expect(unknown.separationHi).toBeGreaterThan(2 * narrow.separationHi)
   })
 })

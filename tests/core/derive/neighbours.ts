@@ -7,7 +7,7 @@ import { random } from '../../../core/random.ts'
 /** A galaxy at supergalactic x, y, z (Mpc), of a stellar mass (Msun). */
 export function neighbour(id: number, at: readonly [number, number, number], mass: number, more: Partial<Neighbour> = {}): Neighbour {
   const [x, y, z] = at
-  return { id, slug: `g-${id}`, name: `G ${id}`, x, y, z, mass, modulus: modulusOf(Math.hypot(x, y, z)), statistical: 0.08, systematic: 0.06, vGsr: null, ...more }
+  return { id, slug: `g-${id}`, name: `G ${id}`, x, y, z, mass, modulus: modulusOf(Math.hypot(x, y, z)), statistical: 0.08, systematic: 0.06, vGsr: null, vError: null, ...more }
 }
 
 /** Galaxies in a box of 2 Mpc about 4 Mpc away, a fifth of them without mass; clustered, so that there are satellites. */
@@ -18,7 +18,7 @@ export function crowd(seed: number, size: number): Neighbour[] {
     const centre = draw.pick(centres)
     const spread = draw.uniform() < 0.3 ? 1 : 0.15
     const at = centre.map((c) => c + spread * draw.normal()) as [number, number, number]
-    return neighbour(i + 1, at, draw.uniform() < 0.2 ? 0 : 10 ** (6 + 5 * draw.uniform()), { vGsr: 100 * draw.normal() })
+    return neighbour(i + 1, at, draw.uniform() < 0.2 ? 0 : 10 ** (6 + 5 * draw.uniform()), { vGsr: 100 * draw.normal(), vError: draw.uniform() < 0.2 ? null : 5 * draw.uniform() })
   })
 }
 

@@ -130,10 +130,23 @@ export const amendGalaxy: Change = async (trx, revision, draw) => {
 export const setOverride: Change = async (trx, revision, draw) => {
   const galaxy = await anyGalaxy(trx, draw)
   const held = (await trx('measurements').where({ galaxy, quantity: 'distance_modulus' }).whereNull('revTo').select('lineage')) as { lineage: number }[]
-  const standing = (await trx('overrides').where({ galaxy }).whereNull('revTo').first('id')) as { id: number } | undefined
+  const standing = (await trx('overrides').where({ galaxy, about: 'distance_modulus' }).whereNull('revTo').first('id')) as { id: number } | undefined
   if (standing) await end(trx, 'overrides', standing.id, revision)
   else if (held.length > 0) {
     await trx('overrides').insert({ galaxy, about: 'distance_modulus', choice: JSON.stringify({ measurements: [draw.pick(held).lineage] }), reason: 'the tip is contaminated', revFrom: revision })
+  }
+  return { touched: [galaxy] }
+}
+
+/** Gives a galaxy another host than the rule would, or none, or takes that back. */
+export const setHost: Change = async (trx, revision, draw) => {
+  const galaxy = await anyGalaxy(trx, draw)
+  const standing = (await trx('overrides').where({ galaxy, about: 'host' }).whereNull('revTo').first('id')) as { id: number } | undefined
+  if (standing) await end(trx, 'overrides', standing.id, revision)
+  else {
+    const host = await anyGalaxy(trx, draw)
+    const { slug } = (await trx('galaxyVersions').where({ galaxy: host }).whereNull('revTo').first('slug')) as { slug: string }
+    await trx('overrides').insert({ galaxy, about: 'host', choice: JSON.stringify({ host: host === galaxy || draw.uniform() < 0.3 ? null : slug }), reason: 'a stream leads there', revFrom: revision })
   }
   return { touched: [galaxy] }
 }
