@@ -1,6 +1,6 @@
 /**
- * The search for possible hosts when it is made for everybody: a tree over directions and distances, each box with its nearest and farthest
- * end and its longest reach. The answer is that of looking at all.
+ * The search for possible hosts when it is made for everybody: trees over directions and distances, one for each class of reach, each box with
+ * its nearest and farthest end. The answer is that of looking at all.
  */
 import type { Policy } from '../scale/policy.ts'
 import { mayOutweigh, ROOM } from './disturber.ts'
@@ -31,19 +31,39 @@ export interface PossibleHostSearch {
 
 export function possibleHostSearch(n: Neighbourhood, policy: Policy['host']): PossibleHostSearch {
   const s = spansOf(n, policy)
-  const everybody = Int32Array.from({ length: n.size }, (_, i) => i)
-  const massive = everybody.filter((i) => (n.mass[i] ?? 0) > 0)
-  const root = massive.length === 0 ? null : boxOf(n, s, massive)
+  const order = alongCurve(s, n.size)
+  // A box reaches as far as the farthest in it: who reaches about as far is kept together.
+  const classes = new Map<number, number[]>()
+  for (const i of order) {
+    if ((n.mass[i] ?? 0) <= 0) continue
+    const key = Math.floor(2 * Math.log2(s.reach[i] ?? NaN))
+    const list = classes.get(key)
+    if (list) list.push(i)
+    else classes.set(key, [i])
+  }
+  const roots = [...classes.values()].map((members) => boxOf(n, s, Int32Array.from(members)))
   const of = (i: number): number[] => {
     const found: number[] = []
-    if (root) search(root, n, s, i, spanAt(s, i), policy.massRatio, found)
+    const own = spanAt(s, i)
+    for (const root of roots) search(root, n, s, i, own, policy.massRatio, found)
     return found.sort((a, b) => a - b)
   }
-  return { of, order: ordered(s, everybody) }
+  return { of, order }
 }
 
+/** @param members - along the curve, so that each half is a neighbourhood of its own */
 function boxOf(n: Neighbourhood, s: Spans, members: Int32Array): Box {
-  const box: Box = { lo: [Infinity, Infinity, Infinity], hi: [-Infinity, -Infinity, -Infinity], near: Infinity, far: 0, reach: 0, mass: 0, members: null, halves: null }
+  if (members.length > LEAF) {
+    const middle = members.length >> 1
+    const a = boxOf(n, s, members.subarray(0, middle))
+    const b = boxOf(n, s, members.subarray(middle))
+    return {
+      lo: [Math.min(a.lo[0], b.lo[0]), Math.min(a.lo[1], b.lo[1]), Math.min(a.lo[2], b.lo[2])],
+      hi: [Math.max(a.hi[0], b.hi[0]), Math.max(a.hi[1], b.hi[1]), Math.max(a.hi[2], b.hi[2])],
+      near: Math.min(a.near, b.near), far: Math.max(a.far, b.far), reach: Math.max(a.reach, b.reach), mass: Math.max(a.mass, b.mass), members: null, halves: [a, b],
+    }
+  }
+  const box: Box = { lo: [Infinity, Infinity, Infinity], hi: [-Infinity, -Infinity, -Infinity], near: Infinity, far: 0, reach: 0, mass: 0, members, halves: null }
   const axes = [s.ux, s.uy, s.uz] as const
   for (const i of members) {
     for (let k = 0; k < 3; k++) {
@@ -56,31 +76,7 @@ function boxOf(n: Neighbourhood, s: Spans, members: Int32Array): Box {
     box.reach = Math.max(box.reach, s.reach[i] ?? NaN)
     box.mass = Math.max(box.mass, n.mass[i] ?? 0)
   }
-  if (members.length <= LEAF) return { ...box, members }
-  const [first, second] = halved(s, members)
-  return { ...box, halves: [boxOf(n, s, first), boxOf(n, s, second)] }
-}
-
-/** Divided across the widest of four: three of direction, and depth as a ratio. */
-function halved(s: Spans, members: Int32Array): [Int32Array, Int32Array] {
-  const depth = Float64Array.from(members, (i) => Math.log(s.near[i] ?? NaN))
-  const coordinates = [s.ux, s.uy, s.uz].map((axis) => Float64Array.from(members, (i) => axis[i] ?? NaN)).concat([depth])
-  const widths = coordinates.map(width)
-  const along = coordinates[widths.indexOf(Math.max(...widths))] ?? depth
-  const order = Int32Array.from({ length: members.length }, (_, k) => k).sort((a, b) => (along[a] ?? 0) - (along[b] ?? 0))
-  const sorted = order.map((k) => members[k] ?? 0)
-  const middle = sorted.length >> 1
-  return [sorted.subarray(0, middle), sorted.subarray(middle)]
-}
-
-function width(list: Float64Array): number {
-  let lo = Infinity
-  let hi = -Infinity
-  for (const value of list) {
-    if (value < lo) lo = value
-    if (value > hi) hi = value
-  }
-  return hi - lo
+  return box
 }
 
 function search(box: Box, n: Neighbourhood, s: Spans, i: number, own: Span, massRatio: number, found: number[]): void {
@@ -110,12 +106,18 @@ function outside(x: number, lo: number, hi: number): number {
   return x < lo ? lo - x : x > hi ? x - hi : 0
 }
 
-/** A walk through the halves, in their order. */
-function ordered(s: Spans, members: Int32Array): Int32Array {
-  if (members.length <= LEAF) return members
-  const [first, second] = halved(s, members)
-  const order = new Int32Array(members.length)
-  order.set(ordered(s, first))
-  order.set(ordered(s, second), first.length)
-  return order
+/** Steps of each coordinate of the curve: four of them fill the 52 bits of a number. */
+const STEPS = 2 ** 13
+
+/** Everybody along a Z-order curve through direction and depth (Morton 1966): near one another on it is, mostly, near one another in space. */
+function alongCurve(s: Spans, size: number): Int32Array {
+  const keys = new Float64Array(size)
+  const cell = (share: number): number => Math.min(STEPS - 1, Math.max(0, Math.floor(share * STEPS)))
+  for (let i = 0; i < size; i++) {
+    const cells = [cell(((s.ux[i] ?? 0) + 1) / 2), cell(((s.uy[i] ?? 0) + 1) / 2), cell(((s.uz[i] ?? 0) + 1) / 2), cell(Math.log2(1 + (s.near[i] ?? 0)) / 6)]
+    let key = 0
+    for (let bit = STEPS / 2; bit >= 1; bit /= 2) for (const c of cells) key = 2 * key + ((c & bit) === 0 ? 0 : 1)
+    keys[i] = key
+  }
+  return Int32Array.from({ length: size }, (_, i) => i).sort((a, b) => (keys[a] ?? 0) - (keys[b] ?? 0) || a - b)
 }

@@ -6,8 +6,7 @@ import type { CatalogueValue, HostRelation } from '../columns.ts'
 import type { Policy } from '../scale/policy.ts'
 import { disturbersOf, type Disturbers } from './disturber.ts'
 import { disturberSearch } from './disturber-tree.ts'
-import { drawsKept } from './draws.ts'
-import { membershipOf, type Membership } from './membership.ts'
+import { membershipFinder, type Membership, type MembershipFinder } from './membership.ts'
 import type { Neighbour, Neighbourhood, Place } from './neighbourhood.ts'
 import { possibleHostsOf } from './possible-hosts.ts'
 import { possibleHostSearch } from './possible-hosts-tree.ts'
@@ -45,9 +44,8 @@ export const NOWHERE: Relation = {
 /** What the place of one galaxy is found with, over and over. */
 interface Ground {
   n: Neighbourhood
-  policy: Policy
   overrides: HostOverrides
-  drawn: (galaxy: Neighbour) => Float64Array
+  membership: MembershipFinder
 }
 
 /** Where a galaxy stands among the others. Without a distance it stands nowhere; without neighbours of any mass it has no index. */
@@ -57,7 +55,7 @@ export function relationOf(n: Neighbourhood, id: number, policy: Policy, overrid
 
 /** Finds one place after the other: for a handful of galaxies, by looking at all neighbours of each. */
 export function relationFinder(n: Neighbourhood, policy: Policy, overrides: HostOverrides = NO_OVERRIDES): (id: number) => Relation {
-  const ground: Ground = { n, policy, overrides, drawn: drawsKept(policy.host) }
+  const ground: Ground = { n, overrides, membership: membershipFinder(policy.host) }
   return (id) => {
     const i = n.indexOf.get(id)
     return i === undefined ? NOWHERE : relationAt(ground, i, disturbersOf(n, i, policy.host.massRatio), () => possibleHostsOf(n, i, policy.host))
@@ -71,7 +69,7 @@ export function relationFinder(n: Neighbourhood, policy: Policy, overrides: Host
  * @param onProgress - called now and then with how many are done
  */
 export function relationsOf(n: Neighbourhood, ids: Iterable<number>, policy: Policy, overrides: HostOverrides = NO_OVERRIDES, onProgress?: (done: number) => void): Map<number, Relation> {
-  const ground: Ground = { n, policy, overrides, drawn: drawsKept(policy.host) }
+  const ground: Ground = { n, overrides, membership: membershipFinder(policy.host) }
   const disturbers = disturberSearch(n, policy.host.massRatio)
   const possible = possibleHostSearch(n, policy.host)
   // The order of the answer is that of the question.
@@ -89,7 +87,7 @@ export function relationsOf(n: Neighbourhood, ids: Iterable<number>, policy: Pol
 
 const PROGRESS_EVERY = 500
 
-function relationAt({ n, policy, overrides, drawn }: Ground, i: number, found: Disturbers, possibleHosts: () => readonly number[]): Relation {
+function relationAt({ n, overrides, membership: find }: Ground, i: number, found: Disturbers, possibleHosts: () => readonly number[]): Relation {
   const galaxy = n.galaxies[i]
   if (!galaxy) return NOWHERE
   const index = n.galaxies[found.index]
@@ -99,7 +97,7 @@ function relationAt({ n, policy, overrides, drawn }: Ground, i: number, found: D
   const main = chosen ?? n.galaxies[found.main]
   if (!main) return { ...NOWHERE, indexDisturber: index?.id ?? null, columns: { ...NOWHERE.columns, tidal_index: tidalIndex } }
   const others = possibleHosts().flatMap((j) => n.galaxies[j] ?? []).filter((g) => g !== main)
-  const membership = overridden(membershipOf(galaxy, main, others, policy.host, drawn), chosen, override)
+  const membership = overridden(find(galaxy, main, others), chosen, override)
   return {
     indexDisturber: index?.id ?? null,
     mainDisturber: main.id,
