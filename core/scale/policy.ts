@@ -3,14 +3,23 @@
  * assigned. Versioned in the database and changed only through a submission; this file holds its shape and the one a new catalogue starts with.
  */
 import { z } from 'zod'
-import { METHOD_KEYS } from '../methods.ts'
+import { method, METHOD_KEYS } from '../methods.ts'
 
-const magnitudeError = z.number().positive().max(2)
+const within = (lo: number, hi: number, unit = '') => {
+  const sentence = `This must be a number from ${lo} to ${hi}${unit}.`
+  return z.number(sentence).min(lo, sentence).max(hi, sentence)
+}
+const wholeWithin = (lo: number, hi: number) => {
+  const sentence = `This must be a whole number from ${lo} to ${hi}.`
+  return z.int(sentence).min(lo, sentence).max(hi, sentence)
+}
+const MAGNITUDES = 'This must be more than 0 and at most 2 mag.'
+const magnitudeError = z.number(MAGNITUDES).positive(MAGNITUDES).max(2, MAGNITUDES)
 
 export const methodPolicySchema = z.strictObject({
   method: z.enum(METHOD_KEYS),
   /** 1 is believed first; a lower tier is shown and not used. */
-  tier: z.int().min(1).max(9),
+  tier: wholeWithin(1, 9),
   /** Systematic error of the method on the catalogue's scale, mag. */
   systematic: magnitudeError,
   /** Added in quadrature when the anchor value assumed is not stated, mag. */
@@ -20,25 +29,34 @@ export const methodPolicySchema = z.strictObject({
 })
 
 export const policySchema = z.strictObject({
-  name: z.string().min(1).max(120),
-  methods: z.array(methodPolicySchema).refine((list) => new Set(list.map((m) => m.method)).size === list.length, 'a method stands twice'),
+  name: z.string().trim().min(1, 'Give the policy a name.').max(120),
+  methods: z.array(methodPolicySchema).refine((list) => new Set(list.map((m) => m.method)).size === list.length, 'A method stands here twice.'),
   /** |z| above which a measurement is flagged as in tension; it is never dropped for it. */
-  tension: z.number().min(2).max(10),
+  tension: within(2, 10),
   host: z.strictObject({
     /** A disturber counts as a possible host when it is at least this many times as massive in stars. */
-    massRatio: z.number().min(1).max(100),
+    massRatio: within(1, 100),
     /** Radius of a host's sphere in units of its R200. */
-    sphere: z.number().min(0.5).max(4),
+    sphere: within(0.5, 4),
     /** Total over stellar mass. */
-    totalOverStellar: z.number().min(1).max(200),
+    totalOverStellar: within(1, 200),
     /** Hubble constant for R200, km/s/Mpc. */
-    hubble: z.number().min(50).max(100),
+    hubble: within(50, 100, ' km/s/Mpc'),
     /** Draws for membership probabilities, and the seed they start from. */
-    draws: z.int().min(100).max(20000),
-    seed: z.int().min(0).max(2 ** 31 - 1),
+    draws: wholeWithin(100, 20000),
+    seed: wholeWithin(0, 2 ** 31 - 1),
     /** Error of a distance modulus that states none, for draws only, mag. */
     unknownError: magnitudeError,
   }),
+})
+
+/**
+ * A policy as it may be proposed: with a rule for every method there is. (An older one may lack a method that was added to the registry since;
+ * values of it are then shown and not used, until a policy says how.)
+ */
+export const completePolicySchema = policySchema.superRefine((policy, context) => {
+  const missing = METHOD_KEYS.filter((key) => !policy.methods.some((m) => m.method === key))
+  if (missing.length > 0) context.addIssue({ code: 'custom', path: ['methods'], message: `No rule for ${missing.map((key) => method(key).label).join(', ')}: every method needs one.` })
 })
 
 export type Policy = z.infer<typeof policySchema>

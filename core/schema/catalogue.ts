@@ -209,15 +209,6 @@ export const hostSchema = z.object({
   ),
 })
 
-/** GET /api/scale */
-export const scaleSchema = z.object({
-  revision: z.int(),
-  anchors: z.array(
-    z.object({ key: z.string(), label: z.string(), kind: z.enum(['modulus', 'absolute-magnitude']), methods: z.array(z.string()), value: z.number(), err: z.number(), source: z.string(), measurements: z.int() }),
-  ),
-  policy: z.unknown(),
-})
-
 /** GET /api/summary: the catalogue at a glance. */
 export const summarySchema = z.object({
   revision: z.int(),
@@ -244,6 +235,5 @@ export type MeasurementAnswer = z.infer<typeof measurementSchema>
 export type History = z.infer<typeof historySchema>
 export type HostsAnswer = z.infer<typeof hostsSchema>
 export type HostAnswer = z.infer<typeof hostSchema>
-export type ScaleAnswer = z.infer<typeof scaleSchema>
 export type Summary = z.infer<typeof summarySchema>
 export type Resolved = z.infer<typeof resolveSchema>

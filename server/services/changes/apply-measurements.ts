@@ -1,4 +1,4 @@
-/** Measurements added, mended and excluded: a measurement keeps its id through all its versions. */
+/** Measurements added, mended, excluded and restored: a measurement keeps its id through all its versions. */
 import type { Measurement } from '../../../core/catalogue/types.ts'
 import type { Application } from './apply.ts'
 import { galaxyOf } from './apply.ts'
@@ -36,6 +36,18 @@ export async function applyExclusions(application: Application, changes: readonl
       const now = heldIn(held, c.payload.measurementId)
       return { now, fields: { ...heldFields(now), excludedReason: c.payload.reason }, published: now.published }
     }),
+  )
+}
+
+/** What somebody else restored meanwhile is left alone. */
+export async function applyRestorations(application: Application, changes: readonly StoredChangeOf<'measurement.restore'>[]): Promise<number> {
+  const held = await measurementsById(application.trx, changes.map((c) => c.payload.measurementId))
+  return writeVersions(
+    application,
+    changes
+      .map((c) => heldIn(held, c.payload.measurementId))
+      .filter((now) => now.excludedReason !== null)
+      .map((now) => ({ now, fields: { ...heldFields(now), excludedReason: null }, published: now.published })),
   )
 }
 

@@ -1,13 +1,17 @@
 /** Applies the changes of a submission to the versioned tables: closes the versions that end, inserts those that begin. */
 import type { Knex } from 'knex'
+import { movesScale } from '../../../core/schema/changes.ts'
 import { applyAmendments, applyNewGalaxies, applyNewNames } from './apply-galaxies.ts'
-import { applyExclusions, applyNewMeasurements, applyReplacements } from './apply-measurements.ts'
+import { applyExclusions, applyNewMeasurements, applyReplacements, applyRestorations } from './apply-measurements.ts'
+import { applyClearedOverrides, applyOverrides } from './apply-overrides.ts'
+import { applyAnchors, applyPolicy } from './apply-scale.ts'
 import { changesOf } from './types.ts'
 import type { StoredChange } from './types.ts'
 
 export interface Applied {
-  /** Galaxies whose measurements, names or own fields moved. */
+  /** Galaxies whose measurements, names, overrides or own fields moved. */
   touched: number[]
+  /** Anchors or the policy moved, which touches every galaxy. */
   scaleChanged: boolean
   /** The galaxy of each change that added one or spoke of an added one, by change. */
   galaxies: ReadonlyMap<number, number>
@@ -41,7 +45,17 @@ export async function applyChanges(trx: Knex.Transaction, submission: { author: 
   const added = await applyNewMeasurements(application, changesOf(changes, 'measurement.add'))
   const replaced = await applyReplacements(application, changesOf(changes, 'measurement.replace'))
   const excluded = await applyExclusions(application, changesOf(changes, 'measurement.exclude'))
-  return { touched: [...application.touched].sort((a, b) => a - b), scaleChanged: false, galaxies: application.galaxies, measurements: added + replaced + excluded }
+  const restored = await applyRestorations(application, changesOf(changes, 'measurement.restore'))
+  await applyClearedOverrides(application, changesOf(changes, 'override.clear'))
+  await applyOverrides(application, changesOf(changes, 'override.set'))
+  await applyAnchors(application, changesOf(changes, 'anchor.set'))
+  await applyPolicy(application, changesOf(changes, 'policy.set'))
+  return {
+    touched: [...application.touched].sort((a, b) => a - b),
+    scaleChanged: changes.some((c) => movesScale(c.action)),
+    galaxies: application.galaxies,
+    measurements: added + replaced + excluded + restored,
+  }
 }
 
 /** The galaxy that a change is about: the one recorded with it, or one that another change has just added. */

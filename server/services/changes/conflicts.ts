@@ -2,22 +2,15 @@
 import type { Knex } from 'knex'
 import { nameKey } from '../../../core/names.ts'
 import type { Conflict } from '../../../core/problem.ts'
+import type { Clash } from './clash.ts'
+import { clashesOfOverrides } from './conflicts-overrides.ts'
+import { clashesOfScale } from './conflicts-scale.ts'
 import { galaxiesById, measurementsById, movers, namesByKey } from './current.ts'
 import type { HeldName } from './current.ts'
 import { fieldLabel, fieldWords, galaxyFields, heldFields, MEASUREMENT_FIELDS, statedFields } from './fields.ts'
-import type { GalaxyField, Wording } from './fields.ts'
+import type { GalaxyField, MeasurementFields, Wording } from './fields.ts'
 import { changesOf } from './types.ts'
-import type { Plain, StoredChange } from './types.ts'
-
-/** A conflict before its words: who moved it is looked up once for all. */
-interface Clash {
-  change: number
-  field: string
-  base: Plain
-  theirs: Plain
-  yours: Plain
-  revision: number | null
-}
+import type { Plain, StoredChange, StoredChangeOf } from './types.ts'
 
 /**
  * The conflicts of these changes with the catalogue as it stands, those of one change together. A field that somebody else moved to the very
@@ -26,7 +19,13 @@ interface Clash {
  * @param subjects - what each change is about, in words, by its id
  */
 export async function conflictsOf(knex: Knex, changes: readonly StoredChange[], subjects: ReadonlyMap<number, string>, wording: Wording): Promise<Conflict[]> {
-  const clashes = [...(await ofGalaxies(knex, changes)), ...(await ofMeasurements(knex, changes, wording)), ...(await ofNames(knex, changes))]
+  const clashes = [
+    ...(await ofGalaxies(knex, changes)),
+    ...(await ofMeasurements(knex, changes, wording)),
+    ...(await ofNames(knex, changes)),
+    ...(await clashesOfOverrides(knex, changes)),
+    ...(await clashesOfScale(knex, changes)),
+  ]
   const by = await movers(knex, clashes.flatMap((c) => c.revision ?? []))
   return clashes.map((c) => ({
     change: c.change,
@@ -57,7 +56,7 @@ async function ofGalaxies(knex: Knex, changes: readonly StoredChange[]): Promise
 }
 
 async function ofMeasurements(knex: Knex, changes: readonly StoredChange[], wording: Wording): Promise<Clash[]> {
-  const touching = [...changesOf(changes, 'measurement.replace'), ...changesOf(changes, 'measurement.exclude')]
+  const touching = changes.filter(isTouching)
   const held = await measurementsById(knex, touching.map((c) => c.payload.measurementId))
   return touching.flatMap((c): Clash[] => {
     const now = held.get(c.payload.measurementId)
@@ -65,15 +64,28 @@ async function ofMeasurements(knex: Knex, changes: readonly StoredChange[], word
     if (!now) return [{ change: c.id, field: 'value', base: 'held', theirs: 'no longer held', yours: 'changed', revision: null }]
     if (!base || now.versionId === base.versionId) return []
     const fields = heldFields(now)
-    const yours = c.action === 'measurement.replace' ? statedFields(c.payload.measurement, base.fields['excludedReason'] as string | null) : null
+    const yours = proposedFields(c)
     return MEASUREMENT_FIELDS.flatMap((field): Clash[] => {
       const was = base.fields[field] ?? null
       if (fields[field] === was || (yours !== null && fields[field] === yours[field])) return []
       const words = (value: Plain): string | null => fieldWords(field, value, { ...wording, quantity: now.quantity })
-      const proposed = yours !== null ? words(yours[field]) : 'excluded'
+      const proposed = c.action === 'measurement.replace' && yours !== null ? words(yours[field]) : c.action === 'measurement.restore' ? 'restored' : 'excluded'
       return [{ change: c.id, field, base: words(was), theirs: words(fields[field]), yours: proposed, revision: now.revFrom }]
     })
   })
+}
+
+type Touching = StoredChangeOf<'measurement.replace'> | StoredChangeOf<'measurement.exclude'> | StoredChangeOf<'measurement.restore'>
+
+function isTouching(c: StoredChange): c is Touching {
+  return c.action === 'measurement.replace' || c.action === 'measurement.exclude' || c.action === 'measurement.restore'
+}
+
+/** What a measurement would hold; null where nothing that others moved could agree with it. */
+function proposedFields(c: Touching): MeasurementFields | null {
+  const base = c.base?.fields as MeasurementFields | undefined
+  if (!base || c.action === 'measurement.exclude') return null
+  return c.action === 'measurement.restore' ? { ...base, excludedReason: null } : statedFields(c.payload.measurement, base.excludedReason as string | null)
 }
 
 /** A name that somebody gave to another galaxy (or to this one) since the change was made. */

@@ -13,12 +13,16 @@ import { galaxiesById, sourcesById } from './current.ts'
 import type { HeldGalaxy } from './current.ts'
 import { fieldLabel, fieldWords, GALAXY_FIELDS, MEASUREMENT_FIELDS, publishedOf, statedFields } from './fields.ts'
 import type { MeasurementFields, Wording } from './fields.ts'
-import type { Plain, StoredChange } from './types.ts'
+import { choiceWordsOf } from './override-words.ts'
+import type { ChoiceVocabulary } from './override-words.ts'
+import { anchorWords, overrideWords, policyWords } from './present-scale.ts'
+import { changesOf } from './types.ts'
+import type { Plain, StoredChange, StoredChangeOf } from './types.ts'
 
 export type ChangeWords = Pick<ChangeAnswer, 'subject' | 'galaxy' | 'diff' | 'standing'>
 
 /** What the words of many changes need, read once. */
-export interface Vocabulary extends Wording {
+export interface Vocabulary extends Wording, ChoiceVocabulary {
   galaxies: ReadonlyMap<number, HeldGalaxy>
   anchors: ReadonlyMap<string, Anchor>
   /** Adopted values of the galaxies touched, by galaxy and quantity. */
@@ -37,6 +41,7 @@ export async function vocabularyOf(knex: Knex, changes: readonly StoredChange[])
     .whereRaw('galaxy = ANY(?)', [[...galaxies.keys()]])
     .whereNull('revTo')) as { galaxy: number; quantity: string; value: number | null; textValue: string | null; errPlus: number | null; errMinus: number | null; errSys: number | null }[]
   return {
+    ...(await choiceWordsOf(knex, changesOf(changes, 'override.set').map((c) => c.payload.choice))),
     galaxies,
     sources,
     anchors: new Map(anchors.map((a) => [a.key, a])),
@@ -49,7 +54,7 @@ function sourcesNamed(c: StoredChange): number[] {
   if (c.action === 'measurement.add') return [c.payload.measurement.sourceId]
   const was = Number(c.base?.fields['sourceId'] ?? 0)
   if (c.action === 'measurement.replace') return [c.payload.measurement.sourceId, was]
-  if (c.action === 'measurement.exclude') return [was]
+  if (c.action === 'measurement.exclude' || c.action === 'measurement.restore') return [was]
   return c.action === 'name.add' && c.payload.sourceId !== null ? [c.payload.sourceId] : []
 }
 
@@ -69,18 +74,9 @@ export function presentChange(c: StoredChange, v: Vocabulary): ChangeWords {
       const diff = fieldDiff(was, statedFields(measurement, (was?.excludedReason ?? null) as string | null), v)
       return { subject: subjectOf(name, measurement), galaxy, diff: [...diff, { field: 'Reason', before: null, after: reason }], standing: standingOf(measurement, c.galaxy, v) }
     }
-    case 'measurement.exclude': {
-      const was = c.base?.fields as MeasurementFields | undefined
-      const key = was?.quantity as QuantityKey | undefined
-      const value = was && key ? canonicalWords(key, was as Omit<MeasureToPrint, 'unit'>) : null
-      const label = key ? labelInSentence(quantity(key).label) : 'measurement'
-      const source = was ? fieldWords('sourceId', was.sourceId, v) : null
-      const diff = [
-        { field: source === null ? 'Measurement' : `Measurement of ${source}`, before: value, after: value === null ? 'excluded' : `${value}, excluded` },
-        { field: 'Reason', before: null, after: c.payload.reason },
-      ]
-      return { subject: `${name}, ${label}`, galaxy, diff, standing: null }
-    }
+    case 'measurement.exclude':
+    case 'measurement.restore':
+      return { ...exclusionWords(c, name, v), galaxy, standing: null }
     case 'galaxy.add': {
       const diff = GALAXY_FIELDS.map((f) => ({ field: fieldLabel(f), before: null, after: fieldWords(f, c.payload[f], v) })).filter((d) => d.after !== null)
       if (c.payload.names.length > 0) diff.push({ field: 'Other names', before: null, after: c.payload.names.join(', ') })
@@ -99,6 +95,27 @@ export function presentChange(c: StoredChange, v: Vocabulary): ChangeWords {
       const source = c.payload.sourceId === null ? [] : [{ field: 'Source', before: null, after: fieldWords('sourceId', c.payload.sourceId, v) }]
       return { subject: `${name}, another name`, galaxy, diff: [{ field: 'Name', before: null, after: c.payload.name }, ...source], standing: null }
     }
+    case 'anchor.set':
+      return { ...anchorWords(c), galaxy: null, standing: null }
+    case 'policy.set':
+      return { ...policyWords(c), galaxy: null, standing: null }
+    case 'override.set':
+    case 'override.clear':
+      return { ...overrideWords(c, name, v), galaxy, standing: null }
+  }
+}
+
+function exclusionWords(c: StoredChangeOf<'measurement.exclude'> | StoredChangeOf<'measurement.restore'>, name: string, v: Vocabulary): Pick<ChangeWords, 'subject' | 'diff'> {
+  const was = c.base?.fields as MeasurementFields | undefined
+  const key = was?.quantity as QuantityKey | undefined
+  const value = was && key ? canonicalWords(key, was as Omit<MeasureToPrint, 'unit'>) : null
+  const source = was ? fieldWords('sourceId', was.sourceId, v) : null
+  const excluded = value === null ? 'excluded' : `${value}, excluded`
+  const [before, after] = c.action === 'measurement.exclude' ? [value, excluded] : [excluded, value ?? 'restored']
+  const earlier = c.action === 'measurement.restore' && was?.excludedReason != null ? [{ field: 'Excluded so far', before: String(was.excludedReason), after: null }] : []
+  return {
+    subject: `${name}, ${key ? labelInSentence(quantity(key).label) : 'measurement'}`,
+    diff: [{ field: source === null ? 'Measurement' : `Measurement of ${source}`, before, after }, ...earlier, { field: 'Reason', before: null, after: c.payload.reason }],
   }
 }
 

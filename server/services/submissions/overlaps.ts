@@ -1,6 +1,7 @@
 /** Other open submissions that touch the same things, so that two people do not find out at the approval. */
 import type { Knex } from 'knex'
 import { nameKey } from '../../../core/names.ts'
+import { CHANGE_ACTIONS, movesScale } from '../../../core/schema/changes.ts'
 import type { SubmissionAnswer } from '../../../core/schema/submissions.ts'
 import { presentChange, vocabularyOf } from '../changes/present.ts'
 import { changesOf } from '../changes/types.ts'
@@ -13,7 +14,8 @@ const MOST_SHOWN = 50
 export async function overlapsOf(knex: Knex, submission: number, changes: readonly StoredChange[], person: number): Promise<SubmissionAnswer['overlaps']> {
   const galaxies = [...new Set(changes.flatMap((c) => c.galaxy ?? []))]
   const added = changesOf(changes, 'galaxy.add')
-  if (galaxies.length === 0 && added.length === 0) return []
+  const scale = changes.some((c) => movesScale(c.action))
+  if (galaxies.length === 0 && added.length === 0 && !scale) return []
   const rows = (await knex('changes as c')
     .join('submissions as s', 's.id', 'c.submission')
     .select('c.id', 'c.submission', 'c.position', 'c.action', 'c.payload', 'c.base', 'c.galaxy', 's.title')
@@ -22,6 +24,7 @@ export async function overlapsOf(knex: Knex, submission: number, changes: readon
     .where((touching) => {
       void touching.whereRaw('c.galaxy = ANY(?)', [galaxies])
       if (added.length > 0) void touching.orWhere({ 'c.action': 'galaxy.add' })
+      if (scale) void touching.orWhereIn('c.action', CHANGE_ACTIONS.filter(movesScale))
     })
     .orderBy(['c.submission', 'c.position'])) as (StoredChange & { title: string })[]
 
@@ -32,13 +35,14 @@ export async function overlapsOf(knex: Knex, submission: number, changes: readon
   return same.map((c) => ({ submission: c.submission, title: c.title, subject: presentChange(c, vocabulary).subject }))
 }
 
-/** Two changes overlap when they move the same galaxy's own fields, its names, or its values of one quantity. */
+/** Two changes overlap when they move the same galaxy's own fields, its names, its host, its values of one quantity, one anchor or the policy. */
 function targetOf(c: StoredChange): string {
   switch (c.action) {
     case 'measurement.add':
     case 'measurement.replace':
       return `${c.galaxy} ${c.payload.measurement.quantity}`
     case 'measurement.exclude':
+    case 'measurement.restore':
       return `${c.galaxy} ${String(c.base?.fields['quantity'])}`
     case 'name.add':
       return `${c.galaxy} name ${nameKey(c.payload.name)}`
@@ -46,5 +50,12 @@ function targetOf(c: StoredChange): string {
       return `${c.galaxy} galaxy`
     case 'galaxy.add':
       return `new ${nameKey(c.payload.designation)}`
+    case 'override.set':
+    case 'override.clear':
+      return `${c.galaxy} ${c.payload.about}`
+    case 'anchor.set':
+      return `anchor ${c.payload.key}`
+    case 'policy.set':
+      return 'policy'
   }
 }

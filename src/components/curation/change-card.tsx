@@ -16,6 +16,11 @@ const ACTION_WORDS: Readonly<Record<ChangeAnswer['action'], string>> = {
   'galaxy.add': 'new galaxy',
   'galaxy.amend': 'galaxy amended',
   'name.add': 'new name',
+  'measurement.restore': 'measurement restored',
+  'anchor.set': 'anchor',
+  'policy.set': 'policy',
+  'override.set': 'override',
+  'override.clear': 'override cleared',
 }
 
 export interface ChangeCardProps {

@@ -1,7 +1,7 @@
 import { useSearchParams } from 'react-router-dom'
 import { method } from '../../../core/methods.ts'
 import { policySchema, type MethodPolicy, type Policy } from '../../../core/scale/policy.ts'
-import type { ScaleAnswer } from '../../../core/schema/catalogue.ts'
+import type { ScaleAnswer } from '../../../core/schema/scale.ts'
 import { useScale } from '../../api/scale.ts'
 import type { DataColumn } from '../../components/data-column.ts'
 import { DataTable } from '../../components/data-table.tsx'

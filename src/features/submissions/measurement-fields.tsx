@@ -65,7 +65,7 @@ export function MeasurementFields({ form, errorOf }: Props<{ measurement: TypedM
     <Controller control={form.control} name={`measurement.${name}`} render={({ field }) => <TextField label={label} value={field.value} onChange={field.onChange} onBlur={field.onBlur} error={errorOf(name)} {...extra} />} />
   )
   const units = [...new Set(q.units.map((u) => u.unit))]
-  const anchors = (scale.data?.anchors ?? []).filter((a) => typed.method === '' || a.methods.includes(typed.method))
+  const anchors = (scale.data?.anchors ?? []).filter((a) => typed.method === '' || a.methods.some((m) => m === typed.method))
   const anchor = scale.data?.anchors.find((a) => a.key === typed.anchor)
   return (
     <>
