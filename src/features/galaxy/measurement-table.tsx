@@ -1,6 +1,7 @@
 import { METHODS } from '../../../core/methods.ts'
 import { quantity, QUANTITY_KEYS } from '../../../core/quantities.ts'
-import type { GalaxyAnswer, MeasurementAnswer, Reason, ScaleAnswer } from '../../../core/schema/catalogue.ts'
+import type { GalaxyAnswer, MeasurementAnswer, Reason } from '../../../core/schema/catalogue.ts'
+import type { ScaleAnswer } from '../../../core/schema/scale.ts'
 import { useScale } from '../../api/scale.ts'
 import type { DataColumn } from '../../components/data-column.ts'
 import { DataTable } from '../../components/data-table.tsx'
