@@ -1,7 +1,7 @@
 /** Systems: hosts, their radii and members. */
 import type { Knex } from 'knex'
 import { virialRadius, zeroVelocityRadius } from '../../core/astro/environment.ts'
-import { gapperDispersion } from '../../core/derive/gapper.ts'
+import { gapperDispersion } from '../../core/systems/gapper.ts'
 import { sphereOf } from '../../core/derive/membership.ts'
 import { DEFAULT_POLICY, policySchema, type Policy } from '../../core/scale/policy.ts'
 import type { HostAnswer, HostsAnswer } from '../../core/schema/catalogue.ts'
