@@ -47,6 +47,8 @@ export const submissionSummarySchema = z.object({
   state: z.enum(SUBMISSION_STATES),
   author: z.object({ id: z.int(), name: z.string() }),
   changes: z.int(),
+  /** The kinds of them, each once. */
+  actions: z.array(z.enum(CHANGE_ACTIONS)),
   /** Checks that warn or stop. */
   cautions: z.int(),
   conflicts: z.int(),
@@ -83,7 +85,7 @@ export const effectSchema = z.object({
   /** The catalogue the effect was computed on. */
   revision: z.int(),
   contentHash: z.string(),
-  /** Adopted and derived values that would differ, by galaxy: those that change most first, at most EFFECT_MOST_GALAXIES. */
+  /** Adopted and derived values that would differ, by galaxy: those that change most first, at most EFFECT_MOST_GALAXIES (core/effect.ts). */
   galaxies: z.array(
     z.object({
       slug: z.string(),
@@ -112,10 +114,6 @@ export const effectSchema = z.object({
   /** Of the whole effect, whatever is listed. */
   counts: z.object({ galaxiesAdded: z.int(), galaxiesChanged: z.int(), distancesMoved: z.int(), hostsChanged: z.int(), measurements: z.int() }),
 })
-
-/** The largest effects are listed in part, so that they can be read at all; the counts are of all. */
-export const EFFECT_MOST_GALAXIES = 1000
-export const EFFECT_MOST_SHIFTS = 20_000
 
 /** GET /api/submissions/:id/effect/progress, one a line: how far the computation is, then the effect or what went wrong. */
 export const effectLineSchema = z.union([

@@ -109,6 +109,50 @@ export async function sendJson<Schema extends z.ZodType>(
   return schema ? readBody(response, address, schema) : null
 }
 
+/**
+ * Reads an answer of many lines of JSON, each as it comes and checked against the contract.
+ *
+ * @throws ApiProblem for every failure but a cancelled request (AbortError)
+ */
+export async function* getLines<Schema extends z.ZodType>(path: string, schema: Schema, options: ReadOptions = {}): AsyncGenerator<z.output<Schema>> {
+  const address = withSearch(path, options.query)
+  const { body } = await request(address, { method: 'GET', headers: { accept: 'application/x-ndjson' }, signal: options.signal })
+  if (!body) throw unreadable(address, 'no body')
+  for await (const line of linesOf(body)) {
+    const parsed = schema.safeParse(jsonOf(line))
+    if (!parsed.success) throw unreadable(address, parsed.error.issues[0]?.message ?? 'a line of it')
+    yield parsed.data
+  }
+}
+
+async function* linesOf(body: ReadableStream<Uint8Array>): AsyncGenerator<string> {
+  const reader = body.pipeThrough(new TextDecoderStream() as ReadableWritablePair<string, Uint8Array>).getReader()
+  let rest = ''
+  try {
+    for (;;) {
+      const { done, value } = await reader.read().catch((error: unknown) => {
+        if (error instanceof DOMException && error.name === 'AbortError') throw error
+        throw unreachable()
+      })
+      if (done) break
+      const lines = (rest + value).split('\n')
+      rest = lines.pop() ?? ''
+      yield* lines.filter((line) => line.trim() !== '')
+    }
+  } finally {
+    reader.releaseLock()
+  }
+  if (rest.trim() !== '') yield rest
+}
+
+function jsonOf(line: string): unknown {
+  try {
+    return JSON.parse(line)
+  } catch {
+    return undefined
+  }
+}
+
 /** Reads an answer that is not JSON, for example a drawn figure or an export. */
 export async function getBlob(path: string, options: ReadOptions = {}): Promise<Blob> {
   const response = await request(withSearch(path, options.query), { method: 'GET', signal: options.signal })

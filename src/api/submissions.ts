@@ -1,7 +1,7 @@
 /** Submissions: drafts, their changes, the effect, and every move from one state to the next. */
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query'
 import type { ChangeForm } from '../../core/schema/changes.ts'
-import { effectSchema, submissionListSchema, submissionSchema, type SubmissionAnswer } from '../../core/schema/submissions.ts'
+import { submissionListSchema, submissionSchema, type SubmissionAnswer } from '../../core/schema/submissions.ts'
 import { getJson, sendJson } from './client.ts'
 import { keys } from './keys.ts'
 
@@ -27,15 +27,6 @@ export function useSubmission(id: number | string) {
     queryKey: keys.submissions.one(id),
     queryFn: ({ signal }) => getJson(address(id), submissionSchema, { signal }),
     refetchOnWindowFocus: true,
-  })
-}
-
-/** What approval would do, whole catalogue. @param stamp - changes when the submission does, so that the effect is computed anew */
-export function useEffectOf(id: number | string, stamp: string | number, enabled = true) {
-  return useQuery({
-    queryKey: keys.submissions.part(id, 'effect', stamp),
-    queryFn: ({ signal }) => getJson(address(id, '/effect'), effectSchema, { signal }),
-    enabled,
   })
 }
 

@@ -52,13 +52,14 @@ async function itemsOf(knex: Knex, changes: readonly StoredChange[], open: boole
   })
 }
 
-function summaryOf(row: SubmissionRow, items: readonly Pick<ChangeAnswer, 'checks' | 'conflicts'>[]): SubmissionSummary {
+function summaryOf(row: SubmissionRow, items: readonly Pick<ChangeAnswer, 'action' | 'checks' | 'conflicts'>[]): SubmissionSummary {
   return {
     id: row.id,
     title: row.title,
     state: row.state,
     author: { id: row.author, name: row.authorName },
     changes: items.length,
+    actions: [...new Set(items.map((item) => item.action))],
     cautions: items.reduce((sum, item) => sum + item.checks.filter((check) => check.level !== 'ok').length, 0),
     conflicts: items.reduce((sum, item) => sum + item.conflicts.length, 0),
     createdAt: row.createdAt.toISOString(),
@@ -108,7 +109,7 @@ export async function listSubmissions(knex: Knex, reader: Reader, query: ListQue
     .orderBy(query.review ? [{ column: 's.submittedAt' }, { column: 's.id' }] : [{ column: 's.updatedAt', order: 'desc' }, { column: 's.id', order: 'desc' }])
     .limit(MOST_LISTED)) as SubmissionRow[]
   const open = rows.filter((r) => isOpen(r.state)).map((r) => r.id)
-  const items = new Map<number, { checks: Check[]; conflicts: Conflict[] }[]>()
+  const items = new Map<number, Pick<ChangeAnswer, 'action' | 'checks' | 'conflicts'>[]>()
   const changes = await changesOfSubmissions(knex, open)
   const answers = await itemsOf(knex, changes, true)
   changes.forEach((c, i) => {
@@ -118,15 +119,16 @@ export async function listSubmissions(knex: Knex, reader: Reader, query: ListQue
   const counts = await countsOf(knex, rows.filter((r) => !isOpen(r.state)).map((r) => r.id))
   return rows.map((r) => {
     const summary = summaryOf(r, items.get(r.id) ?? [])
-    return isOpen(r.state) ? summary : { ...summary, changes: counts.get(r.id) ?? 0 }
+    return isOpen(r.state) ? summary : { ...summary, changes: 0, ...counts.get(r.id) }
   })
 }
 
-async function countsOf(knex: Knex, submissions: readonly number[]): Promise<Map<number, number>> {
+type Counts = Pick<SubmissionSummary, 'changes' | 'actions'>
+
+async function countsOf(knex: Knex, submissions: readonly number[]): Promise<Map<number, Counts>> {
   if (submissions.length === 0) return new Map()
-  const rows = (await knex('changes').select('submission').count('* as changes').whereRaw('submission = ANY(?)', [[...submissions]]).groupBy('submission')) as unknown as {
-    submission: number
-    changes: number
-  }[]
-  return new Map(rows.map((r) => [r.submission, r.changes]))
+  const { rows } = (await knex.raw('SELECT submission, count(*)::int AS changes, array_agg(DISTINCT action) AS actions FROM changes WHERE submission = ANY(?) GROUP BY submission', [
+    [...submissions],
+  ])) as { rows: ({ submission: number } & Counts)[] }
+  return new Map(rows.map(({ submission, ...counts }) => [submission, counts]))
 }

@@ -6,22 +6,50 @@ import { Button } from '../button.tsx'
 import { Link } from '../link.tsx'
 import { Missing } from '../measure.tsx'
 import { ScrollAcross } from '../scroll-across.tsx'
+import { ShiftsView } from './shifts/shifts-view.tsx'
 import { arrivalWords, effectSentence, isFirst, namesIn, shiftWords, valueWords, type Moved, type MovedGalaxy } from './effect-words.ts'
 
 /** So many galaxies are listed at a time. */
 const LISTED = 40
 
-/** What approving would do: every adopted and derived value that would differ, before beside after. */
-export function EffectView({ effect }: { effect: Effect }) {
-  const [listed, setListed] = useState(LISTED)
-  const names = namesIn(effect)
+/** From so many shifts on, a picture tells more than the list. */
+const MANY_SHIFTS = 6
+
+interface EffectViewProps {
+  effect: Effect
+  /** A change of the scale is looked at as a whole, however few galaxies it moves. */
+  ofScale?: boolean
+}
+
+/** What approving would do: the whole catalogue moving, where it does, and every adopted and derived value that would differ, before beside after. */
+export function EffectView({ effect, ofScale = false }: EffectViewProps) {
   if (effect.galaxies.length === 0 && effect.systems.length === 0) {
     return <p className="text-muted">No adopted or derived value would change.</p>
   }
+  const moving = effect.shifts.length >= (ofScale ? 1 : MANY_SHIFTS)
+  return (
+    <div className="grid min-w-0 grid-cols-[minmax(0,1fr)] gap-8">
+      {moving && <ShiftsView effect={effect} />}
+      <section className="min-w-0">
+        {moving && <h3 className="mb-2 text-base">Everything that would differ</h3>}
+        <ValueByValue effect={effect} />
+      </section>
+    </div>
+  )
+}
+
+function ValueByValue({ effect }: { effect: Effect }) {
+  const [listed, setListed] = useState(LISTED)
+  const names = namesIn(effect)
   const rest = effect.galaxies.length - listed
+  const told = effect.galaxies.length
+  const changed = effect.counts.galaxiesAdded + effect.counts.galaxiesChanged
   return (
     <div>
-      <p className="mb-3">{effectSentence(effect.counts)}</p>
+      <p className="mb-3">
+        {effectSentence(effect.counts)}
+        {told < changed && <span className="text-muted">{` The ${formatCounted(told, 'galaxy', 'galaxies')} that change most are listed.`}</span>}
+      </p>
       <ScrollAcross label="Effect, value by value">
         <table className="w-full border-collapse figures">
           <thead className="text-left text-sm text-muted">

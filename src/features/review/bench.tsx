@@ -1,17 +1,19 @@
 import { useEffect, useRef, useState } from 'react'
 import { useNavigate } from 'react-router-dom'
 import type { SubmissionAnswer, SubmissionSummary } from '../../../core/schema/submissions.ts'
-import { useEffectOf, type Decision } from '../../api/submissions.ts'
+import { movesScale } from '../../../core/schema/changes.ts'
+import { useEffectOf } from '../../api/effect.ts'
+import type { Decision } from '../../api/submissions.ts'
 import { useActions } from '../../app/actions/use-actions.ts'
 import { StateBadge } from '../../components/badge.tsx'
 import { Button } from '../../components/button.tsx'
 import { EffectView } from '../../components/curation/effect-view.tsx'
+import { EffectWait } from '../../components/curation/effect-wait.tsx'
 import { Remarks } from '../../components/curation/remarks.tsx'
 import { Timeline } from '../../components/curation/timeline.tsx'
 import { FailedState } from '../../components/failed-state.tsx'
 import { Link } from '../../components/link.tsx'
 import { Sheet } from '../../components/sheet.tsx'
-import { Skeleton } from '../../components/skeleton.tsx'
 import { notify } from '../../components/toast.tsx'
 import { useDocumentTitle } from '../../lib/document-title.ts'
 import { formatCounted, formatDayTime } from '../../lib/format.ts'
@@ -106,9 +108,9 @@ export function Bench({ submission, queue, onReread }: BenchProps) {
           {effect.isError ? (
             <FailedState error={effect.error} onRetry={() => void effect.refetch()} safe="The submission waits on, and nothing was decided." />
           ) : effect.data ? (
-            <EffectView effect={effect.data} />
+            <EffectView effect={effect.data} ofScale={submission.actions.some(movesScale)} />
           ) : (
-            <Skeleton lines={5} label="Computing the effect" />
+            <EffectWait progress={effect.progress} />
           )}
         </Sheet>
       )}

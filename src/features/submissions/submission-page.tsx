@@ -1,11 +1,14 @@
 import { useState } from 'react'
 import { useNavigate, useParams, useSearchParams } from 'react-router-dom'
 import type { SubmissionAnswer } from '../../../core/schema/submissions.ts'
-import { useDeleteSubmission, useEffectOf, useSubmission, useTransition } from '../../api/submissions.ts'
+import { movesScale } from '../../../core/schema/changes.ts'
+import { useEffectOf } from '../../api/effect.ts'
+import { useDeleteSubmission, useSubmission, useTransition } from '../../api/submissions.ts'
 import { useActions } from '../../app/actions/use-actions.ts'
 import { StateBadge } from '../../components/badge.tsx'
 import { Button } from '../../components/button.tsx'
 import { EffectView } from '../../components/curation/effect-view.tsx'
+import { EffectWait } from '../../components/curation/effect-wait.tsx'
 import { Remarks } from '../../components/curation/remarks.tsx'
 import { Timeline } from '../../components/curation/timeline.tsx'
 import { Dialog } from '../../components/dialog.tsx'
@@ -111,9 +114,9 @@ function EffectSheet({ submission }: { submission: SubmissionAnswer }) {
       ) : effect.isError ? (
         <FailedState error={effect.error} onRetry={() => void effect.refetch()} safe="The draft is safe." />
       ) : effect.data ? (
-        <EffectView effect={effect.data} />
+        <EffectView effect={effect.data} ofScale={submission.actions.some(movesScale)} />
       ) : (
-        <Skeleton lines={5} label="Computing the effect" />
+        <EffectWait progress={effect.progress} />
       )}
     </Sheet>
   )
