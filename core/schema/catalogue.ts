@@ -179,34 +179,88 @@ const hostSummary = z.object({
   members: z.int(),
   /** Radius of the host's sphere, kpc. */
   sphere: number,
-  /** Line-of-sight velocity dispersion of the members by the gapper, km/s. */
+  /** Line-of-sight velocity dispersion of the members by the gapper, km/s; its jackknife error; how many velocities. */
   dispersion: number,
+  dispersionErr: number,
+  velocities: z.int(),
+  /** The brightest satellite in V. */
+  brightest: z.object({ slug: z.string(), name: z.string(), absV: z.number() }).nullable(),
+  /** Minor-to-major axis of the satellites about the host; null with too few of them. */
+  minorToMajor: number,
 })
 
 /** GET /api/hosts */
 export const hostsSchema = z.object({ revision: z.int(), hosts: z.array(hostSummary) })
 
+const vector = z.tuple([z.number(), z.number(), z.number()])
+const drawnRange = z.object({ median: z.number(), lo: z.number(), hi: z.number() })
+
+const memberSchema = z.object({
+  slug: z.string(),
+  name: z.string(),
+  class: z.enum(GALAXY_CLASSES),
+  distance: number,
+  absV: number,
+  absVErr: number,
+  /** 3-D, kpc: of the adopted distances; median, 16th and 84th percentile of the draws. */
+  separation: number,
+  separationMedian: number,
+  separationLo: number,
+  separationHi: number,
+  probability: number,
+  /** On the sky, deg. */
+  angle: number,
+  /** Velocity less that of the host, Galactic standard of rest, km/s. */
+  dv: number,
+  dvErr: number,
+  /** Supergalactic offset from the host, kpc. */
+  offset: vector.nullable(),
+  /** Away from the observer, unit vector; how much nearer and farther along it by one standard deviation of its own distance, kpc. */
+  sight: z.object({ direction: vector, nearer: z.number(), farther: z.number() }).nullable(),
+})
+
+const shapeSchema = z.object({
+  /** Ratios of the rms extents about the host. */
+  minorToMajor: z.number(),
+  middleToMajor: z.number(),
+  /** Rms height about the plane through the host, kpc. */
+  height: z.number(),
+  /** Supergalactic unit vectors: major axis, intermediate axis, normal. */
+  axes: z.tuple([vector, vector, vector]),
+  /** Of the normal's two ends the one with SGB ≥ 0, deg. */
+  pole: z.object({ sgl: z.number(), sgb: z.number() }),
+  drawn: z.object({
+    draws: z.int(),
+    minorToMajor: drawnRange,
+    middleToMajor: drawnRange,
+    height: drawnRange,
+    /** Angle about the pole that holds 68 % of the drawn poles, deg. */
+    poleSpread: z.number(),
+  }),
+  isotropy: z.object({
+    reshuffles: z.int(),
+    asFlat: z.int(),
+    /** (asFlat + 1) / (reshuffles + 1), with its binomial error. */
+    p: z.number(),
+    error: z.number(),
+    /** Minor-to-major ratios of the reshuffles: equal bins over [0, 1]. */
+    histogram: z.array(z.int()),
+  }),
+})
+
 /** GET /api/hosts/:slug */
 export const hostSchema = z.object({
   revision: z.int(),
-  host: hostSummary.extend({ ra: z.number(), dec: z.number(), absV: number, vGsr: number, r200: number, zeroVelocityRadius: number }),
-  members: z.array(
-    z.object({
-      slug: z.string(),
-      name: z.string(),
-      class: z.enum(GALAXY_CLASSES),
-      distance: number,
-      absV: number,
-      separation: number,
-      separationLo: number,
-      separationHi: number,
-      probability: number,
-      angle: number,
-      dv: number,
-      /** Supergalactic offset from the host, kpc. */
-      offset: z.tuple([z.number(), z.number(), z.number()]).nullable(),
-    }),
-  ),
+  host: hostSummary.extend({ ra: z.number(), dec: z.number(), absV: number, vGsr: number, r200: number, zeroVelocityRadius: number, /** Msun, by the policy's ratio. */ totalMass: number }),
+  members: z.array(memberSchema),
+  system: z.object({
+    /** Cumulative, brightest first, with Poisson limits; and how many satellites have no magnitude. */
+    luminosity: z.object({ steps: z.array(z.object({ slug: z.string(), absV: z.number(), count: z.int(), lo: z.number(), hi: z.number() })), missing: z.int() }),
+    /** Satellites with a place beside the host, and how many a shape needs. */
+    placed: z.int(),
+    needed: z.int(),
+    shape: shapeSchema.nullable(),
+  }),
 })
 
 /** GET /api/summary: the catalogue at a glance. */
