@@ -11,7 +11,7 @@ interface AnswerContext {
 }
 
 /** Changes with the shape of the answers, so that no cache keeps an old shape. */
-const SHAPE = '1'
+const SHAPE = '2'
 
 /**
  * Sets the headers of an answer that depends on nothing but its address, its reader and the revision.
