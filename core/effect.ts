@@ -79,6 +79,36 @@ export function effectOfRows(rows: readonly RowChange[], membersBefore: (slug: s
   }
 }
 
+/** The effect of nothing. */
+export function nothing(): CatalogueEffect {
+  return { galaxies: [], systems: [], shifts: [], counts: { galaxiesAdded: 0, galaxiesChanged: 0, distancesMoved: 0, hostsChanged: 0 } }
+}
+
+/** The largest effects are listed in part, so that they can be read at all; the counts are of all. */
+export const EFFECT_MOST_GALAXIES = 1000
+export const EFFECT_MOST_SHIFTS = 20_000
+
+/** The effect with no more listed than can be read. */
+export function bounded(effect: CatalogueEffect): CatalogueEffect {
+  return { ...effect, galaxies: effect.galaxies.slice(0, EFFECT_MOST_GALAXIES), shifts: effect.shifts.slice(0, EFFECT_MOST_SHIFTS) }
+}
+
+/** The effects of sets of rows that have no galaxy in common, as one, bounded. */
+export function mergeEffects(effects: readonly CatalogueEffect[]): CatalogueEffect {
+  const systems = new Map<string, SystemEffect>()
+  for (const system of effects.flatMap((e) => e.systems)) {
+    const known = systems.get(system.slug)
+    systems.set(system.slug, known ? { ...known, gained: [...known.gained, ...system.gained].sort(), lost: [...known.lost, ...system.lost].sort() } : system)
+  }
+  const sum = (key: keyof CatalogueEffect['counts']): number => effects.reduce((total, e) => total + e.counts[key], 0)
+  return bounded({
+    galaxies: effects.flatMap((e) => e.galaxies).sort(byWeight),
+    systems: [...systems.values()].map((s) => ({ ...s, after: s.before + s.gained.length - s.lost.length })),
+    shifts: effects.flatMap((e) => e.shifts).sort(byShift),
+    counts: { galaxiesAdded: sum('galaxiesAdded'), galaxiesChanged: sum('galaxiesChanged'), distancesMoved: sum('distancesMoved'), hostsChanged: sum('hostsChanged') },
+  })
+}
+
 function differences({ before, after }: RowChange): GalaxyEffect['changes'] {
   return TOLD.flatMap((column) => {
     const was = before?.[column.key] ?? null

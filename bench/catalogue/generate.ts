@@ -11,6 +11,7 @@ import { nameKey, slugOf } from '../../core/names.ts'
 import { quantity } from '../../core/quantities.ts'
 import { layTheScale } from '../../seeds/genesis.ts'
 import { rebuildCatalogue } from '../../server/services/revision/rebuild.ts'
+import { withSharers } from '../../server/services/revision/whole/threads.ts'
 import { invent, SOURCES, type InventedGalaxy } from './invent.ts'
 
 /** The revision that brings the galaxies; the one before lays the scale. */
@@ -19,6 +20,8 @@ const REVISION = 2
 export interface GenerateOptions {
   galaxies: number
   seed?: number
+  /** Who computes: by default, two threads on the database of DATABASE_URL. */
+  shared?: { databaseUrl: string; threads: number }
   log?: (sentence: string) => void
 }
 
@@ -30,7 +33,7 @@ export interface Generated {
   rebuilding: number
 }
 
-export async function generateCatalogue(knex: Knex, { galaxies: count, seed = 1, log = () => undefined }: GenerateOptions): Promise<Generated> {
+export async function generateCatalogue(knex: Knex, { galaxies: count, seed = 1, shared = { databaseUrl: process.env.DATABASE_URL ?? '', threads: 2 }, log = () => undefined }: GenerateOptions): Promise<Generated> {
   const list = [...invent(count, seed)]
   const started = performance.now()
   await knex.transaction(async (trx) => {
@@ -46,14 +49,18 @@ export async function generateCatalogue(knex: Knex, { galaxies: count, seed = 1,
   const loaded = performance.now()
   log(`${count} galaxies loaded in ${seconds(started, loaded).toFixed(1)} s`)
   let told = 0
+  const { databaseUrl, threads } = shared
   await knex.transaction((trx) =>
-    rebuildCatalogue(trx, REVISION, {
-      onProgress: (done) => {
-        if (done < told + 0.1) return
-        told = done
-        log(`rebuilding: ${Math.round(100 * done)} % after ${seconds(loaded, performance.now()).toFixed(1)} s`)
-      },
-    }),
+    withSharers(trx, { databaseUrl, threads }, (sharers) =>
+      rebuildCatalogue(trx, REVISION, {
+        sharers,
+        onProgress: ({ done, step }) => {
+          if (done < told + 0.1) return
+          told = done
+          log(`${step}: ${Math.round(100 * done)} % after ${seconds(loaded, performance.now()).toFixed(1)} s`)
+        },
+      }),
+    ),
   )
   await knex.raw('vacuum analyze')
   const rebuilt = performance.now()

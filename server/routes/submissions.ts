@@ -2,9 +2,10 @@
 import { z } from 'zod'
 import { changeInputSchema } from '../../core/schema/changes.ts'
 import {
-  decisionSchema, effectSchema, refusalSchema, remarkInputSchema, submissionInputSchema, submissionListSchema, submissionPatchSchema, submissionSchema, SUBMISSION_STATES,
+  decisionSchema, effectLineSchema, effectSchema, refusalSchema, remarkInputSchema, submissionInputSchema, submissionListSchema, submissionPatchSchema, submissionSchema, SUBMISSION_STATES,
   transitionSchema,
 } from '../../core/schema/submissions.ts'
+import { answerInLines } from '../http/lines.ts'
 import { route } from '../http/route.ts'
 import type { Route } from '../http/route.ts'
 import { approve } from '../services/review/approve.ts'
@@ -68,6 +69,14 @@ export const submissionRoutes: Route[] = [
     method: 'get', path: '/api/submissions/:id/effect', summary: 'What approval would do to the whole catalogue', permission: 'submission.read', params: one,
     answer: effectSchema,
     handle: (context) => effectOfSubmission(context, context.reader, context.params.id),
+  }),
+  route({
+    method: 'get', path: '/api/submissions/:id/effect/progress', summary: 'The same line by line (NDJSON): how far the computation is, then the effect or the problem',
+    permission: 'submission.read', params: one, answer: effectLineSchema,
+    handle: (context) =>
+      answerInLines(context.response, async (tell) => ({
+        effect: await effectOfSubmission(context, context.reader, context.params.id, ({ done, step }) => tell({ progress: done, step })),
+      })),
   }),
   route({
     method: 'post', path: '/api/submissions/:id/submit', summary: 'Hand a draft to the approvers', permission: 'submission.write', limit: 'write', params: one,

@@ -89,7 +89,7 @@ describe('a revision', () => {
     const { knex } = database()
     await undone(knex, async (trx) => {
       const { rows } = (await trx.raw('select distinct galaxy from catalogue_rows')) as { rows: { galaxy: number }[] }
-      const plan = await computeRevision(trx, { revision: (await currentRevision(trx)) + 1, touched: rows.map((r) => r.galaxy), scaleChanged: true })
+      const plan = await computeRevision(trx, { revision: (await currentRevision(trx)) + 1, touched: rows.map((r) => r.galaxy) })
       expect(plan.rows).toEqual([])
       expect(plan.adopted).toEqual([])
       expect(effectOf(plan)).toEqual({ galaxies: [], systems: [], shifts: [], counts: { galaxiesAdded: 0, galaxiesChanged: 0, distancesMoved: 0, hostsChanged: 0 } })

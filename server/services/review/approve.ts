@@ -1,12 +1,16 @@
 /** Approval: one transaction, one lock, one revision. */
+import type { Knex } from 'knex'
 import { raw } from 'objection'
 import type { SubmissionAnswer } from '../../../core/schema/submissions.ts'
+import type { Config } from '../../config.ts'
 import type { Reader, Services } from '../../http/route.ts'
 import { ReviewModel } from '../../models/review.ts'
 import { RevisionModel } from '../../models/revision.ts'
 import { SubmissionModel } from '../../models/submission.ts'
 import { record } from '../audit.ts'
 import { readSurroundings } from '../revision/neighbourhood-cache.ts'
+import { rebuildCatalogue } from '../revision/rebuild.ts'
+import { withSharers } from '../revision/whole/threads.ts'
 import { writeRevision } from '../revision/write.ts'
 import { answerOf } from '../submissions/answer.ts'
 import { changesOfSubmissions, findSubmission, personOf } from '../submissions/load.ts'
@@ -34,7 +38,8 @@ export async function approve(services: Services, reader: Reader, id: number, de
       requireHash(row, decision.contentHash)
       const changes = await changesOfSubmissions(trx, [id])
       const { revision, applied, plan } = await carryOut(trx, row, changes)
-      await writeRevision(trx, plan)
+      if (plan) await writeRevision(trx, plan)
+      else await rebuildWithThreads(trx, services.config, revision)
       await RevisionModel.query(trx).insert({ number: revision, submission: id, approvedBy: person.id, summary: row.title })
       await ReviewModel.query(trx).insert({ submission: id, version: row.version, contentHash: decision.contentHash, reviewer: person.id, verdict: 'approved', note: decision.note })
       await SubmissionModel.query(trx).findById(id).patch({
@@ -48,6 +53,13 @@ export async function approve(services: Services, reader: Reader, id: number, de
     }),
   )
   return answerOf(services.knex, id, reader)
+}
+
+/** The scale changed, and everything with it: this may take longer than a transaction is otherwise given. */
+async function rebuildWithThreads(trx: Knex.Transaction, { databaseUrl, computeThreads }: Config, revision: number): Promise<void> {
+  await trx.raw('set local statement_timeout = 0')
+  await trx.raw('set local idle_in_transaction_session_timeout = 0')
+  await withSharers(trx, { databaseUrl, threads: computeThreads }, (sharers) => rebuildCatalogue(trx, revision, { sharers }))
 }
 
 /** From now on the changes that added galaxies, or spoke of added ones, lead to them. */

@@ -16,7 +16,8 @@ export interface CarriedOut {
   before: number
   revision: number
   applied: Applied
-  plan: RevisionPlan
+  /** null when the scale changed: then everything is computed anew (scale-effect.ts, and rebuildCatalogue). */
+  plan: RevisionPlan | null
 }
 
 /** Needs the catalogue's lock. @throws StateConflict when the ground has moved under a change */
@@ -38,6 +39,6 @@ export async function carryOut(trx: Knex.Transaction, submission: { author: numb
   const before = await currentRevision(trx)
   const revision = before + 1
   const applied = await applyChanges(trx, submission, changes, revision)
-  const plan = await computeRevision(trx, { revision, touched: applied.touched, scaleChanged: applied.scaleChanged })
+  const plan = applied.scaleChanged ? null : await computeRevision(trx, { revision, touched: applied.touched })
   return { before, revision, applied, plan }
 }

@@ -1,6 +1,7 @@
 /**
- * What a revision does to the adopted values and the catalogue's rows: everything computed, nothing written. The effect that an approver is
- * shown and what approving then does are this one computation.
+ * What a revision does to the adopted values and the catalogue's rows: everything that depends on what was touched computed, nothing written.
+ * The effect that an approver is shown and what approving then does are this one computation. (When the scale changes everything does
+ * depend on it: whole/recompute.ts.)
  */
 import type { Knex } from 'knex'
 import type { Scale } from '../../../core/adoption/adopted.ts'
@@ -12,7 +13,7 @@ import { NOWHERE, relationFinder, relationsOf, type HostOverrides, type Possible
 import { rowOf } from '../../../core/derive/row.ts'
 import { adoptGalaxies } from './adopt-galaxies.ts'
 import { adoptedDifferences, sameRow, standingRows, type StoredRow } from './compare.ts'
-import { allGalaxies, loadHostOverrides, loadScale } from './load.ts'
+import { loadHostOverrides, loadScale } from './load.ts'
 import { surroundingsAt, type Surroundings } from './neighbourhood-cache.ts'
 import type { PlannedAdopted, PlannedRow, RevisionPlan } from './plan.ts'
 
@@ -23,17 +24,15 @@ export interface Touched {
   revision: number
   /** Galaxies whose own record, names or measurements changed in this transaction. */
   touched: Iterable<number>
-  /** Anchors or policy changed, which touches every galaxy. */
-  scaleChanged?: boolean
 }
 
-/** Galaxies whose measurements are in memory at a time: a changed scale touches all there are. */
+/** Galaxies whose measurements are in memory at a time. */
 const CHUNK = 2000
 
-export async function computeRevision(trx: Knex, { revision, touched, scaleChanged }: Touched): Promise<RevisionPlan> {
+export async function computeRevision(trx: Knex, { revision, touched }: Touched): Promise<RevisionPlan> {
   const scale = await loadScale(trx)
   const surroundings = await surroundingsAt(trx, revision - 1)
-  const ids = scaleChanged ? await allGalaxies(trx) : [...new Set(touched)]
+  const ids = [...new Set(touched)]
   const own = new Map<number, OwnColumns>()
   const adopted: PlannedAdopted[] = []
   for (let i = 0; i < ids.length; i += CHUNK) {
@@ -52,8 +51,7 @@ const MANY = 200
 async function place(trx: Knex, own: ReadonlyMap<number, OwnColumns>, before: Surroundings, scale: Scale): Promise<PlannedRow[]> {
   const moved = movedNeighbours(own, before.neighbourhood)
   const after = withChanges(before.neighbourhood, moved)
-  const everybody = before.neighbourhood.ids.every((id) => own.has(id))
-  const affected = everybody ? [] : affectedBy(before.neighbourhood, before.places, after, new Set(moved.keys()), scale.policy.host)
+  const affected = affectedBy(before.neighbourhood, before.places, after, new Set(moved.keys()), scale.policy.host)
   const overrides = await loadHostOverrides(trx)
   const assigned = [...overrides].flatMap(([id, host]) => (host !== null && moved.has(host) ? [id] : []))
   const asked = new Set([...affected, ...assigned, ...own.keys()])

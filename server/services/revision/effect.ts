@@ -1,5 +1,4 @@
-import { effectOfRows, type CatalogueEffect } from '../../../core/effect.ts'
-import { EFFECT_MOST_GALAXIES, EFFECT_MOST_SHIFTS } from '../../../core/schema/submissions.ts'
+import { bounded, effectOfRows, type CatalogueEffect } from '../../../core/effect.ts'
 import type { Neighbour } from '../../../core/derive/neighbourhood.ts'
 import type { RevisionPlan } from './plan.ts'
 
@@ -16,6 +15,5 @@ export function effectOf({ rows, before }: RevisionPlan): CatalogueEffect {
     const host = known(slug)
     return host ? (before.satellites.get(host.id) ?? 0) : 0
   }
-  const effect = effectOfRows(rows, membersBefore, (slug) => newName.get(slug) ?? known(slug)?.name ?? slug)
-  return { ...effect, galaxies: effect.galaxies.slice(0, EFFECT_MOST_GALAXIES), shifts: effect.shifts.slice(0, EFFECT_MOST_SHIFTS) }
+  return bounded(effectOfRows(rows, membersBefore, (slug) => newName.get(slug) ?? known(slug)?.name ?? slug))
 }

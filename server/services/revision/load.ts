@@ -12,9 +12,9 @@ export async function loadScale(trx: Knex): Promise<Scale> {
   return { anchors, policy: policySchema.parse(policy.document) }
 }
 
-/** Ids of all galaxies that hold now, rising. */
-export async function allGalaxies(trx: Knex): Promise<number[]> {
-  const rows = (await trx('galaxyVersions').whereNull('revTo').orderBy('galaxy').select('galaxy')) as { galaxy: number }[]
+/** Ids of all galaxies that hold now, in strips of declination: whoever is near in the sky is mostly near in the list. */
+export async function galaxiesAcrossTheSky(trx: Knex): Promise<number[]> {
+  const { rows } = (await trx.raw('select galaxy from galaxy_versions where rev_to is null order by floor((dec + 90) / 6), ra, galaxy')) as { rows: { galaxy: number }[] }
   return rows.map((row) => row.galaxy)
 }
 

@@ -8,11 +8,11 @@ import type { Random } from '../../../core/random.ts'
 import { DEFAULT_POLICY } from '../../../core/scale/policy.ts'
 import { layTheScale } from '../../../seeds/genesis.ts'
 import { computeRevision, type RevisionPlan } from '../../../server/services/revision/compute.ts'
+import { rebuildCatalogue } from '../../../server/services/revision/rebuild.ts'
 import { writeRevision } from '../../../server/services/revision/write.ts'
 
 export interface Moved {
   touched: number[]
-  scaleChanged?: boolean
 }
 
 export type Change = (trx: Knex.Transaction, revision: number, draw: Random) => Promise<Moved>
@@ -32,7 +32,8 @@ export async function currentRevision(knex: Knex): Promise<number> {
 export async function approve(knex: Knex, draw: Random, change: Change): Promise<RevisionPlan> {
   return knex.transaction(async (trx) => {
     const plan = await propose(trx, draw, change)
-    await writeRevision(trx, plan)
+    if (change === changeScale) await rebuildCatalogue(trx, plan.revision)
+    else await writeRevision(trx, plan)
     await trx('revisions').insert({ number: plan.revision, summary: 'A change' })
     return plan
   })
@@ -162,7 +163,7 @@ export const changeScale: Change = async (trx, revision, draw) => {
     await end(trx, 'policies', id, revision)
     await trx('policies').insert({ document: JSON.stringify({ ...DEFAULT_POLICY, host: { ...DEFAULT_POLICY.host, draws: 200, sphere: 1 + draw.uniform(), massRatio: 1 + draw.integer(6) } }), revFrom: revision })
   }
-  return { touched: [], scaleChanged: true }
+  return { touched: [] }
 }
 
 /** Two touched at once, as an import does. */
