@@ -29,6 +29,7 @@ export const paths = {
   sources: '/sources',
   source: (id: string | number) => `/sources/${part(String(id))}`,
   scale: '/scale',
+  proposeScale: '/scale/propose',
   releases: '/releases',
   release: (label: string) => `/releases/${part(label)}`,
   figures: '/figures',

@@ -32,6 +32,7 @@ const pages: RouteObject[] = [
   { path: 'sources', lazy: page(() => import('./features/sources/sources-page.tsx')) },
   { path: 'sources/:id', lazy: page(() => import('./features/sources/source-page.tsx')) },
   { path: 'scale', lazy: page(() => import('./features/scale/scale-page.tsx')) },
+  { path: 'scale/propose', lazy: page(() => import('./features/scale/propose-page.tsx')) },
   { path: 'releases', lazy: page(() => import('./features/releases/releases-page.tsx')) },
   { path: 'releases/:label', lazy: page(() => import('./features/releases/release-page.tsx')) },
   { path: 'sign-in', lazy: page(() => import('./features/session/sign-in-page.tsx')) },

@@ -1,8 +1,8 @@
 /** What approving a submission would do, with word of how far the computation is. */
 import { useState } from 'react'
 import { useQuery } from '@tanstack/react-query'
-import { effectLineSchema, effectSchema, type Effect } from '../../core/schema/submissions.ts'
-import { ApiProblem, getJson, getLines } from './client.ts'
+import { effectLineSchema, type Effect } from '../../core/schema/submissions.ts'
+import { ApiProblem, getLines } from './client.ts'
 import { keys } from './keys.ts'
 import { unreadable } from './problem.ts'
 
@@ -44,7 +44,7 @@ export function useEffectOf(id: number | string, stamp: string | number, enabled
     queryKey: keys.submissions.part(id, 'effect', stamp),
     queryFn: ({ signal }) => {
       setProgress(null)
-      return getJson(`/api/submissions/${id}/effect`, effectSchema, { signal })
+      return readEffect(id, setProgress, signal)
     },
     enabled,
   })

@@ -3,10 +3,14 @@ import type { ChangeAnswer, SubmissionAnswer } from '../../../core/schema/submis
 import { useAddChange, usePatchChange } from '../../api/submissions.ts'
 import { notify } from '../../components/toast.tsx'
 import { AmendForm } from './amend-form.tsx'
+import { AnchorForm } from './anchor-form.tsx'
+import { ClearOverrideForm } from './clear-override-form.tsx'
 import { ExcludeForm } from './exclude-form.tsx'
 import { GalaxyForm } from './galaxy-form.tsx'
 import { MeasurementForm } from './measurement-form.tsx'
 import { NameForm } from './name-form.tsx'
+import { OverrideForm } from './override-form.tsx'
+import { PolicyForm } from './policy-form.tsx'
 import { ReplaceForm } from './replace-form.tsx'
 
 /** What every form of a change is given. */
@@ -46,8 +50,12 @@ export function ChangeForms({ submission, action, change, onDone }: Props) {
   const props = { submission, change, onSave: save, isSaving: add.isPending || patch.isPending, error: add.error ?? patch.error }
   if (action === 'measurement.add') return <MeasurementForm {...props} />
   if (action === 'measurement.replace') return <ReplaceForm {...props} />
-  if (action === 'measurement.exclude') return <ExcludeForm {...props} />
+  if (action === 'measurement.exclude' || action === 'measurement.restore') return <ExcludeForm action={action} {...props} />
   if (action === 'galaxy.add') return <GalaxyForm {...props} />
   if (action === 'galaxy.amend') return <AmendForm {...props} />
+  if (action === 'anchor.set') return <AnchorForm {...props} />
+  if (action === 'policy.set') return <PolicyForm {...props} />
+  if (action === 'override.set') return <OverrideForm {...props} />
+  if (action === 'override.clear') return <ClearOverrideForm {...props} />
   return <NameForm {...props} />
 }

@@ -12,8 +12,15 @@ import { MeasurementPicker } from './measurement-picker.tsx'
 
 const schema = changePayloadSchemas['measurement.exclude']
 
-/** Takes a measurement out of adoption, with the reason. It stays visible. */
-export function ExcludeForm({ change, onSave, isSaving, error }: ChangeFormProps<'measurement.exclude'>) {
+type Action = 'measurement.exclude' | 'measurement.restore'
+
+const HELP: Readonly<Record<Action, string>> = {
+  'measurement.exclude': 'Shown wherever the measurement is: wrong object; superseded calibration; blended with a star',
+  'measurement.restore': 'Why it should be believed after all',
+}
+
+/** Takes a measurement out of adoption, with the reason, or back into it. It stays visible either way. */
+export function ExcludeForm({ action, change, onSave, isSaving, error }: ChangeFormProps<Action> & { action: Action }) {
   const [search] = useSearchParams()
   const asked = useGalaxyAsked()
   const before = change ? schema.parse(change.payload) : null
@@ -26,7 +33,7 @@ export function ExcludeForm({ change, onSave, isSaving, error }: ChangeFormProps
   const save = async (): Promise<void> => {
     setTried(true)
     if (!parsed.success) return
-    if ((await onSave({ action: 'measurement.exclude', payload: parsed.data })) && !change) {
+    if ((await onSave({ action, payload: parsed.data })) && !change) {
       setId(null)
       setReason('')
       setTried(false)
@@ -40,8 +47,8 @@ export function ExcludeForm({ change, onSave, isSaving, error }: ChangeFormProps
         void save()
       }}
     >
-      {!change && <MeasurementPicker galaxy={galaxy} onGalaxy={setGalaxy} value={id} onChange={(m) => setId(m.id)} error={tried && id === null ? 'Choose the measurement.' : undefined} />}
-      <TextField label="Reason" value={reason} onChange={setReason} error={errorAt(issues, error, 'reason')} help="Shown wherever the measurement is: wrong object; superseded calibration; blended with a star" />
+      {!change && <MeasurementPicker galaxy={galaxy} onGalaxy={setGalaxy} value={id} onChange={(m) => setId(m.id)} error={tried && id === null ? 'Choose the measurement.' : errorAt([], error, 'measurementId')} />}
+      <TextField label="Reason" value={reason} onChange={setReason} error={errorAt(issues, error, 'reason')} help={HELP[action]} />
       {error ? <ProblemNote error={error} safe="What you typed is kept." /> : null}
       <div>
         <Button type="submit" kind="primary" isPending={isSaving}>{change ? 'Save' : 'Add to the draft'}</Button>

@@ -1,7 +1,7 @@
 import { quantity } from '../../../core/quantities.ts'
 import type { MeasurementForm, MeasurementInput } from '../../../core/schema/measurement.ts'
 import { BLANK_MEASUREMENT, type TypedMeasurement } from './measurement-fields.tsx'
-import { asTyped, typedNumber } from './typed-number.ts'
+import { asTyped, typedNumber } from '../../lib/typed-number.ts'
 
 /** What was typed, as the API takes it. An empty lower error is the same as the upper one. */
 export function measurementBody(typed: TypedMeasurement): MeasurementForm {

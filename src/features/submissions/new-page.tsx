@@ -17,6 +17,12 @@ interface Typed {
   summary: string
 }
 
+/** What a draft is called that begins with a change of this kind. */
+const WHAT: Readonly<Record<string, string>> = {
+  'measurement.replace': 'mended measurement', 'measurement.exclude': 'measurement excluded', 'measurement.restore': 'measurement restored', 'galaxy.amend': 'amended',
+  'override.set': 'override', 'override.clear': 'override cleared', 'name.add': 'new name',
+}
+
 /** Begins a draft. `?galaxy=` and `?add=` lead straight on to the first change. */
 export default function NewSubmissionPage() {
   useDocumentTitle('New submission')
@@ -25,7 +31,7 @@ export default function NewSubmissionPage() {
   const galaxy = search.get('name') ?? search.get('galaxy')
   const create = useCreateSubmission()
   const { kept, keep } = useKeptForm<Typed>('submission.new')
-  const [typed, setTyped] = useState<Typed>(kept ?? { title: galaxy ? `${galaxy}: new measurement` : '', summary: '' })
+  const [typed, setTyped] = useState<Typed>(kept ?? { title: galaxy ? `${galaxy}: ${WHAT[search.get('add') ?? ''] ?? 'new measurement'}` : '', summary: '' })
   const [tried, setTried] = useState(false)
   const parsed = submissionInputSchema.safeParse(typed)
   const titleError = tried && !parsed.success ? parsed.error.issues.find((i) => i.path[0] === 'title')?.message : undefined
@@ -40,7 +46,7 @@ export default function NewSubmissionPage() {
     create.mutate(parsed.data, {
       onSuccess: (submission) => {
         keep(null)
-        void navigate(withQuery(paths.submission(submission.id), { add: search.get('add') ?? 'measurement.add', galaxy: search.get('galaxy'), name: search.get('name'), measurement: search.get('measurement') }), { replace: true })
+        void navigate(withQuery(paths.submission(submission.id), { add: search.get('add') ?? 'measurement.add', galaxy: search.get('galaxy'), name: search.get('name'), measurement: search.get('measurement'), about: search.get('about') }), { replace: true })
       },
     })
   }
