@@ -138,7 +138,7 @@ async function approveScale(knex: Knex, databaseUrl: string): Promise<void> {
       return withSharers(trx, { databaseUrl, threads: THREADS }, (sharers) => rebuildCatalogue(trx, 3, { sharers }))
     }),
   )
-  say(`  an anchor moved, approved: ${seconds(ms)}; ${result} rows written`)
+  say(`  an anchor moved, approved: ${seconds(ms)}; ${result.rows} rows and ${result.adopted} adopted values written`)
 }
 
 process.exitCode = (await main()) ? 0 : 1

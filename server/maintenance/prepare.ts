@@ -6,6 +6,7 @@ import { seedWhenEmpty } from '../../seeds/index.ts'
 import { ConfigError, loadConfig } from '../config.ts'
 import { openDatabase } from '../database.ts'
 import { migrateToLatest } from './migrate.ts'
+import { recomputeWhenOlder } from './recompute.ts'
 
 /** What a start script needs to know to greet its reader. Printed as one line of JSON. */
 export interface Prepared {
@@ -45,6 +46,7 @@ async function prepare(): Promise<Prepared> {
   try {
     const migrated = await migrateToLatest(knex)
     const { seeded } = await seedWhenEmpty({ knex, config, log })
+    await recomputeWhenOlder(knex, config, (sentence) => log.info(sentence))
     const accounts = config.demoPassword ? await settleDemonstrationAccounts(knex, config.demoPassword) : []
     return { migrated, seeded, accounts }
   } finally {

@@ -14,14 +14,14 @@ export interface RebuildOptions {
 /**
  * Adopts and derives the whole catalogue as it stands, and writes what differs as of a revision.
  *
- * @returns how many rows were written
+ * @returns how many rows and adopted values were written
  */
-export async function rebuildCatalogue(trx: Knex, revision: number, { onProgress, sharers = [shareOf(trx)] }: RebuildOptions = {}): Promise<number> {
-  const { rows } = await recompute(sharers, {
+export async function rebuildCatalogue(trx: Knex, revision: number, { onProgress, sharers = [shareOf(trx)] }: RebuildOptions = {}): Promise<{ rows: number; adopted: number }> {
+  const { written } = await recompute(sharers, {
     scale: await loadScale(trx),
     ids: await galaxiesAcrossTheSky(trx),
     onProgress,
     writing: { revision, write: (batch) => writeBatch(trx, revision, batch) },
   })
-  return rows
+  return written
 }

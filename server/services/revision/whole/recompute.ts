@@ -25,16 +25,16 @@ const STEPS = {
   finish: { from: 0.8, to: 1, words: 'Comparing with what stands' },
 } as const
 
-/** @returns the effect (of a computation that writes: empty), and how many rows were written */
-export async function recompute(sharers: readonly Sharer[], { scale, ids, onProgress, writing }: RecomputeOptions): Promise<{ effect: CatalogueEffect; rows: number }> {
+/** @returns the effect (of a computation that writes: empty), and how many rows and adopted values were written, those that only ended included */
+export async function recompute(sharers: readonly Sharer[], { scale, ids, onProgress, writing }: RecomputeOptions): Promise<{ effect: CatalogueEffect; written: { rows: number; adopted: number } }> {
   const shares = split(ids, sharers.length)
-  let rows = 0
+  const written = { rows: 0, adopted: 0 }
   // One batch at a time: they go through one transaction.
   let last: Promise<void> = Promise.resolve()
   const write = (batch: Batch): Promise<void> => {
     last = last.then(async () => {
       await writing?.write(batch)
-      if (batch.table === 'catalogue_rows') rows += batch.count
+      written[batch.table === 'catalogue_rows' ? 'rows' : 'adopted'] += Math.max(batch.count, batch.ending.length)
     })
     return last
   }
@@ -62,7 +62,7 @@ export async function recompute(sharers: readonly Sharer[], { scale, ids, onProg
   const satellites = await inStep('place', (sharer, outlet) => sharer.place(everybody, outlet))
   const hosting = new Set(satellites.flatMap((of) => [...of.keys()]))
   const effects = await inStep('finish', (sharer, outlet) => sharer.finish(hosting, outlet))
-  return { effect: mergeEffects(effects), rows }
+  return { effect: mergeEffects(effects), written }
 }
 
 /** Waits for all, so that nobody is still at work when the first failure is told. */
