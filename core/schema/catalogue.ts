@@ -111,6 +111,8 @@ export const galaxySchema = z.object({
   adopted: z.array(adoptedSchema),
   host: z.object({ slug: z.string(), name: z.string() }).nullable(),
   mainDisturber: z.object({ slug: z.string(), name: z.string() }).nullable(),
+  /** The reason of an override, where one decided about the host. */
+  hostOverride: text,
   /** Satellites, when it has any. */
   satellites: z.int(),
   revision: z.int(),
@@ -225,6 +227,8 @@ const shapeSchema = z.object({
   middleToMajor: z.number(),
   /** Rms height about the plane through the host, kpc. */
   height: z.number(),
+  /** Rms extent along the major axis, kpc. */
+  extent: z.number(),
   /** Supergalactic unit vectors: major axis, intermediate axis, normal. */
   axes: z.tuple([vector, vector, vector]),
   /** Of the normal's two ends the one with SGB ≥ 0, deg. */
@@ -246,6 +250,8 @@ const shapeSchema = z.object({
     /** Minor-to-major ratios of the reshuffles: equal bins over [0, 1]. */
     histogram: z.array(z.int()),
   }),
+  /** Rms error of the places along the line of sight, kpc; angle of the major axis to it, deg; whether the errors rule the shape. */
+  stretch: z.object({ depthError: z.number(), alongSight: number, dominates: z.boolean() }),
 })
 
 /** GET /api/hosts/:slug */

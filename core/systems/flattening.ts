@@ -16,6 +16,8 @@ export interface Flattening {
   middleToMajor: number
   /** Rms distance from the plane through the host that makes it least; unit of the offsets. */
   height: number
+  /** Rms extent along the major axis; unit of the offsets. */
+  extent: number
   /** Unit vectors, supergalactic, right-handed: major axis, intermediate axis, normal of the plane. */
   axes: readonly [Vector, Vector, Vector]
   /** Supergalactic direction of the normal, deg. Of its two ends the one with SGB ≥ 0 is given. */
@@ -36,7 +38,7 @@ export function flatteningOf(offsets: readonly Vector[]): Flattening | null {
   const normal = northward(vectors[2])
   const along = northward(vectors[0])
   return {
-    minorToMajor: minor / major, middleToMajor: middle / major, height: minor, axes: [along, cross(normal, along), normal], pole: poleOf(normal),
+    minorToMajor: minor / major, middleToMajor: middle / major, height: minor, extent: major, axes: [along, cross(normal, along), normal], pole: poleOf(normal),
   }
 }
 

@@ -6,6 +6,7 @@ import { flatteningDraws, type FlatteningDraws, type Placed } from './flattening
 import { dispersionOf, type Dispersion } from './gapper.ts'
 import { isotropyOf, type Isotropy } from './isotropy.ts'
 import { luminosityFunction, type LuminosityFunction } from './luminosity-function.ts'
+import { stretchOf, type Stretch } from './stretch.ts'
 
 /** What is computed of a galaxy as host or satellite; null where something is unknown. */
 export interface SystemGalaxy {
@@ -25,6 +26,7 @@ export interface SystemGalaxy {
 export interface Shape extends Flattening {
   drawn: FlatteningDraws
   isotropy: Isotropy
+  stretch: Stretch
 }
 
 export interface SystemScience {
@@ -54,7 +56,9 @@ function shapeOf(host: Placed, satellites: readonly Placed[], policy: Policy['ho
   const flattening = flatteningOf(offsets)
   const drawn = flattening && flatteningDraws(host, satellites, flattening.axes[2], policy)
   const isotropy = flattening && isotropyOf(offsets, flattening.minorToMajor, { reshuffles: policy.draws, seed: policy.seed })
-  return flattening && drawn && isotropy && { ...flattening, drawn, isotropy }
+  if (!flattening || !drawn || !isotropy) return null
+  const stretch = stretchOf(host, satellites, flattening.axes[0], flattening.extent, policy.unknownError)
+  return { ...flattening, drawn, isotropy, stretch }
 }
 
 /** Offsets from a host, kpc; places in Mpc. */
@@ -64,17 +68,4 @@ export function offsetsOf(host: Vector, satellites: readonly { position: Vector 
 
 function placeOf({ slug, position, modulus, statistical, systematic }: SystemGalaxy): Placed | null {
   return position && modulus !== null && length(position) > 0 ? { slug, position, modulus, statistical, systematic } : null
-}
-
-/** Nearer than this a host is the galaxy we are in, Mpc: its whole disc is within, no other galaxy is. */
-const OUR_OWN_WITHIN_MPC = 0.02
-
-/**
- * Velocity of a satellite against its host, Galactic standard of rest, km/s. Our own Galaxy is at rest in that frame by its definition, and
- * has no radial velocity of its own to be measured.
- *
- * @param hostDistance - of the host, Mpc
- */
-export function restOf(hostVelocity: number | null, hostDistance: number | null): number | null {
-  return hostVelocity ?? (hostDistance !== null && hostDistance < OUR_OWN_WITHIN_MPC ? 0 : null)
 }

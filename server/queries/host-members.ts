@@ -3,8 +3,9 @@ import type { Knex } from 'knex'
 import { COLUMNS } from '../../core/columns.ts'
 import type { Policy } from '../../core/scale/policy.ts'
 import type { HostAnswer } from '../../core/schema/catalogue.ts'
+import { restOf } from '../../core/systems/rest.ts'
 import { sightOf } from '../../core/systems/sight.ts'
-import { offsetsOf, restOf, type SystemGalaxy } from '../../core/systems/system.ts'
+import { offsetsOf, type SystemGalaxy } from '../../core/systems/system.ts'
 import { holdsAt, type ReadRevision } from './at-revision.ts'
 
 type Member = HostAnswer['members'][number]

@@ -5,7 +5,8 @@ import { length, type Vector } from '../../../core/astro/vector.ts'
 import { random } from '../../../core/random.ts'
 import { DEFAULT_POLICY } from '../../../core/scale/policy.ts'
 import { escapeSpeed } from '../../../core/systems/escape.ts'
-import { restOf, systemOf, type SystemGalaxy } from '../../../core/systems/system.ts'
+import { restOf } from '../../../core/systems/rest.ts'
+import { systemOf, type SystemGalaxy } from '../../../core/systems/system.ts'
 import { isotropic } from './satellites.ts'
 
 const policy = DEFAULT_POLICY.host
@@ -46,6 +47,20 @@ describe('systemOf', () => {
     const spread = (d: ReturnType<typeof at>): number => (d ? d.minorToMajor.hi - d.minorToMajor.lo : NaN)
     expect(spread(at(0.06))).toBeGreaterThan(spread(at(0.01)))
     expect(at(0.06)?.poleSpread).toBeGreaterThan(at(0.01)?.poleSpread ?? NaN)
+  })
+
+  it('says when the distance errors rule the shape', () => {
+    // 0.01 mag at 3.52 Mpc is 16 kpc, for host and satellite together 23: less than half of the rms extent of some 80 kpc.
+    const sure = systemOf({ ...host, statistical: 0.01 }, around(offsets, { statistical: 0.01 }), policy).shape?.stretch
+    expect(Math.abs((sure?.depthError ?? NaN) - 0.4605 * 0.01 * 1000 * length(HOST) * Math.SQRT2)).toBeLessThan(0.5)
+    expect(sure?.dominates).toBe(false)
+    const stretched = systemOf(host, around(offsets, { statistical: 0.1 }), policy).shape?.stretch
+    expect(stretched?.dominates).toBe(true)
+    // Satellites in a row behind one another.
+    const row = Array.from({ length: 8 }, (_, i): Vector => [HOST[0] * 20 * (i - 3.5) + i, HOST[1] * 20 * (i - 3.5) - i, HOST[2] * 20 * (i - 3.5)])
+    expect(systemOf(host, around(row), policy).shape?.stretch.alongSight).toBeLessThan(5)
+    const [ours, seen] = [galaxy('ours', [0.004, 0.005, 0.005]), isotropic(random(2), 6, 100).map(([x, y, z], i) => galaxy(`o-${i}`, [x / 1000, y / 1000, z / 1000]))]
+    expect(systemOf(ours, seen, policy).shape?.stretch.alongSight).toBeNull()
   })
 
   it('makes up nothing: too few, unplaced, unknown', () => {
