@@ -24,7 +24,9 @@ export function DataTableRow<Row>({ row, index, columns, height, isTabStop, isSe
       aria-current={isSelected || undefined}
       onFocus={(event) => {
         if (event.target === event.currentTarget) onFocus(index)
+        onHover?.(row)
       }}
+      onBlur={onHover && (() => onHover(null))}
       onClick={() => onFocus(index)}
       onDoubleClick={onAction && (() => onAction(row))}
       onMouseEnter={onHover && (() => onHover(row))}
