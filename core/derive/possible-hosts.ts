@@ -40,6 +40,7 @@ export function spanOf(g: Neighbour, policy: Pick<Policy['host'], 'unknownError'
 }
 
 const kept = new WeakMap<Neighbourhood, { unknownError: number; spans: Spans }>()
+const KEYS = ['ux', 'uy', 'uz', 'near', 'far', 'reach'] as const
 
 /** Kept as long as the neighbourhood is: previews ask for the same one again and again. */
 export function spansOf(n: Neighbourhood, policy: Pick<Policy['host'], 'unknownError'>): Spans {
@@ -47,17 +48,27 @@ export function spansOf(n: Neighbourhood, policy: Pick<Policy['host'], 'unknownE
   if (known?.unknownError === policy.unknownError) return known.spans
   const list = (): Float64Array => new Float64Array(n.size)
   const spans = { ux: list(), uy: list(), uz: list(), near: list(), far: list(), reach: list() }
-  n.galaxies.forEach((g, i) => {
-    const span = spanOf(g, policy)
-    spans.ux[i] = span.ux
-    spans.uy[i] = span.uy
-    spans.uz[i] = span.uz
-    spans.near[i] = span.near
-    spans.far[i] = span.far
-    spans.reach[i] = span.reach
-  })
+  n.galaxies.forEach((g, i) => setSpan(spans, i, spanOf(g, policy)))
   kept.set(n, { unknownError: policy.unknownError, spans })
   return spans
+}
+
+/** Spans of a neighbourhood that differs from another in a few galaxies, without working all of them out again. */
+export function spansAfter(before: Neighbourhood, after: Neighbourhood, changed: Iterable<number>, policy: Pick<Policy['host'], 'unknownError'>): Spans {
+  if (before.ids !== after.ids) return spansOf(after, policy)
+  const old = spansOf(before, policy)
+  const spans = { ux: old.ux.slice(), uy: old.uy.slice(), uz: old.uz.slice(), near: old.near.slice(), far: old.far.slice(), reach: old.reach.slice() }
+  for (const id of changed) {
+    const i = after.indexOf.get(id)
+    const galaxy = after.galaxies[i ?? -1]
+    if (i !== undefined && galaxy) setSpan(spans, i, spanOf(galaxy, policy))
+  }
+  kept.set(after, { unknownError: policy.unknownError, spans })
+  return spans
+}
+
+function setSpan(spans: Spans, i: number, span: Span): void {
+  for (const key of KEYS) spans[key][i] = span[key]
 }
 
 export function spanAt(s: Spans, i: number): Span {

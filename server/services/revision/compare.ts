@@ -1,7 +1,7 @@
 /** Only what differs is written: comparing what was computed with what stands. */
 import type { Knex } from 'knex'
 import type { Adopted } from '../../../core/adoption/adopted.ts'
-import { COLUMNS, type CatalogueRow } from '../../../core/columns.ts'
+import { COLUMNS, type CatalogueRow, type CatalogueValue } from '../../../core/columns.ts'
 import type { QuantityKey } from '../../../core/quantities.ts'
 import type { Computed } from './adopt-galaxies.ts'
 import type { PlannedAdopted, PlannedRow } from './plan.ts'
@@ -18,14 +18,21 @@ export interface StoredRow extends CatalogueRow {
   possible_hosts: string
 }
 
+const STORED = ['galaxy', 'main_disturber_galaxy', 'index_disturber_galaxy', 'possible_hosts', ...COMPUTED_COLUMNS]
+
 /** The rows that stand for these galaxies, by galaxy id. */
 export async function standingRows(trx: Knex, ids: readonly number[]): Promise<Map<number, StoredRow>> {
   if (ids.length === 0) return new Map()
-  const { rows } = (await trx.raw(
-    `select galaxy, main_disturber_galaxy, index_disturber_galaxy, possible_hosts::text, ${COMPUTED_COLUMNS.join(', ')} from catalogue_rows where rev_to is null and galaxy = any(?)`,
-    [[...ids]],
-  )) as { rows: StoredRow[] }
-  return new Map(rows.map((row) => [row.galaxy, row]))
+  const { rows } = (await trx
+    .raw(`select ${STORED.map((key) => (key === 'possible_hosts' ? 'possible_hosts::text' : key)).join(', ')} from catalogue_rows where rev_to is null and galaxy = any(?)`, [[...ids]])
+    .options({ rowMode: 'array' })) as { rows: CatalogueValue[][] }
+  return new Map(
+    rows.map((values) => {
+      const row: Record<string, CatalogueValue> = {}
+      for (let i = 0; i < STORED.length; i++) row[STORED[i] ?? ''] = values[i] ?? null
+      return [row.galaxy as number, row as StoredRow]
+    }),
+  )
 }
 
 /** Whether the row that stands is the one that is planned. */

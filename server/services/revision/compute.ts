@@ -7,6 +7,7 @@ import type { Knex } from 'knex'
 import type { Scale } from '../../../core/adoption/adopted.ts'
 import { affectedBy } from '../../../core/derive/affected.ts'
 import { neighbourFrom, withChanges, type Neighbour, type Neighbourhood } from '../../../core/derive/neighbourhood.ts'
+import { spansAfter } from '../../../core/derive/possible-hosts.ts'
 import { placeIn } from '../../../core/derive/places.ts'
 import type { OwnColumns } from '../../../core/derive/own.ts'
 import { NOWHERE, relationFinder, relationsOf, type HostOverrides, type PossibleHost, type Relation } from '../../../core/derive/relation.ts'
@@ -51,6 +52,7 @@ const MANY = 200
 async function place(trx: Knex, own: ReadonlyMap<number, OwnColumns>, before: Surroundings, scale: Scale): Promise<PlannedRow[]> {
   const moved = movedNeighbours(own, before.neighbourhood)
   const after = withChanges(before.neighbourhood, moved)
+  spansAfter(before.neighbourhood, after, moved.keys(), scale.policy.host)
   const affected = affectedBy(before.neighbourhood, before.places, after, new Set(moved.keys()), scale.policy.host)
   const overrides = await loadHostOverrides(trx)
   const assigned = [...overrides].flatMap(([id, host]) => (host !== null && moved.has(host) ? [id] : []))

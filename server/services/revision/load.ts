@@ -2,6 +2,7 @@
 import type { Knex } from 'knex'
 import type { Chosen, Scale } from '../../../core/adoption/adopted.ts'
 import type { Anchor, Galaxy, Measurement } from '../../../core/catalogue/types.ts'
+import { sourcesById } from '../changes/current.ts'
 import { policySchema } from '../../../core/scale/policy.ts'
 
 /** The adopted anchors and the policy. @throws Error when the catalogue has no policy yet */
@@ -26,18 +27,31 @@ export async function loadGalaxies(trx: Knex, ids: readonly number[]): Promise<G
   return rows.map(({ galaxy, id, ...rest }) => ({ ...rest, id: galaxy, versionId: id }))
 }
 
-/** All measurements held of these galaxies, with what their sources are called. */
+/** Fields that adoption asks for, in the order in which they are read: a million rows are, so they come as bare lists. */
+type MeasurementFields = [
+  id: number, versionId: number, galaxyId: number, quantity: Measurement['quantity'], value: number | null, errPlus: number | null, errMinus: number | null, errSys: number | null,
+  textValue: string | null, limitFlag: Measurement['limitFlag'], method: Measurement['method'], anchor: string | null, anchorValueAssumed: number | null,
+  convention: Measurement['convention'], sourceId: number, excludedReason: string | null, supersedes: number | null,
+]
+
+/** All measurements held of these galaxies, with what their sources are called; without what only people read (as published, where, notes). */
 export async function loadMeasurements(trx: Knex, galaxyIds: readonly number[]): Promise<Measurement[]> {
-  const { rows } = (await trx.raw(
-    `select m.lineage as id, m.id as "versionId", m.galaxy as "galaxyId", m.quantity, m.value, m.err_plus as "errPlus", m.err_minus as "errMinus",
-            m.err_sys as "errSys", m.text_value as "textValue", m.limit_flag as "limitFlag", m.method, m.anchor,
-            m.anchor_value_assumed as "anchorValueAssumed", m.convention, m.published, m.source as "sourceId", s.label as "sourceLabel",
-            s.year as "sourceYear", m.locator, m.note, m.excluded_reason as "excludedReason", m.supersedes
-       from measurements m join sources s on s.id = m.source
-      where m.rev_to is null and m.galaxy = any(?)`,
-    [[...galaxyIds]],
-  )) as { rows: Measurement[] }
-  return rows
+  const { rows } = (await trx
+    .raw(
+      `select lineage, id, galaxy, quantity, value, err_plus, err_minus, err_sys, text_value, limit_flag, method, anchor, anchor_value_assumed, convention, source,
+              excluded_reason, supersedes
+         from measurements where rev_to is null and galaxy = any(?)`,
+      [[...galaxyIds]],
+    )
+    .options({ rowMode: 'array' })) as { rows: MeasurementFields[] }
+  const sources = await sourcesById(trx, rows.map((row) => row[14]))
+  return rows.map(([id, versionId, galaxyId, quantity, value, errPlus, errMinus, errSys, textValue, limitFlag, method, anchor, anchorValueAssumed, convention, sourceId, excludedReason, supersedes]) => {
+    const source = sources.get(sourceId)
+    return {
+      id, versionId, galaxyId, quantity, value, errPlus, errMinus, errSys, textValue, limitFlag, method, anchor, anchorValueAssumed, convention, sourceId, excludedReason, supersedes,
+      sourceLabel: source?.label ?? '', sourceYear: source?.year ?? 0, published: null, locator: null, note: null,
+    }
+  })
 }
 
 /** Overrides by galaxy and quantity: `"12 distance_modulus"`. */

@@ -3,8 +3,8 @@ import { describe, expect, it } from 'vitest'
 import { drawnDistances } from '../../../core/derive/draws.ts'
 import { membershipOf, reachOf } from '../../../core/derive/membership.ts'
 import { mayHost, pull } from '../../../core/derive/disturber.ts'
-import { neighbourhoodOf, type Neighbour } from '../../../core/derive/neighbourhood.ts'
-import { possibleHostsOf, tidalReach } from '../../../core/derive/possible-hosts.ts'
+import { neighbourhoodOf, withChanges, type Neighbour } from '../../../core/derive/neighbourhood.ts'
+import { possibleHostsOf, spansAfter, spansOf, tidalReach } from '../../../core/derive/possible-hosts.ts'
 import { possibleHostSearch } from '../../../core/derive/possible-hosts-tree.ts'
 import { relationOf, relationsOf } from '../../../core/derive/relation.ts'
 import { DEFAULT_POLICY } from '../../../core/scale/policy.ts'
@@ -44,6 +44,17 @@ describe('possible hosts', () => {
       }),
       { numRuns: 60 },
     )
+  })
+})
+
+describe('spans', () => {
+  it('follow a change to what working them all out anew gives', () => {
+    const list = crowd(21, 80)
+    const before = neighbourhoodOf(list)
+    for (const changes of [new Map<number, Neighbour | null>([[3, moved(list[2] as Neighbour, 28)], [9, { ...(list[8] as Neighbour), mass: 1e9, statistical: 0.4 }]]), new Map<number, Neighbour | null>([[5, null], [900, neighbour(900, [4, 1, 1], 1e8)]])]) {
+      const after = withChanges(before, changes)
+      expect(spansAfter(before, after, changes.keys(), policy)).toEqual(spansOf(neighbourhoodOf(after.galaxies), policy))
+    }
   })
 })
 
