@@ -256,6 +256,8 @@ describe('an override', () => {
     expect((await rowsNow()).get(small.slug)).toMatchObject({ host: null, host_relation: 'field' })
     expect(none.effect.systems).toMatchObject([{ slug: host.slug, before: 1, after: 0, lost: ['Grandis I'] }])
     expect(none.submission.items[0]?.diff[0]).toEqual({ field: 'Host', before: 'Grandis, by the rule', after: 'none, by an override' })
+    const shown = (await curator.get(`/api/galaxies/${small.slug}`)).ok<{ hostOverride: string | null }>(200)
+    expect(shown.hostOverride).toBe('its velocity says so')
     const other = await galaxy('Hallam', 85, 30, { value: 27.6 }, { quantity: 'log_mstar', value: 9, unit: '', method: null, errPlus: 0.1, errMinus: 0.1 })
     await approved(curator, 'Another host', choose(other.slug))
     expect((await rowsNow()).get(small.slug)).toMatchObject({ host: other.slug, host_relation: 'satellite' })

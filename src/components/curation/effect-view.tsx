@@ -11,6 +11,8 @@ import { arrivalWords, effectSentence, isFirst, namesIn, shiftWords, valueWords,
 
 /** So many galaxies are listed at a time. */
 const LISTED = 40
+/** Below the picture and the table of what moves. */
+const FEW_LISTED = 10
 
 /** From so many shifts on, a picture tells more than the list. */
 const MANY_SHIFTS = 6
@@ -32,14 +34,14 @@ export function EffectView({ effect, ofScale = false }: EffectViewProps) {
       {moving && <ShiftsView effect={effect} />}
       <section className="min-w-0">
         {moving && <h3 className="mb-2 text-base">Everything that would differ</h3>}
-        <ValueByValue effect={effect} />
+        <ValueByValue effect={effect} first={moving ? FEW_LISTED : LISTED} />
       </section>
     </div>
   )
 }
 
-function ValueByValue({ effect }: { effect: Effect }) {
-  const [listed, setListed] = useState(LISTED)
+function ValueByValue({ effect, first }: { effect: Effect; first: number }) {
+  const [listed, setListed] = useState(first)
   const names = namesIn(effect)
   const rest = effect.galaxies.length - listed
   const told = effect.galaxies.length

@@ -52,11 +52,11 @@ function Scale({ scale, at, mayPropose }: { scale: ScaleAnswer; at: string | nul
     <div className="grid grid-cols-[minmax(0,1fr)] gap-6">
       <AnchorSheets scale={scale} mayPropose={mayPropose} />
       <Sheet><ScaleTree scale={scale} /></Sheet>
-      <div className="grid grid-cols-[minmax(0,1fr)] items-start gap-6 lg:grid-cols-[minmax(0,1fr)_22rem]">
-        <MethodTable scale={scale} />
+      <MethodTable scale={scale} />
+      <div className="grid grid-cols-[minmax(0,1fr)] items-start gap-6 lg:grid-cols-[minmax(0,1fr)_24rem]">
+        <ScaleHistoryList at={at} />
         <HostPolicy policy={scale.policy} since={scale.policySince} />
       </div>
-      <ScaleHistoryList at={at} />
     </div>
   )
 }

@@ -32,7 +32,7 @@ export function ScaleTree({ scale }: { scale: ScaleAnswer }) {
   const places = anchorPlaces(scale.anchors, rungs, height)
   const words = `${rungs.length} methods in ${tiers.length} tiers. ${scale.anchors.map((a) => `On ${a.label} hang ${a.methods.map((m) => method(m).label).join(', ')}`).join('. ')}. ${rungs.filter((r) => r.used > 0).map((r) => `${method(r.rule.method).label}: tier ${r.rule.tier}, used for ${r.used} of ${r.held} galaxies, systematic ${r.rule.systematic} mag`).join('; ')}.`
   return (
-    <PlotFrame title="What hangs on what" fileName="scale" alt={words} note={<p className="text-sm text-muted">Filled: galaxies whose adopted distance uses the method. Open: galaxies with a value of it that is held and not used, since a better tier is there or it is excluded. Lines lead from each anchor to the methods that hang on it; the others stand on their own.</p>}>
+    <PlotFrame title="What hangs on what" fileName="scale" alt={words} note={<p className="text-sm text-muted">Filled: galaxies whose adopted distance uses the method. Open: galaxies with a value of it that is held and not used, since a better tier is there or it is excluded.{isNarrow ? '' : ' Lines lead from each anchor to the methods that hang on it; the others stand on their own.'}</p>}>
       <div ref={frame} className="w-full">
         <svg aria-hidden width={width} height={height} viewBox={`0 0 ${width} ${height}`} className="block max-w-full font-sans" fontSize={14}>
           {!isNarrow && <text x={columns.anchors} y={18} fontSize={13} textAnchor="end" className="fill-muted">anchor</text>}

@@ -44,9 +44,12 @@ export function AnchorFields({ typed, onChange, held, anchors, errorOf }: Anchor
       </div>
       <TextField label="Source" value={typed.source} onChange={(source) => set({ source })} error={errorOf('source')} help="Where the value comes from, as a citation" />
       {held && <TextField label="Label" value={typed.label} onChange={(label) => set({ label })} error={errorOf('label')} />}
-      <fieldset>
-        <legend className="mb-1 text-sm text-muted">Methods that hang on it</legend>
-        <div className="grid gap-x-4 gap-y-0.5 sm:grid-cols-2 lg:grid-cols-3">
+      <details open={!held || methodsError !== undefined}>
+        <summary className="mb-1 cursor-pointer">
+          <span className="text-sm text-muted">Methods that hang on it: </span>
+          {METHODS.filter((m) => typed.methods.includes(m.key)).map((m) => m.label).join(', ') || 'none'}
+        </summary>
+        <div role="group" aria-label="Methods that hang on it" className="grid gap-x-4 gap-y-0.5 sm:grid-cols-2 lg:grid-cols-3">
           {METHODS.map((m) => {
             const owner = anchors.find((a) => a.key !== typed.key && (a.methods as readonly string[]).includes(m.key))
             return (
@@ -62,7 +65,7 @@ export function AnchorFields({ typed, onChange, held, anchors, errorOf }: Anchor
           })}
         </div>
         {methodsError && <p className="mt-1 text-sm text-stop">{methodsError}</p>}
-      </fieldset>
+      </details>
     </div>
   )
 }

@@ -23,10 +23,10 @@ const fieldKeys = <K extends string>(record: Readonly<Record<K, unknown>>): K[] 
 export function MethodRuleFields({ held, typed, onChange, errorOf }: PolicyFieldsProps) {
   return (
     <ScrollAcross label="Rules of methods">
-      <table className="w-full min-w-[40rem] border-collapse">
+      <table className="w-full min-w-[36rem] table-fixed border-collapse">
         <thead className="text-left text-sm text-muted">
           <tr className="border-b border-line">
-            <th scope="col" className="sticky left-0 bg-sheet py-1.5 pr-3 font-semibold">Method</th>
+            <th scope="col" className="sticky left-0 w-[34%] bg-sheet py-1.5 pr-3 font-semibold">Method</th>
             {fieldKeys(METHOD_FIELDS).map((field) => (
               <th key={field} scope="col" className="px-2 py-1.5 font-semibold">
                 {HEADS[field]}
@@ -40,7 +40,7 @@ export function MethodRuleFields({ held, typed, onChange, errorOf }: PolicyField
             <tr key={m.key} className="border-b border-line/60 align-top">
               <th scope="row" className="sticky left-0 bg-sheet py-2.5 pr-3 text-left font-normal">{m.label}</th>
               {fieldKeys(METHOD_FIELDS).map((field) => (
-                <td key={field} className="w-32 px-2 py-1">
+                <td key={field} className="px-2 py-1">
                   <LeafField path={`methods.${m.key}.${field}`} label={`${m.label}: ${METHOD_FIELDS[field].label}`} hideLabel {...{ held, typed, onChange, errorOf }} />
                 </td>
               ))}

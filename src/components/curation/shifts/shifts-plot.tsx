@@ -93,6 +93,7 @@ export function ShiftsPlot({ shifts, scale }: { shifts: readonly ShiftRow[]; sca
               <text x={t.at} y={HEIGHT - BOTTOM + 20} fontSize={13} textAnchor="middle" className="figures fill-muted">{t.text}</text>
             </g>
           ))}
+          <line x1={LEFT} x2={right} y1={HEIGHT - BOTTOM} y2={HEIGHT - BOTTOM} strokeWidth={1} className="stroke-line" />
           <line x1={LEFT} x2={right + side} y1={y.scale(0)} y2={y.scale(0)} strokeWidth={1.4} className="stroke-edge" />
           <path d={dots} fill="none" strokeWidth={5.5} strokeLinecap="round" strokeOpacity={marks.length > 300 ? 0.45 : 0.75} className="stroke-ramp-4" />
           {changed.map((m) => <path key={m.shift.slug} d={`M${m.x} ${m.y - 6}l6 6l-6 6l-6 -6z`} strokeWidth={1.2} className="fill-accent stroke-sheet" />)}
