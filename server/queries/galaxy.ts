@@ -45,12 +45,13 @@ export async function galaxyText(knex: Knex, slug: string, revision: ReadRevisio
            'reasons', a.reasons, 'override', a.override_reason) ORDER BY a.quantity), '[]')
          FROM adopted_values a WHERE a.galaxy = c.galaxy AND ${holds.sql('a')}),
        'host', ${place('host')}, 'mainDisturber', ${place('main_disturber')},
+       'hostOverride', (SELECT o.reason FROM overrides o WHERE o.galaxy = c.galaxy AND o.about = 'host' AND ${holds.sql('o')}),
        'satellites', (SELECT count(*)::int FROM catalogue_rows m WHERE m.host = c.slug AND m.status <> 'withdrawn' AND ${holds.sql('m')}),
        'revision', ?::integer)::text AS text
      FROM catalogue_rows c JOIN galaxy_versions v ON v.galaxy = c.galaxy AND ${holds.sql('v')}
      WHERE c.galaxy = ? AND ${holds.sql('c')}`,
     [
-      ...holds.bindings, ...holds.bindings, ...holds.bindings, ...holds.bindings, ...holds.bindings, revision.number, ...holds.bindings, galaxy, ...holds.bindings,
+      ...holds.bindings, ...holds.bindings, ...holds.bindings, ...holds.bindings, ...holds.bindings, ...holds.bindings, revision.number, ...holds.bindings, galaxy, ...holds.bindings,
     ],
   )
   const [row] = answer.rows

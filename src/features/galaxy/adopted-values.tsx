@@ -12,14 +12,17 @@ import { publishedWords } from '../../lib/published.ts'
 import { paths } from '../../paths.ts'
 import { adoptedOf, quantityLook } from './adopted-words.ts'
 import { Fold } from './fold.tsx'
+import { OverrideLinks } from './override-links.tsx'
 
 export interface AdoptedValuesProps {
   galaxy: GalaxyAnswer
   measurements: readonly MeasurementAnswer[]
+  /** With the ways to override. */
+  canWrite: boolean
 }
 
 /** What the catalogue adopts of every quantity; each opens to what each measurement weighed and why. */
-export function AdoptedValues({ galaxy, measurements }: AdoptedValuesProps) {
+export function AdoptedValues({ galaxy, measurements, canWrite }: AdoptedValuesProps) {
   const adopted = QUANTITY_KEYS.map((key) => adoptedOf(galaxy, key)).filter((one) => one !== undefined)
   return (
     <Sheet title="Adopted values">
@@ -29,7 +32,12 @@ export function AdoptedValues({ galaxy, measurements }: AdoptedValuesProps) {
         <div className="border-t border-line">
           {adopted.map((one) => (
             <Fold key={one.quantity} summary={<Summary adopted={one} />}>
-              {() => <Reasons adopted={one} measurements={measurements} />}
+              {() => (
+                <>
+                  <Reasons adopted={one} measurements={measurements} />
+                  {canWrite && <p className="mt-3"><OverrideLinks galaxy={galaxy} about={one.quantity} isOverridden={one.override !== null} /></p>}
+                </>
+              )}
             </Fold>
           ))}
         </div>

@@ -92,7 +92,7 @@ function Galaxy({ galaxy, at }: { galaxy: GalaxyAnswer; at: string | null }) {
           ) : held ? (
             <>
               <DistancePlot galaxy={galaxy} measurements={held} />
-              <AdoptedValues galaxy={galaxy} measurements={held} />
+              <AdoptedValues galaxy={galaxy} measurements={held} canWrite={canWrite} />
             </>
           ) : (
             <Skeleton height={640} label="Loading the measurements" />
@@ -100,7 +100,7 @@ function Galaxy({ galaxy, at }: { galaxy: GalaxyAnswer; at: string | null }) {
         </div>
         <div className="grid min-w-0 content-start gap-5">
           <AdoptedDistance galaxy={galaxy} />
-          <Standing galaxy={galaxy} at={at} />
+          <Standing galaxy={galaxy} at={at} canWrite={canWrite} />
         </div>
         <div className="min-w-0 lg:col-span-2">
           <SectionHeading>Measurements</SectionHeading>

@@ -60,7 +60,11 @@ function columnsFor(galaxy: GalaxyAnswer, anchors: ScaleAnswer['anchors'], canWr
       render: (m) => (
         <span className="inline-flex gap-3">
           <Link to={changeAddress(galaxy, 'measurement.replace', m.id)} aria-label={`Mend the ${quantity(m.quantity).label.toLowerCase()} of ${m.source.label}`}>Mend</Link>
-          {m.excludedReason === null && <Link to={changeAddress(galaxy, 'measurement.exclude', m.id)} aria-label={`Exclude the ${quantity(m.quantity).label.toLowerCase()} of ${m.source.label}`}>Exclude</Link>}
+          {m.excludedReason === null ? (
+            <Link to={changeAddress(galaxy, 'measurement.exclude', m.id)} aria-label={`Exclude the ${quantity(m.quantity).label.toLowerCase()} of ${m.source.label}`}>Exclude</Link>
+          ) : (
+            <Link to={changeAddress(galaxy, 'measurement.restore', m.id)} aria-label={`Restore the ${quantity(m.quantity).label.toLowerCase()} of ${m.source.label}`}>Restore</Link>
+          )}
         </span>
       ),
     },

@@ -8,6 +8,7 @@ import { Sheet } from '../../components/sheet.tsx'
 import { formatNumber } from '../../lib/format.ts'
 import { paths, withQuery } from '../../paths.ts'
 import { away, rowNumber } from './adopted-words.ts'
+import { OverrideLinks } from './override-links.tsx'
 
 /** The adopted distance, large. */
 export function AdoptedDistance({ galaxy }: { galaxy: GalaxyAnswer }) {
@@ -36,7 +37,7 @@ export function AdoptedDistance({ galaxy }: { galaxy: GalaxyAnswer }) {
 }
 
 /** Where the galaxy is, what it is near, how bright, large and fast. Rows without a value are left out. */
-export function Standing({ galaxy, at }: { galaxy: GalaxyAnswer; at: string | null }) {
+export function Standing({ galaxy, at, canWrite }: { galaxy: GalaxyAnswer; at: string | null; canWrite: boolean }) {
   const value = (key: string): number | null => rowNumber(galaxy, key)
   const rows: (DefinitionRow | null)[] = [
     separation(galaxy, at),
@@ -60,6 +61,8 @@ export function Standing({ galaxy, at }: { galaxy: GalaxyAnswer; at: string | nu
   return (
     <Sheet title="Where it stands">
       <DefinitionRows rows={rows.filter((row) => row !== null)} />
+      {galaxy.hostOverride !== null && <p className="mt-3 text-muted">{`The host was decided against the rule: ${galaxy.hostOverride}`}</p>}
+      {canWrite && value('distance') !== null && <p className="mt-3">Host: <OverrideLinks galaxy={galaxy} about="host" isOverridden={galaxy.hostOverride !== null} /></p>}
     </Sheet>
   )
 }
