@@ -5,6 +5,8 @@ import { notify } from './toast.tsx'
 
 export interface PlotFrameProps {
   title: string
+  /** Above the downloads, where they should say more than the page around them does: whose picture it is. */
+  savedTitle?: string
   /** What the picture shows, in sentences: read instead of it. */
   alt: string
   /** Name of the downloads, without ending: `ostrel-ix-distance`. */
@@ -21,7 +23,7 @@ export interface PlotFrameProps {
 }
 
 /** What every picture has: title, text alternative, its numbers, downloads. */
-export function PlotFrame({ title, alt, fileName, children, note, table, level = 2, holdsControls }: PlotFrameProps) {
+export function PlotFrame({ title, savedTitle = title, alt, fileName, children, note, table, level = 2, holdsControls }: PlotFrameProps) {
   const picture = useRef<HTMLDivElement>(null)
   const [asTable, setAsTable] = useState(false)
   const Heading = level === 2 ? 'h2' : 'h3'
@@ -29,7 +31,7 @@ export function PlotFrame({ title, alt, fileName, children, note, table, level =
   function save(kind: 'svg' | 'png'): void {
     const svg = picture.current?.querySelector('svg')
     if (!svg) return
-    const saving = kind === 'svg' ? saveSvg(svg, fileName, title) : savePng(svg, fileName, title)
+    const saving = kind === 'svg' ? saveSvg(svg, fileName, savedTitle) : savePng(svg, fileName, savedTitle)
     saving.catch((error: unknown) => notify(`The picture was not saved: ${error instanceof Error ? error.message : 'unknown reason'}. Nothing else is lost; try the other format.`, { tone: 'stop' }))
   }
 
