@@ -9,14 +9,14 @@ import { atQuery } from './parameters.ts'
 
 export const hostRoutes: Route[] = [
   route({
-    method: 'get', path: '/api/hosts', summary: 'Hosts of satellites, with radii and velocity dispersions', permission: 'catalogue.read', query: atQuery, answer: hostsSchema,
+    method: 'get', path: '/api/hosts', summary: 'Hosts of satellites, with radii, velocity dispersions and flattening', permission: 'catalogue.read', query: atQuery, answer: hostsSchema,
     handle: async (context) => {
       const revision = await readRevision(context.knex, context.reader, context.query.at)
       if (!answeredAlready(context, revision)) return hostsAt(context.knex, revision)
     },
   }),
   route({
-    method: 'get', path: '/api/hosts/:slug', summary: 'One system: the host and its members', permission: 'catalogue.read', params: z.object({ slug: z.string() }), query: atQuery,
+    method: 'get', path: '/api/hosts/:slug', summary: 'One system: the host, its members, their luminosity function and shape', permission: 'catalogue.read', params: z.object({ slug: z.string() }), query: atQuery,
     answer: hostSchema,
     handle: async (context) => {
       const revision = await readRevision(context.knex, context.reader, context.query.at)

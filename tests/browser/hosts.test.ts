@@ -136,7 +136,7 @@ it('saves a picture with its marks', async () => {
   expect(download.suggestedFilename()).toBe(`${rich.host.slug}-velocities.svg`)
   const svg = await readFile(await download.path(), 'utf8')
   expect(svg.match(/<a /g)?.length).toBe(rich.members.filter((m) => m.dv !== null).length)
-  expect(svg).toContain('Velocity against separation')
+  expect(svg).toContain(`Velocity against separation: satellites of ${rich.host.name}`)
 })
 
 it('says what is missing where satellites are too few, or there are none', async () => {

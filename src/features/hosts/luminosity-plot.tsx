@@ -8,6 +8,7 @@ import { SectionHeading } from '../../components/section-heading.tsx'
 import { formatCounted, formatNumber } from '../../lib/format.ts'
 import { useWidth } from '../../lib/use-width.ts'
 import { AbsoluteV, Axes, type Box } from './axes.tsx'
+import { ClassLegend, legendOf } from './class-legend.tsx'
 import { MemberMarks, type Member, type Pointing } from './member-marks.tsx'
 import { Reading } from './reading.tsx'
 
@@ -34,7 +35,11 @@ export function LuminosityPlot({ answer, pointing }: { answer: HostAnswer; point
     )
   }
   const box: Box = { left: MARGIN.left, right: width - MARGIN.right, top: MARGIN.top, bottom: MARGIN.top + INSIDE_HEIGHT }
-  const height = box.bottom + MARGIN.bottom
+  const legend = legendOf(
+    members.filter((m) => steps.some((s) => s.slug === m.slug)),
+    width - MARGIN.left,
+  )
+  const height = box.bottom + MARGIN.bottom + legend.height
   const across = linearAxis(first.absV - 0.3, last.absV + 0.3, box.left, box.right)
   const up = scaleLog([LEAST, 1.15 * last.hi], [box.bottom, box.top]).clamp(true)
   const ticks = [1, 2, 5, 10, 20, 50, 100, 200, 500].filter((n) => n < last.hi).map((n) => ({ at: up(n), text: String(n) }))
@@ -54,6 +59,7 @@ export function LuminosityPlot({ answer, pointing }: { answer: HostAnswer; point
     <PlotFrame
       holdsControls
       title={TITLE}
+      savedTitle={`${TITLE}: satellites of ${host.name}`}
       fileName={`${host.slug}-luminosity-function`}
       alt={`Cumulative luminosity function of ${formatCounted(steps.length, 'satellite')} of ${host.name}, from M_V ${formatNumber(first.absV, 1)} to ${formatNumber(last.absV, 1)}.`}
       table={<Numbers steps={steps} members={bySlug} name={host.name} />}
@@ -74,6 +80,7 @@ export function LuminosityPlot({ answer, pointing }: { answer: HostAnswer; point
             ) : null,
           )}
           <Axes box={box} x={{ ticks: across.ticks, label: <AbsoluteV /> }} y={{ ticks, label: 'satellites as bright or brighter' }} />
+          <ClassLegend legend={legend} x={box.left} y={box.bottom + MARGIN.bottom} />
           <MemberMarks label={`Satellites of ${host.name} by luminosity`} pointing={pointing} box={box} marks={marks} />
         </svg>
         <Reading member={marks.find((m) => m.member.slug === pointing.slug)?.member} />

@@ -27,6 +27,7 @@ export function ShapeHistogram({ shape, host }: { shape: Shape; host: HostAnswer
   return (
     <PlotFrame
       title="Among isotropic systems"
+      savedTitle={`${host.name} among isotropic systems with its radii`}
       fileName={`${host.slug}-isotropy`}
       alt={`Minor-to-major axis ratios of ${formatCount(isotropy.reshuffles)} isotropic systems with the same radii; the observed ${formatNumber(minorToMajor, 2)} is reached or passed by ${formatCount(isotropy.asFlat)} of them.`}
       table={<Numbers bins={bins} name={host.name} />}

@@ -48,6 +48,7 @@ export function SystemPlan({ answer, pointing }: { answer: HostAnswer; pointing:
     <PlotFrame
       holdsControls
       title="Plan of the system"
+      savedTitle={`Plan of the ${host.name} system`}
       fileName={`${host.slug}-plan`}
       alt={`${host.name} with ${placed.length} satellites seen ${view.words}; ${host.sphere === null ? 'its sphere is unknown' : `the sphere has a radius of ${formatNumber(sphere, 0)} kpc`}.`}
       table={<Places members={placed} name={host.name} />}

@@ -56,6 +56,7 @@ export function VelocityPlot({ answer, pointing }: { answer: HostAnswer; pointin
     <PlotFrame
       holdsControls
       title={TITLE}
+      savedTitle={`${TITLE}: satellites of ${host.name}`}
       fileName={`${host.slug}-velocities`}
       alt={`Velocities of ${formatCounted(moving.length, 'satellite')} against ${host.name} over their separations${host.sphere === null ? '' : `; the sphere ends at ${formatNumber(host.sphere, 0)} kpc`}.`}
       table={<Numbers rows={moving} name={host.name} />}

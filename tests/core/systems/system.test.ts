@@ -70,12 +70,12 @@ describe('systemOf', () => {
     expect(systemOf(host, some, policy)).toMatchObject({ placed: 5, dispersion: null })
   })
 
-  it('takes less than a quarter of a second for a hundred members', () => {
+  it('takes less than a second for a hundred members, on a busy machine too', () => {
     const many = around(isotropic(random(3), 100, 300))
     systemOf(host, many, policy)
     const start = performance.now()
     systemOf(host, many, policy)
-    expect(performance.now() - start).toBeLessThan(250)
+    expect(performance.now() - start).toBeLessThan(1000)
   })
 })
 
