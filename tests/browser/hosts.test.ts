@@ -31,8 +31,7 @@ afterAll(async () => {
 
 const open = (path: string): Promise<Page> => openPage(app, chromium, path, { viewport: { width: 1440, height: 1000 } })
 const path = (): string => `/hosts/${rich.host.slug}`
-const PLOTS = ['on the plan', 'by velocity and separation', 'by luminosity'] as const
-const marks = (page: Page, words: (typeof PLOTS)[number]) => page.getByRole('group', { name: `Satellites of ${rich.host.name} ${words}` }).getByRole('link')
+const marks = (page: Page, words: 'on the plan' | 'by velocity and separation' | 'by luminosity') => page.getByRole('group', { name: `Satellites of ${rich.host.name} ${words}` }).getByRole('link')
 
 it('lists the systems with dispersion, flattening and brightest satellite, and leads to each', async () => {
   const page = await open('/hosts')
