@@ -47,7 +47,10 @@ export interface CatalogueEffect {
 }
 
 /** Follow from others that are listed, or say nothing about the galaxy. */
-const UNTOLD: ReadonlySet<string> = new Set(['slug', 'revision', 'updated_at', 'glon', 'glat', 'sgl', 'sgb', 'distance_lo', 'distance_hi', 'n_sources', 'n_distance_all', 'host_sep_lo', 'host_sep_hi', 'v_cmb'])
+const UNTOLD: ReadonlySet<string> = new Set([
+  'slug', 'revision', 'updated_at', 'glon', 'glat', 'sgl', 'sgb', 'distance_lo', 'distance_hi', 'n_sources', 'n_distance_all', 'host_sep_lo', 'host_sep_hi', 'host_dv_err', 'v_cmb', 'abs_b_err', 'abs_v_err', 'abs_k_err',
+  'abs_i_err', 'abs_g_err', 'abs_r_err', 'r_half_pc_err', 'r_circ_pc_err', 'mu_half_err', 'diameter_kpc_err', 'log_mhi_err', 'log_mstar_err',
+])
 const DM_DECIMALS = columnOf('dm')?.decimals ?? 3
 const TOLD = COLUMNS.filter((c) => !UNTOLD.has(c.key))
 

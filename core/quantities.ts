@@ -9,8 +9,12 @@ export const QUANTITY_KEYS = [
   'b_mag',
   'v_mag',
   'k_mag',
+  'i_mag',
+  'g_mag',
+  'r_mag',
   'ebv',
   'r_half',
+  'diameter',
   'axis_ratio',
   'position_angle',
   'hi_flux',
@@ -67,7 +71,8 @@ const identity = (x: number): number => x
 const same = (unit: string, ...names: string[]): AcceptedUnit => ({ unit, names: [unit.toLowerCase(), ...names], toCanonical: identity })
 const modulusOf = (perMpc: number) => (d: number) => 5 * Math.log10(d / perMpc) + 25
 
-const magnitude = (band: 'B' | 'V' | 'K', key: QuantityKey, names: string[]): Quantity => ({
+/** Total apparent magnitudes, not corrected for extinction: B, V, I (Landolt) and K in the Vega system, g and r (SDSS) in the AB system. */
+const magnitude = (band: 'B' | 'V' | 'K' | 'I' | 'g' | 'r', key: QuantityKey, names: string[]): Quantity => ({
   key,
   label: `${band} magnitude`,
   symbol: band,
@@ -101,6 +106,9 @@ export const QUANTITIES: readonly Quantity[] = [
   magnitude('B', 'b_mag', ['b magnitude', 'b mag', 'b', 'bmag', 'bt', 'b t']),
   magnitude('V', 'v_mag', ['v magnitude', 'v mag', 'vmag', 'vt', 'v t', 'mv']),
   magnitude('K', 'k_mag', ['ks magnitude', 'k magnitude', 'k mag', 'ks mag', 'kmag', 'ksmag', 'ks', 'k', 'k s']),
+  magnitude('I', 'i_mag', ['i magnitude', 'i mag', 'imag', 'ic', 'i c', 'it', 'i t']),
+  magnitude('g', 'g_mag', ['g magnitude', 'g mag', 'gmag', 'g']),
+  magnitude('r', 'r_mag', ['r magnitude', 'r mag', 'rmag']),
   {
     key: 'ebv', label: 'Colour excess E(B−V)', symbol: 'E(B−V)', unit: 'mag', kind: 'number', adoption: 'smallest-error',
     bounds: [0, 5], errorBounds: [0.0005, 1], decimals: 3, conventions: ['true', 'sfd'],
@@ -116,6 +124,16 @@ export const QUANTITIES: readonly Quantity[] = [
       { unit: 'deg', names: ['deg', 'degree', '°'], toCanonical: (x) => x * 60 },
     ],
     names: ['half light radius', 'r half', 'rhalf', 'rh', 'r h', 'r eff', 'reff', 're'],
+  },
+  {
+    key: 'diameter', label: 'Isophotal diameter (major axis, B = 25 mag/arcsec²)', symbol: 'D₂₅', unit: 'arcmin', kind: 'number', adoption: 'smallest-error',
+    bounds: [0.01, 800], errorBounds: [0.001, 100], decimals: 2,
+    units: [
+      same('arcmin', 'arcminute', "'", '′', ''),
+      { unit: 'arcsec', names: ['arcsec', 'arcsecond', '"', '″'], toCanonical: (x) => x / 60 },
+      { unit: 'deg', names: ['deg', 'degree', '°'], toCanonical: (x) => x * 60 },
+    ],
+    names: ['d25', 'd 25', 'isophotal diameter', 'angular diameter', 'major diameter', 'diameter'],
   },
   {
     key: 'axis_ratio', label: 'Axis ratio b/a', symbol: 'b/a', unit: '', kind: 'number', adoption: 'smallest-error',

@@ -5,6 +5,7 @@ import * as catalogue from './0003_catalogue.ts'
 import * as outlets from './0004_outlets.ts'
 import * as sessionsEnd from './0005_sessions_end.ts'
 import * as catalogueSorts from './0006_catalogue_sorts.ts'
+import * as bandsDiametersErrors from './0007_bands_diameters_errors.ts'
 import * as possibleHosts from './0008_possible_hosts.ts'
 
 /** One step of the schema. `up` runs in a transaction of its own; `down` undoes it. */
@@ -27,5 +28,6 @@ export const migrations: Readonly<Record<string, Migration>> = {
   '0004_outlets': outlets,
   '0005_sessions_end': sessionsEnd,
   '0006_catalogue_sorts': catalogueSorts,
+  '0007_bands_diameters_errors': bandsDiametersErrors,
   '0008_possible_hosts': possibleHosts,
 }

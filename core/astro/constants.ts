@@ -45,11 +45,14 @@ export const SUN_LOCAL_GROUP = { speedKmPerS: 316, lonDeg: 93, latDeg: -4 } as c
 /** Dipole of the cosmic microwave background: Planck Collaboration I 2020, A&A 641, A1. */
 export const SUN_CMB = { speedKmPerS: 369.82, lonDeg: 264.021, latDeg: 48.253 } as const
 
-/** A/E(B−V) for a true reddening with R_V = 3.1: Cardelli, Clayton & Mathis 1989, ApJ 345, 245. B and K from its curve, from memory. */
-export const EXTINCTION_PER_TRUE_REDDENING = { B: 4.1, V: 3.1, K: 0.354 } as const
+/**
+ * A/E(B−V) for a true reddening with R_V = 3.1: Cardelli, Clayton & Mathis 1989, ApJ 345, 245. B and K from its curve, from memory; I, g and r are
+ * 3.1 times the A/A(V) of Schlegel, Finkbeiner & Davis 1998, ApJ 500, 525, table 6 (0.594, 1.161, 0.843; from memory).
+ */
+export const EXTINCTION_PER_TRUE_REDDENING = { B: 4.1, V: 3.1, I: 1.841, K: 0.354, g: 3.599, r: 2.613 } as const
 
-/** A/E(B−V) for the value of the SFD map, R_V = 3.1: Schlafly & Finkbeiner 2011, ApJ 737, 103, table 6; UKIRT K from memory. */
-export const EXTINCTION_PER_SFD_VALUE = { B: 3.626, V: 2.742, K: 0.302 } as const
+/** A/E(B−V) for the value of the SFD map, R_V = 3.1: Schlafly & Finkbeiner 2011, ApJ 737, 103, table 6 (Landolt, SDSS); UKIRT K from memory. */
+export const EXTINCTION_PER_SFD_VALUE = { B: 3.626, V: 2.742, I: 1.505, K: 0.302, g: 3.303, r: 2.285 } as const
 
 /**
  * Mean colour B−K by Hubble stage T and V−K, for stellar masses where K was not measured: Karachentsev, Makarov & Kaisina 2013, AJ 145, 101

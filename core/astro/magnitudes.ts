@@ -1,19 +1,24 @@
-/** Apparent and absolute magnitudes, foreground extinction, surface brightness. Vega system throughout. */
+/** Apparent and absolute magnitudes, foreground extinction, surface brightness. B, V, I and K in the Vega system, g and r in the AB system. */
 import type { ReddeningConvention } from '../quantities.ts'
 import { ARCSEC_PER_RAD, EXTINCTION_PER_SFD_VALUE, EXTINCTION_PER_TRUE_REDDENING } from './constants.ts'
 import { requireFinite, requirePositive, requireWithin, type Arcmin, type Mag } from './units.ts'
 
-export type Band = 'B' | 'V' | 'K'
+export type Band = 'B' | 'V' | 'I' | 'K' | 'g' | 'r'
+
+/** Extinction per unit of E(B−V), by what kind of E(B−V) it is: the two differ by 13 % in A_V. */
+export function extinctionPerReddening(band: Band, convention: ReddeningConvention): number {
+  return (convention === 'sfd' ? EXTINCTION_PER_SFD_VALUE : EXTINCTION_PER_TRUE_REDDENING)[band]
+}
 
 /**
  * Foreground extinction in a band, mag.
  *
  * @param ebv - E(B−V), mag, not negative
- * @param convention - what kind of E(B−V) it is: the two differ by 13 % in A_V
+ * @param convention - what kind of E(B−V) it is
  */
 export function extinction(band: Band, ebv: Mag, convention: ReddeningConvention): Mag {
   requireWithin(ebv, 0, 100, 'E(B−V) (mag)')
-  return ebv * (convention === 'sfd' ? EXTINCTION_PER_SFD_VALUE : EXTINCTION_PER_TRUE_REDDENING)[band]
+  return ebv * extinctionPerReddening(band, convention)
 }
 
 /** M = m − μ − A. */

@@ -64,6 +64,49 @@ describe('deriveOwn', () => {
     expect(derive([far]).log_mstar).toBeNull()
   })
 
+  it('gives an isophotal diameter by the tangent', () => {
+    // 26.9′ at 3.60 Mpc: 28.16975786 kpc (computed).
+    expect(derive([measured('distance_modulus', 5 * Math.log10(3.6) + 25), measured('diameter', 26.9)]).diameter_kpc).toBeCloseTo(28.16975786, 6)
+  })
+
+  it('corrects the further bands by the coefficients of the map (Schlafly & Finkbeiner 2011, table 6, R_V = 3.1: I 1.505, g 3.303, r 2.285)', () => {
+    const row = derive([measured('distance_modulus', 25), measured('i_mag', 10), measured('g_mag', 10), measured('r_mag', 10), measured('ebv', 0.1, { convention: 'sfd' })])
+    expect([row.abs_i, row.abs_g, row.abs_r]).toEqual([-15.1505, -15.3303, -15.2285].map((m) => expect.closeTo(m, 9)))
+  })
+
+  it('carries the errors through: against moving each input by its error (Bevington & Robinson 2003, chapter 3: the parts in quadrature)', () => {
+    const inputs: Partial<Record<QuantityKey, [value: number, error: number]>> = {
+      distance_modulus: [27.5, 0.004], v_mag: [14, 0.003], b_mag: [14.7, 0.003], k_mag: [11.5, 0.004], i_mag: [13, 0.002], g_mag: [14.3, 0.002], r_mag: [13.8, 0.003], ebv: [0.12, 0.002], r_half: [0.8, 0.004],
+      axis_ratio: [0.6, 0.003], hi_flux: [12, 0.05], diameter: [2.4, 0.01],
+    }
+    const keys = Object.keys(inputs) as QuantityKey[]
+    const at = (shifted: QuantityKey | null): ReturnType<typeof derive> =>
+      derive(
+        keys.map((key) => {
+          const [value, error] = inputs[key] ?? [0, 0]
+          return measured(key, value + (key === shifted ? error : 0), { errPlus: error, errMinus: error, ...(key === 'ebv' ? { convention: 'sfd' as const } : {}) })
+        }),
+      )
+    const here = at(null)
+    // The adopted modulus has a systematic part beside the statistical one: its whole error moves by that much more.
+    const stretch = Math.hypot(Number(here.dm_err), Number(here.dm_err_sys)) / 0.004
+    for (const column of ['abs_v', 'abs_b', 'abs_k', 'abs_i', 'abs_g', 'abs_r', 'r_half_pc', 'r_circ_pc', 'diameter_kpc', 'mu_half', 'log_mhi', 'log_mstar']) {
+      const parts = keys.map((key) => (Number(at(key)[column]) - Number(here[column])) * (key === 'distance_modulus' ? stretch : 1))
+      const expected = Math.hypot(...parts)
+      expect(Number(here[`${column}_err`]) / expected, column).toBeCloseTo(1, 2)
+    }
+  })
+
+  it('knows no error of what has none, and takes a correction without one for exact', () => {
+    const bare = { errPlus: null, errMinus: null }
+    const light = [measured('distance_modulus', 27), measured('v_mag', 14, bare), measured('b_mag', 14), measured('ebv', 0.1, { ...bare, convention: 'true' as const }), measured('r_half', 1), measured('axis_ratio', 0.7, bare)]
+    const row = derive(light)
+    expect(row.abs_v_err).toBeNull()
+    expect(row.abs_b_err).toBeCloseTo(Math.hypot(0.05, Number(row.dm_err), Number(row.dm_err_sys)), 9)
+    expect(row.r_circ_pc_err).toBeCloseTo((Number(row.r_half_pc_err) / Number(row.r_half_pc)) * Number(row.r_circ_pc), 9)
+    expect(row.mu_half_err).toBeNull()
+  })
+
   it('carries both parts of the error into the bounds of the distance', () => {
     const row = derive([measured('distance_modulus', 27)])
     const both = Math.hypot(Number(row.dm_err), Number(row.dm_err_sys))
