@@ -89,7 +89,7 @@ describe('quantilesInPlace', () => {
           const low = sorted[below] ?? NaN
           return position === below ? low : low + (position - below) * ((sorted[below + 1] ?? NaN) - low)
         })
-        expect(quantilesInPlace(Float64Array.from(list), shares)).toEqual(expected.map((q) => expect.closeTo(q, 12)))
+        expect(quantilesInPlace(Float64Array.from(list), shares)).toEqual(expected.map((q): unknown => expect.closeTo(q, 12)))
       }),
     )
   })

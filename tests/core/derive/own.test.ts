@@ -71,7 +71,7 @@ describe('deriveOwn', () => {
 
   it('corrects the further bands by the coefficients of the map (Schlafly & Finkbeiner 2011, table 6, R_V = 3.1: I 1.505, g 3.303, r 2.285)', () => {
     const row = derive([measured('distance_modulus', 25), measured('i_mag', 10), measured('g_mag', 10), measured('r_mag', 10), measured('ebv', 0.1, { convention: 'sfd' })])
-    expect([row.abs_i, row.abs_g, row.abs_r]).toEqual([-15.1505, -15.3303, -15.2285].map((m) => expect.closeTo(m, 9)))
+    expect([row.abs_i, row.abs_g, row.abs_r]).toEqual([-15.1505, -15.3303, -15.2285].map((m): unknown => expect.closeTo(m, 9)))
   })
 
   it('carries the errors through: against moving each input by its error (Bevington & Robinson 2003, chapter 3: the parts in quadrature)', () => {
