@@ -1,6 +1,5 @@
 /** The members of a system, as they are read and as they are answered. */
 import type { Knex } from 'knex'
-import { COLUMNS } from '../../core/columns.ts'
 import type { Policy } from '../../core/scale/policy.ts'
 import type { HostAnswer } from '../../core/schema/catalogue.ts'
 import { restOf } from '../../core/systems/rest.ts'
@@ -18,13 +17,11 @@ interface MemberRow extends SystemGalaxy, Omit<Member, 'offset' | 'sight' | 'abs
 export const SYSTEM_COLUMNS = `slug, CASE WHEN sgx IS NULL THEN NULL ELSE ARRAY[sgx, sgy, sgz] END AS position, dm AS modulus, dm_err AS statistical, dm_err_sys AS systematic,
   abs_v AS "absV", v_gsr AS "vGsr"`
 
-const ABS_V_ERR = COLUMNS.some((column) => column.key === 'abs_v_err') ? 'abs_v_err' : 'NULL::double precision'
-
 /** Nearest first. */
 export async function memberRows(knex: Knex, host: string, revision: ReadRevision): Promise<MemberRow[]> {
   const holds = holdsAt(revision)
   const answer = await knex.raw<{ rows: MemberRow[] }>(
-    `SELECT ${SYSTEM_COLUMNS}, name, class, distance, ${ABS_V_ERR} AS "absVErr", v_hel_err AS "vErr", host_sep AS separation, host_sep_median AS "separationMedian",
+    `SELECT ${SYSTEM_COLUMNS}, name, class, distance, abs_v_err AS "absVErr", v_hel_err AS "vErr", host_sep AS separation, host_sep_median AS "separationMedian",
             host_sep_lo AS "separationLo", host_sep_hi AS "separationHi", host_probability AS probability, host_angle AS angle, host_dv AS dv, host_dv_err AS "dvErr"
      FROM catalogue_rows WHERE host = ? AND status <> 'withdrawn' AND ${holds.sql()} ORDER BY host_sep, name`,
     [host, ...holds.bindings],

@@ -29,7 +29,7 @@ const readers = useReaders(async (knex) => {
     const at = [4 + x / 1000, y / 1000, z / 1000] as const
     await placeGalaxy(knex, 1, {
       name: `Vael ${i + 1}`, host: 'vael', sgx: at[0], sgy: at[1], sgz: at[2], distance: Math.hypot(...at), dm: modulusOf(Math.hypot(...at)), dm_err: i === 0 ? null : 0.02, dm_err_sys: 0.05,
-      abs_v: i < 4 ? -16 + 2 * i : null, v_gsr: i < 5 ? 200 + 40 * (i - 2) : null, host_dv: i < 5 ? 40 * (i - 2) : null, host_dv_err: i < 5 ? 3 : null, host_sep: Math.hypot(x, y, z),
+      abs_v: i < 4 ? -16 + 2 * i : null, abs_v_err: i < 4 ? 0.12 : null, v_gsr: i < 5 ? 200 + 40 * (i - 2) : null, host_dv: i < 5 ? 40 * (i - 2) : null, host_dv_err: i < 5 ? 3 : null, host_sep: Math.hypot(x, y, z),
       host_sep_median: Math.hypot(x, y, z) + 3,
     })
   }
@@ -94,7 +94,7 @@ describe('GET /api/hosts/:slug', () => {
     expect(system.luminosity.steps.map((s) => [s.slug, s.absV, s.count])).toEqual([['vael-1', -16, 1], ['vael-2', -14, 2], ['vael-3', -12, 3], ['vael-4', -10, 4]])
     expect(host.totalMass).toBeCloseTo(21.4e11, -6)
     const [first] = members.filter((m) => m.name === 'Vael 1')
-    expect(first).toMatchObject({ separation: 300, separationMedian: 303, dv: -80, dvErr: 3, sight: { direction: [1, 0, 0] } })
+    expect(first).toMatchObject({ separation: 300, separationMedian: 303, absVErr: 0.12, dv: -80, dvErr: 3, sight: { direction: [1, 0, 0] } })
     // No error of its own: the policy's 0.3 mag stands in, D (10^0.06 − 1).
     expect(first?.sight?.farther).toBeCloseTo(4300 * (10 ** 0.06 - 1), 6)
     expect(await readers().visitor.get('/api/hosts/vael', hostSchema)).toEqual({ revision: 1, host, members, system })
