@@ -6,7 +6,7 @@ import type { CatalogueValue, HostRelation } from '../columns.ts'
 import type { Policy } from '../scale/policy.ts'
 import { disturbersOf, type Disturbers } from './disturber.ts'
 import { disturberSearch } from './disturber-tree.ts'
-import { membershipFinder, type Membership, type MembershipFinder } from './membership.ts'
+import { membershipFinder, reachOf, type Membership, type MembershipFinder } from './membership.ts'
 import type { Neighbour, Neighbourhood, Place } from './neighbourhood.ts'
 import { possibleHostsOf } from './possible-hosts.ts'
 import { possibleHostSearch } from './possible-hosts-tree.ts'
@@ -125,6 +125,19 @@ function overridden(membership: Membership, chosen: Neighbour | undefined, overr
   const share = membership.hosts.reduce((sum, h) => sum + h.probability, 0)
   const own = membership.hosts.find((h) => h.slug === chosen?.slug)?.probability ?? 0
   return { ...membership, isSatellite, probability: isSatellite ? own : 1 - share }
+}
+
+/** The host of a galaxy by the rule, or by decree: the assignment alone, without any draw. null for none, or without a distance. */
+export function assignedHost(n: Neighbourhood, id: number, policy: Policy, overrides: HostOverrides = NO_OVERRIDES): Neighbour | null {
+  const i = n.indexOf.get(id)
+  const galaxy = n.galaxies[i ?? -1]
+  if (i === undefined || !galaxy) return null
+  const override = overrides.get(id)
+  if (override === null) return null
+  const chosen = override === undefined ? undefined : n.galaxies[n.indexOf.get(override) ?? -1]
+  if (chosen) return chosen
+  const main = n.galaxies[disturbersOf(n, i, policy.host.massRatio).main]
+  return main && Math.hypot(galaxy.x - main.x, galaxy.y - main.y, galaxy.z - main.z) <= reachOf(main.mass, policy.host) ? main : null
 }
 
 function velocityDifference(galaxy: Neighbour, main: Neighbour): { host_dv: number | null; host_dv_err: number | null } {

@@ -17,7 +17,8 @@ const typed = (value: number | null, more: Partial<MeasurementInput> = {}): Meas
 })
 
 const around = (list: readonly Measurement[] = [held(1, 27.8), held(2, 27.82)]): MeasurementSurroundings => ({
-  galaxy: 'Ostrel IX', held: list, scale: { anchors: DEFAULT_ANCHORS, policy: DEFAULT_POLICY }, sourceLabel: 'Quill 2025',
+  galaxy: 'Ostrel IX', held: list, scale: { anchors: DEFAULT_ANCHORS, policy: DEFAULT_POLICY }, sourceLabel: 'Quill 2025', position: { ra: 150, dec: 20 },
+  sourceLacks: [], elsewhere: [], outlook: null,
 })
 
 /** "level: sentence" of one check, or undefined when it has nothing to say. */
@@ -116,17 +117,36 @@ describe('agreement', () => {
 })
 
 describe('a new galaxy', () => {
-  const galaxy = { designation: 'Ostrel XI', names: [] }
-  const empty: GalaxySurroundings = { near: [], borne: [] }
+  const galaxy = { designation: 'Ostrel XI', names: [], ra: 175.5301, dec: 23.2617 }
+  const empty: GalaxySurroundings = { near: [], borne: [], measurements: 1 }
 
   it('meets no objection where nothing else is', () => {
     expect(checkNewGalaxy(galaxy, empty).map((c) => c.level)).toEqual(['ok', 'ok'])
   })
 
   it('is held against its neighbour on the sky', () => {
-    const [, near] = checkNewGalaxy(galaxy, { ...empty, near: [{ name: 'Ostrel IX', separationArcsec: 41.6 }] })
+    const [, near] = checkNewGalaxy(galaxy, { ...empty, near: [{ name: 'Ostrel IX', separationArcsec: 41.6, halfLightArcmin: null }] })
     expect(near).toMatchObject({ check: 'near-galaxy', level: 'warn' })
     expect(near?.sentence).toContain('Ostrel IX is only 42″ away')
+  })
+
+  it('within another’s half-light radius may be a part of it, beside it is not', () => {
+    const large = (separationArcsec: number) => checkNewGalaxy(galaxy, { ...empty, near: [{ name: 'Ostrel', separationArcsec, halfLightArcmin: 9 }] })[1]
+    expect(large(500)).toMatchObject({ level: 'warn', sentence: 'It lies within the half-light radius of Ostrel, 8.3′ from its centre: is it a galaxy, or a part of that one?' })
+    expect(large(560)).toMatchObject({ level: 'ok' })
+  })
+
+  it('of which nothing is measured is asked about', () => {
+    expect(checkNewGalaxy(galaxy, { ...empty, measurements: 0 }).find((c) => c.check === 'bare-galaxy')).toMatchObject({ level: 'warn' })
+  })
+
+  it('whose designation is made from a position must have its digits truncated', () => {
+    // RA 175.5301° = 11h 42m 07.224s; Dec 23.2617° = +23° 15′ 42.12″: J114207.2+231542, and J1142+2315; rounded to minutes it would be J1142+2316.
+    const said = (designation: string) => checkNewGalaxy({ ...galaxy, designation }, empty).find((c) => c.check === 'designation-digits')
+    for (const right of ['Demo J114207.2+231542', 'Demo J1142+2315', 'DJ114207+231542', 'Demo J1142.1+2315']) expect(said(right), right).toMatchObject({ level: 'ok' })
+    expect(said('Demo J1142+2316')).toMatchObject({ level: 'warn', sentence: expect.stringContaining('are rounded') as unknown })
+    for (const wrong of ['Demo J1143+2315', 'Demo J1142-2315', 'Demo J114217.2+231542']) expect(said(wrong), wrong).toMatchObject({ level: 'warn', sentence: expect.stringContaining('are not those of its position') as unknown })
+    expect(said('Ostrel XI')).toBeUndefined()
   })
 
   it('cannot take the name of another', () => {

@@ -6,7 +6,7 @@ import { mayHost, pull } from '../../../core/derive/disturber.ts'
 import { neighbourhoodOf, withChanges, type Neighbour } from '../../../core/derive/neighbourhood.ts'
 import { possibleHostsOf, spansAfter, spansOf, tidalReach } from '../../../core/derive/possible-hosts.ts'
 import { possibleHostSearch } from '../../../core/derive/possible-hosts-tree.ts'
-import { relationOf, relationsOf } from '../../../core/derive/relation.ts'
+import { assignedHost, relationOf, relationsOf } from '../../../core/derive/relation.ts'
 import { DEFAULT_POLICY } from '../../../core/scale/policy.ts'
 import { anyCrowd, crowd, moved, neighbour } from './neighbours.ts'
 
@@ -115,6 +115,15 @@ describe('a host by decree', () => {
 
   it('is passed over where it has no distance', () => {
     expect(relationOf(n, 3, few, new Map([[3, 99]]))).toEqual(relationOf(n, 3, few))
+  })
+
+  it('is what the assignment alone says', () => {
+    const some = neighbourhoodOf(crowd(31, 150))
+    const overrides = new Map<number, number | null>([[3, 2], [5, null], [7, 999]])
+    for (const id of some.ids) {
+      const { isSatellite, mainDisturber } = relationOf(some, id, few, overrides)
+      expect(assignedHost(some, id, few, overrides)?.id ?? null).toBe(isSatellite ? mainDisturber : null)
+    }
   })
 
   it('is the same for one and for many', () => {
