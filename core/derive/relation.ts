@@ -10,6 +10,7 @@ import { membershipFinder, reachOf, type Membership, type MembershipFinder } fro
 import type { Neighbour, Neighbourhood, Place } from './neighbourhood.ts'
 import { possibleHostsOf } from './possible-hosts.ts'
 import { possibleHostSearch } from './possible-hosts-tree.ts'
+import { restOf } from './rest.ts'
 
 /** A host that a galaxy may belong to, and how likely, as it is stored. */
 export interface PossibleHost {
@@ -141,9 +142,11 @@ export function assignedHost(n: Neighbourhood, id: number, policy: Policy, overr
 }
 
 function velocityDifference(galaxy: Neighbour, main: Neighbour): { host_dv: number | null; host_dv_err: number | null } {
-  if (galaxy.vGsr === null || main.vGsr === null) return { host_dv: null, host_dv_err: null }
-  const both = galaxy.vError !== null && main.vError !== null
-  return { host_dv: galaxy.vGsr - main.vGsr, host_dv_err: both ? Math.hypot(galaxy.vError ?? 0, main.vError ?? 0) : null }
+  const rest = restOf(main.vGsr, Math.hypot(main.x, main.y, main.z))
+  if (galaxy.vGsr === null || rest === null) return { host_dv: null, host_dv_err: null }
+  // Who is at rest by definition is so without an error.
+  const mainError = main.vGsr === null ? 0 : main.vError
+  return { host_dv: galaxy.vGsr - rest, host_dv_err: galaxy.vError === null || mainError === null ? null : Math.hypot(galaxy.vError, mainError) }
 }
 
 /** Host of satellites, satellite, or in the field; a satellite that has satellites of its own is a satellite. */

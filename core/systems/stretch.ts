@@ -4,7 +4,7 @@ import { angleBetween } from '../astro/sphere.ts'
 import { degrees } from '../astro/units.ts'
 import { length, type Vector } from '../astro/vector.ts'
 import type { Placed } from './flattening-draws.ts'
-import { OUR_OWN_WITHIN_MPC } from './rest.ts'
+import { OUR_OWN_WITHIN_MPC } from '../derive/rest.ts'
 
 export interface Stretch {
   /** Rms error of a satellite's place against its host, nearly all along the line of sight, kpc. The common error of the scale left out. */

@@ -2,7 +2,7 @@
 import type { Knex } from 'knex'
 import type { Policy } from '../../core/scale/policy.ts'
 import type { HostAnswer } from '../../core/schema/catalogue.ts'
-import { restOf } from '../../core/systems/rest.ts'
+import { restOf } from '../../core/derive/rest.ts'
 import { sightOf } from '../../core/systems/sight.ts'
 import { offsetsOf, type SystemGalaxy } from '../../core/systems/system.ts'
 import { holdsAt, type ReadRevision } from './at-revision.ts'

@@ -5,7 +5,7 @@ import { length, type Vector } from '../../../core/astro/vector.ts'
 import { random } from '../../../core/random.ts'
 import { DEFAULT_POLICY } from '../../../core/scale/policy.ts'
 import { escapeSpeed } from '../../../core/systems/escape.ts'
-import { restOf } from '../../../core/systems/rest.ts'
+import { restOf } from '../../../core/derive/rest.ts'
 import { systemOf, type SystemGalaxy } from '../../../core/systems/system.ts'
 import { isotropic } from './satellites.ts'
 
