@@ -98,19 +98,21 @@ function byMethod(used: readonly Candidate[]): MethodMean[] {
 
 /**
  * The statistical part is what would shrink with more measurements by the same methods; the systematic one is the methods' own and that of
- * the anchors that all of them share.
+ * the anchors that they hang on.
  */
 function splitErrors(methods: readonly MethodMean[], across: Combined, scale: Scale): { statistical: number; systematic: number } {
   const share = (i: number): number => across.weights[i] ?? 0
   const statistical = Math.sqrt(methods.reduce((sum, m, i) => sum + (share(i) * m.within.error) ** 2, 0))
   const own = Math.sqrt(Math.max(0, across.error ** 2 - statistical ** 2))
-  return { statistical, systematic: Math.hypot(own, sharedAnchorError(methods, scale)) }
+  return { statistical, systematic: Math.hypot(own, anchorError(methods, share, scale)) }
 }
 
-/** The uncertainty of the anchor that every method used here hangs on; 0 where they hang on different ones, or on none. */
-function sharedAnchorError(methods: readonly MethodMean[], scale: Scale): number {
-  const shared = scale.anchors.find((a) => methods.every((m) => a.methods.includes(m.method)))
-  return shared?.err ?? 0
+/**
+ * The uncertainty of the anchors, each counted with the share of the value that hangs on it: an anchor that carries all of it adds its error in
+ * full, one that carries half of it adds half. Different anchors are independent of one another.
+ */
+function anchorError(methods: readonly MethodMean[], share: (i: number) => number, scale: Scale): number {
+  return Math.hypot(...scale.anchors.map((a) => a.err * methods.reduce((sum, m, i) => sum + (a.methods.includes(m.method) ? share(i) : 0), 0)))
 }
 
 function shares(methods: readonly MethodMean[], across: Combined): Map<Candidate, number> {

@@ -2,10 +2,12 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { adopt } from '../../../core/adoption/adopt.ts'
 import type { Scale } from '../../../core/adoption/adopted.ts'
+import { distanceOf } from '../../../core/astro/distance.ts'
 import type { Measurement } from '../../../core/catalogue/types.ts'
 import { METHOD_KEYS } from '../../../core/methods.ts'
 import { DEFAULT_ANCHORS } from '../../../core/scale/anchors.ts'
 import { DEFAULT_POLICY } from '../../../core/scale/policy.ts'
+import { solve } from './linear.ts'
 
 const SCALE: Scale = { anchors: DEFAULT_ANCHORS, policy: DEFAULT_POLICY }
 let nextId = 1
@@ -101,6 +103,29 @@ describe('the adopted distance', () => {
     expect(one?.errSys).toBeCloseTo(Math.hypot(0.05, 0.038), 9)
   })
 
+  it('counts an anchor’s error with the share of the value that hangs on it', () => {
+    const tip = modulus(27.8)
+    const cepheids = modulus(27.8, { method: 'cepheids', anchor: 'lmc-modulus', anchorValueAssumed: 18.477 })
+    const found = adopt('distance_modulus', [tip, cepheids], SCALE)
+    // Both methods weigh the same, so the methods' part is 0.05 / sqrt(2), and of each anchor half counts.
+    expect(found?.errSys).toBeCloseTo(Math.hypot(0.05 / Math.SQRT2, 0.038 / 2, 0.026 / 2), 9)
+    // Two methods on one anchor carry all of it.
+    const miras = modulus(27.8, { method: 'miras', anchor: 'lmc-modulus', anchorValueAssumed: 18.477 })
+    const shared = adopt('distance_modulus', [cepheids, miras], SCALE)
+    expect(Math.sqrt((shared?.errSys ?? 0) ** 2 - 0.026 ** 2)).toBeCloseTo(Math.sqrt((1 / (1 / (0.05 ** 2 + 0.05 ** 2) + 1 / (0.05 ** 2 + 0.08 ** 2))) - (shared?.errPlus ?? 0) ** 2), 9)
+  })
+
+  it('does not move when a value of a lower tier is added', () => {
+    fc.assert(
+      fc.property(fc.array(fc.double({ min: 26, max: 28, noNaN: true }), { minLength: 1, maxLength: 5 }), fc.double({ min: 25, max: 29, noNaN: true }), (values, low) => {
+        const list = values.map((v) => modulus(v))
+        const without = adopt('distance_modulus', list, SCALE)
+        const lower = adopt('distance_modulus', [...list, modulus(low, { method: 'tully-fisher', anchor: null, anchorValueAssumed: null })], SCALE)
+        expect([lower?.value, lower?.errPlus, lower?.errSys, lower?.chi2, lower?.nUsed]).toEqual([without?.value, without?.errPlus, without?.errSys, without?.chi2, without?.nUsed])
+      }),
+    )
+  })
+
   it('follows an override, which must give its reason', () => {
     const chosen = modulus(28.3, { method: 'brightest-stars', anchor: null, anchorValueAssumed: null })
     const other = modulus(27.8)
@@ -193,12 +218,23 @@ describe('what all distances share', () => {
     )
   })
 
-  it('does not fall below both of two values that share a proportional error (Peelle’s puzzle)', () => {
-    // 1.5 and 1.0 with 10 % of their own and 20 % in common: least squares with the covariance of the values gives 0.88, outside both.
-    const own = (5 / Math.LN10) * 0.1
-    const mu = (d: number) => modulus(5 * Math.log10(d) + 25, { errPlus: own, errMinus: own })
-    const value = adopt('distance_modulus', [mu(1.5), mu(1)], SCALE)?.value ?? NaN
-    expect(value).toBeGreaterThan(25)
-    expect(value).toBeLessThan(5 * Math.log10(1.5) + 25)
+  it.each([
+    // Peelle 1987: 0.88 ± 0.22 (published, from memory; 0.882353 ± 0.218282 computed).
+    { name: 'Peelle’s puzzle', distances: [1.5, 1], own: 0.1, common: 0.2, naive: 0.882353, error: 0.218282 },
+    // D'Agostini 1994, Nuclear Instruments and Methods A 346, 306: 7.87 ± 0.81 (published, from memory; 7.873684 ± 0.813611 computed).
+    { name: 'D’Agostini’s example', distances: [8, 8.5], own: 0.02, common: 0.1, naive: 7.873684, error: 0.813611 },
+  ])('$name: a common proportional error pulls least squares on the distances outside its data, and not ours', ({ distances, own, common, naive, error }) => {
+    const covariance = distances.map((x, i) => distances.map((y, j) => common ** 2 * x * y + (i === j ? (own * x) ** 2 : 0)))
+    const weights = solve(covariance, distances.map(() => 1))
+    const norm = weights.reduce((a, b) => a + b, 0)
+    const fallen = distances.reduce((sum, x, i) => sum + x * (weights[i] ?? 0), 0) / norm
+    expect(fallen).toBeCloseTo(naive, 6)
+    expect(1 / Math.sqrt(norm)).toBeCloseTo(error, 6)
+    expect(fallen).toBeLessThan(Math.min(...distances))
+
+    const bar = (5 / Math.LN10) * own
+    const found = distanceOf(adopt('distance_modulus', distances.map((d) => modulus(5 * Math.log10(d) + 25, { errPlus: bar, errMinus: bar })), SCALE)?.value ?? NaN)
+    expect(found).toBeGreaterThan(Math.min(...distances))
+    expect(found).toBeLessThan(Math.max(...distances))
   })
 })

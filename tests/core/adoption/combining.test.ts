@@ -1,9 +1,12 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { derSimonianLaird } from '../../../core/adoption/dersimonian-laird.ts'
+import { huberMean } from '../../../core/adoption/huber.ts'
 import { median, medianWithError, robustSigma } from '../../../core/adoption/median.ts'
 import { combine, pauleMandel } from '../../../core/adoption/paule-mandel.ts'
+import { sharedZeroPointMean } from '../../../core/adoption/shared-zero-point.ts'
 import { weightedMean } from '../../../core/adoption/weighted-mean.ts'
+import { solve } from './linear.ts'
 
 /** Kacker 2004, Metrologia 41, 132, table 1, row 1, as quoted in the test suite of statsmodels (test_meta.py). */
 const KACKER = {
@@ -119,5 +122,49 @@ describe('the estimators offered for comparison', () => {
     const chem = [2.9, 3.1, 3.4, 3.4, 3.7, 3.7, 2.8, 2.5, 2.4, 2.4, 2.7, 2.2, 5.28, 3.37, 3.03, 3.03, 28.95, 3.77, 3.4, 2.2, 3.5, 3.6, 3.7, 3.7]
     expect(median(chem)).toBeCloseTo(3.385, 3)
     expect(robustSigma(chem)).toBeCloseTo(0.526323, 5)
+    // The same section, huber(chem) with k = 1.5: 3.206724; the plain mean is 4.280417.
+    expect(huberMean(chem).mean).toBeCloseTo(3.206724, 6)
+  })
+
+  it('Huber’s mean agrees with R’s MASS::huber on a list with one wild value (27.7191195)', () => {
+    const list = [27.7, 27.72, 27.68, 27.75, 27.69, 28.4]
+    expect(huberMean(list).mean).toBeCloseTo(27.7191195, 6)
+    expect(huberMean(list).error).toBeGreaterThan(0.005)
+    expect(huberMean(list).error).toBeLessThan(0.05)
+    expect(huberMean([5])).toEqual({ mean: 5, error: 0 })
+  })
+})
+
+describe('zero points shared by method', () => {
+  // Five values by two methods, statistical errors and a systematic one each: worked with numpy's full covariance matrix.
+  const values = [27.8, 27.7, 27.86, 27.74, 27.66]
+  const errors = [0.03, 0.05, 0.06, 0.04, 0.05]
+  const groups = ['a', 'a', 'a', 'b', 'b']
+  const systematic = new Map([['a', 0.05], ['b', 0.07]])
+
+  it('gives the generalised least-squares mean: 27.7601908528 ± 0.0448516791, χ² 6.940651843', () => {
+    const found = sharedZeroPointMean(values, errors, groups, systematic)
+    expect(found.mean).toBeCloseTo(27.7601908528, 9)
+    expect(found.error).toBeCloseTo(0.0448516791, 9)
+    expect(found.chi2).toBeCloseTo(6.940651843, 8)
+    expect(found.weights.map((w) => Number(w.toFixed(8)))).toEqual([0.40846155, 0.14704616, 0.10211539, 0.20876641, 0.1336105])
+    // Taken for independent, the error would be 2.4 times too small: 27.7584797 ± 0.0188515.
+    const naive = combine(values, errors, 0)
+    expect([naive.mean, naive.error]).toEqual([expect.closeTo(27.7584797, 6), expect.closeTo(0.0188515, 6)])
+  })
+
+  it('is the full matrix solution (1ᵀC⁻¹x)/(1ᵀC⁻¹1), whatever the values', () => {
+    const measured = fc.array(fc.tuple(fc.double({ min: 26, max: 29, noNaN: true }), fc.double({ min: 0.02, max: 0.5, noNaN: true }), fc.constantFrom('a', 'b', 'c')), { minLength: 1, maxLength: 7 })
+    fc.assert(
+      fc.property(measured, (list) => {
+        const shared = new Map([['a', 0.05], ['b', 0.1], ['c', 0]])
+        const covariance = list.map(([, e, g], i) => list.map(([, , h], j) => (i === j ? e ** 2 : 0) + (g === h ? (shared.get(g) ?? 0) ** 2 : 0)))
+        const solved = solve(covariance, list.map(() => 1))
+        const norm = solved.reduce((a, b) => a + b, 0)
+        const found = sharedZeroPointMean(list.map(([v]) => v), list.map(([, e]) => e), list.map(([, , g]) => g), shared)
+        expect(found.mean).toBeCloseTo(list.reduce((sum, [v], i) => sum + v * (solved[i] ?? 0), 0) / norm, 6)
+        expect(found.error).toBeCloseTo(1 / Math.sqrt(norm), 6)
+      }),
+    )
   })
 })
