@@ -29,7 +29,7 @@ export async function layTheDesk(services: Services, hands: Hands): Promise<void
 /** The paper that the curator is working on. */
 async function newestSource(knex: Knex, createdBy: number): Promise<number> {
   const [id] = await addSources(knex as Knex.Transaction, [
-    { title: 'Red giant branch tips of faint invented satellites', authors: ['Harrow, I.', 'Lindqvist, M.'], year: 2026, venue: 'Invented', about: 'trgb', zeroPoint: 0 },
+    { title: 'Red giant branch tips of faint invented satellites', authors: ['Harrow, I.', 'Lindqvist, M.'], year: 2026, venue: 'Invented', about: 'trgb' },
   ], createdBy)
   return id ?? 0
 }

@@ -1,6 +1,8 @@
 /** The demonstration: an invented neighbourhood in several revisions, two releases, and a desk with work on it. */
 import type { Knex } from 'knex'
 import { random } from '../../core/random.ts'
+import { DEFAULT_ANCHORS } from '../../core/scale/anchors.ts'
+import { DEFAULT_POLICY } from '../../core/scale/policy.ts'
 import { rebuildCatalogue } from '../../server/services/revision/rebuild.ts'
 import type { Services } from '../../server/http/route.ts'
 import { personCalled } from '../people.ts'
@@ -9,6 +11,7 @@ import { hangTheGallery } from './gallery.ts'
 import { literature } from './literature.ts'
 import { addGalaxies, addSources, type Invented } from './load.ts'
 import { measure } from './measure.ts'
+import { drawSystematics } from './systematics.ts'
 import { neighbourhood } from './truth.ts'
 
 /** Another seed makes another neighbourhood. */
@@ -26,7 +29,8 @@ export async function fillWithDemonstration(trx: Knex.Transaction, people: Reado
   const person = (role: string): number => people.get(`${role}@demo.vicinage.test`) ?? 0
   const draw = random(SEED)
   const sources = literature(draw)
-  const invented = shuffledTail(neighbourhood(draw).map((galaxy): Invented => ({ galaxy, measurements: measure(draw, galaxy, sources) })))
+  const systematics = drawSystematics(draw, DEFAULT_POLICY, DEFAULT_ANCHORS)
+  const invented = shuffledTail(neighbourhood(draw).map((galaxy): Invented => ({ galaxy, measurements: measure(draw, galaxy, sources, systematics) })))
   const sourceIds = await addSources(trx, sources, person('curator'))
   let from = 0
   for (const chapter of CHAPTERS) {

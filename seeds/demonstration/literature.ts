@@ -10,8 +10,6 @@ export interface InventedSource {
   venue: string
   /** What it measures. */
   about: MethodKey | 'survey'
-  /** The same offset in all its moduli, mag: a zero point that nobody noticed. */
-  zeroPoint: number
 }
 
 const TITLES: readonly (readonly [InventedSource['about'], string])[] = [
@@ -34,6 +32,9 @@ const TITLES: readonly (readonly [InventedSource['about'], string])[] = [
   ['survey', 'The Demo Survey II: velocities and neutral hydrogen'],
   ['survey', 'The Demo Survey III: structure of nearby dwarfs'],
   ['survey', 'An invented atlas of foreground reddening'],
+  ['survey', 'The Demo Survey IV: g and r magnitudes of dwarfs'],
+  ['survey', 'Isophotal diameters on invented plates'],
+  ['geometric', 'The centre of our invented galaxy from the orbits of its stars'],
 ]
 
 export function literature(draw: Random): InventedSource[] {
@@ -41,6 +42,6 @@ export function literature(draw: Random): InventedSource[] {
     const size = 1 + draw.integer(4)
     const first = draw.integer(AUTHORS.length)
     const authors = Array.from({ length: size }, (_, k) => AUTHORS[(first + k * 3) % AUTHORS.length] ?? '')
-    return { title, authors, year: 2006 + ((i * 7 + draw.integer(3)) % 20), venue: 'Invented', about, zeroPoint: 0.02 * draw.normal() }
+    return { title, authors, year: 2006 + ((i * 7 + draw.integer(3)) % 20), venue: 'Invented', about }
   })
 }

@@ -4,7 +4,7 @@ import { designationOf } from '../../core/astro/designation.ts'
 import { nameKey, slugOf } from '../../core/names.ts'
 import { quantity } from '../../core/quantities.ts'
 import type { InventedSource } from './literature.ts'
-import type { DrawnMeasurement } from './measure.ts'
+import type { DrawnMeasurement } from './drawn.ts'
 import type { TrueGalaxy } from './truth.ts'
 
 export interface Invented {
@@ -38,11 +38,9 @@ export async function addGalaxies(
     class: g.class, note: null, revFrom: revision,
   }))
   const names = invented.flatMap(({ galaxy: g }, i) => {
-    const survey = designationOf('Demo', g.ra, g.dec)
-    return [
-      { galaxy: ids[i], name: g.designation, nameKey: nameKey(g.designation), preferred: true, revFrom: revision },
-      { galaxy: ids[i], name: survey, nameKey: nameKey(survey), preferred: false, revFrom: revision },
-    ]
+    // One that is called by the survey's name has no other.
+    const names = [...new Set([g.designation, designationOf('Demo', g.ra, g.dec)])]
+    return names.map((name, k) => ({ galaxy: ids[i], name, nameKey: nameKey(name), preferred: k === 0, revFrom: revision }))
   })
   const measurements = invented.flatMap(({ measurements: list }, i) =>
     list.map(({ source, ...m }) => ({ ...m, galaxy: ids[i], source: sourceIds[source], enteredBy, revFrom: revision, published: publishedOf(m) })),

@@ -2,26 +2,13 @@
  * What the invented literature says of the invented galaxies: drawn about the truth with honest errors.
  */
 import type { MethodKey } from '../../core/methods.ts'
-import type { QuantityKey, ReddeningConvention } from '../../core/quantities.ts'
 import type { Random } from '../../core/random.ts'
+import { DEFAULT_ANCHORS } from '../../core/scale/anchors.ts'
+import { blank, number, rounded, sourceAbout, sourceTitled, type DrawnMeasurement } from './drawn.ts'
 import type { InventedSource } from './literature.ts'
+import { photometry } from './photometry.ts'
+import type { Systematics } from './systematics.ts'
 import type { TrueGalaxy } from './truth.ts'
-
-export interface DrawnMeasurement {
-  quantity: QuantityKey
-  value: number | null
-  errPlus: number | null
-  errMinus: number | null
-  errSys: number | null
-  textValue: string | null
-  method: MethodKey | null
-  anchor: string | null
-  anchorValueAssumed: number | null
-  convention: ReddeningConvention | null
-  /** Index into the invented literature. */
-  source: number
-  locator: string
-}
 
 /** Which methods reach how far (Mpc), how well (mag), for whom. */
 const REACH: readonly { method: MethodKey; within: number; error: number; chance: number; fits: (g: TrueGalaxy) => boolean }[] = [
@@ -38,48 +25,59 @@ const REACH: readonly { method: MethodKey; within: number; error: number; chance
   { method: 'brightest-stars', within: 9, error: 0.5, chance: 0.3, fits: (g) => g.hiFlux !== null },
 ]
 
-/** Anchor and the values of it that invented authors assumed, old and new. */
-const ANCHORS: Partial<Record<MethodKey, { key: string; adopted: number; sign: 1 | -1; assumed: readonly number[] }>> = {
-  'cepheids': { key: 'lmc-modulus', adopted: 18.477, sign: 1, assumed: [18.5, 18.477, 18.41] },
-  'rr-lyrae': { key: 'lmc-modulus', adopted: 18.477, sign: 1, assumed: [18.5, 18.477] },
-  'trgb': { key: 'trgb-absolute-i', adopted: -4.049, sign: -1, assumed: [-4.05, -4.049, -4.01] },
+/** Values of the anchors that invented authors assumed, old and new. */
+const ASSUMED: Partial<Record<MethodKey, readonly number[]>> = {
+  'cepheids': [18.5, 18.477, 18.41],
+  'rr-lyrae': [18.5, 18.477],
+  'trgb': [-4.05, -4.049, -4.01],
+}
+/** Of the authors whose method hangs on an anchor, so many say which value of it they took. */
+const SAY_SO = 0.8
+
+/** Half-light radii are not measured of what is larger than a field. */
+const WIDEST_FIELD_ARCMIN = 240
+
+/** Everything that is measured of one galaxy: one to six distances, and what surveys give. */
+export function measure(draw: Random, g: TrueGalaxy, sources: readonly InventedSource[], systematics: Systematics): DrawnMeasurement[] {
+  if (g.fromWithin) return measureFromWithin(draw, g, sources)
+  const off = systematics.ofGalaxy()
+  const one = (how: { method: MethodKey; error: number }): DrawnMeasurement => modulus(draw, g, how, sources, systematics, off)
+  const distances = REACH.filter((r) => g.distance < r.within && r.fits(g) && draw.uniform() < r.chance).slice(0, 6).map(one)
+  if (distances.length === 0) distances.push(one({ method: 'trgb', error: 0.12 }))
+  return [...distances, ...photometry(draw, g, sources), ...structure(draw, g, sources), ...dynamics(draw, g, sources)]
 }
 
-/** Everything that is measured of one galaxy: at least one distance. */
-export function measure(draw: Random, g: TrueGalaxy, sources: readonly InventedSource[]): DrawnMeasurement[] {
-  const distances = REACH.filter((r) => g.distance < r.within && r.fits(g) && draw.uniform() < r.chance).map((r) => modulus(draw, g, r, sources))
-  if (distances.length === 0) distances.push(modulus(draw, g, { method: 'trgb', error: 0.12 }, sources))
-  return [...distances.slice(0, 6), ...photometry(draw, g, sources), ...structure(draw, g, sources), ...dynamics(draw, g, sources)]
+/** Of their own galaxy the observers know how far its centre is, and its mass. */
+function measureFromWithin(draw: Random, g: TrueGalaxy, sources: readonly InventedSource[]): DrawnMeasurement[] {
+  const centre = sourceTitled(sources, 'centre of our')
+  return [
+    { ...number(draw, 'distance_modulus', 5 * Math.log10(g.distance) + 25, 0.01, 3, centre), method: 'geometric' },
+    { ...number(draw, 'log_mstar', 10.75, 0.1, 2, centre) },
+    { ...blank(centre), quantity: 'morphology', textValue: g.morphology, locator: 'section 1' },
+  ]
 }
 
-function modulus(draw: Random, g: TrueGalaxy, how: { method: MethodKey; error: number }, sources: readonly InventedSource[]): DrawnMeasurement {
+function modulus(draw: Random, g: TrueGalaxy, how: { method: MethodKey; error: number }, sources: readonly InventedSource[], systematics: Systematics, off: (method: MethodKey) => number): DrawnMeasurement {
   const source = sourceAbout(draw, sources, how.method)
-  const error = round(how.error * (0.7 + 0.7 * draw.uniform()), 2)
-  const anchor = ANCHORS[how.method]
-  const assumed = anchor && draw.uniform() < 0.8 ? draw.pick(anchor.assumed) : null
-  const published = 5 * Math.log10(g.distance) + 25 + error * draw.normal() + (sources[source]?.zeroPoint ?? 0)
-  // Authors who hang on another anchor value publish a modulus that is off by just that.
-  const shift = anchor && assumed !== null ? anchor.sign * (assumed - anchor.adopted) : 0
+  const error = rounded(how.error * (0.7 + 0.7 * draw.uniform()), 2)
+  const anchor = DEFAULT_ANCHORS.find((a) => a.methods.includes(how.method))
+  const assumable = ASSUMED[how.method]
+  const assumed = assumable ? draw.pick(assumable) : null
+  const saysSo = draw.uniform() < SAY_SO
+  const wrong = off(how.method) + (anchor ? (systematics.ofAnchors.get(anchor.key) ?? 0) : 0)
+  // One in seven states a larger error downwards; it is drawn with their mean, as which they are read.
+  const down = rounded(error * (draw.uniform() < 0.15 ? 1.3 : 1), 2)
+  const published = 5 * Math.log10(g.distance) + 25 + ((error + down) / 2) * draw.normal() + wrong
+  // Authors who hang on another anchor value publish a modulus that is off by just that. Of those who do not say so nobody knows by how much: by as
+  // much as the policy takes them to be.
+  const shift = !anchor ? 0 : saysSo && assumed !== null ? (anchor.kind === 'modulus' ? 1 : -1) * (assumed - anchor.value) : systematics.unscaled(how.method) * draw.normal()
   const missing = how.method === 'brightest-stars' && draw.uniform() < 0.3
   return {
-    ...blank(source), quantity: 'distance_modulus', value: round(published + shift, 2), method: how.method,
-    errPlus: missing ? null : error, errMinus: missing ? null : round(error * (draw.uniform() < 0.15 ? 1.3 : 1), 2),
-    errSys: draw.uniform() < 0.3 ? 0.05 : null, anchor: assumed === null ? null : (anchor?.key ?? null), anchorValueAssumed: assumed,
+    ...blank(source), quantity: 'distance_modulus', value: rounded(published + shift, 2), method: how.method,
+    errPlus: missing ? null : error, errMinus: missing ? null : down,
+    errSys: draw.uniform() < 0.3 ? 0.05 : null, anchor: saysSo && assumed !== null ? (anchor?.key ?? null) : null, anchorValueAssumed: saysSo ? assumed : null,
     locator: `table ${1 + draw.integer(4)}`,
   }
-}
-
-function photometry(draw: Random, g: TrueGalaxy, sources: readonly InventedSource[]): DrawnMeasurement[] {
-  const survey = sourceTitled(sources, 'photometry')
-  const apparent = (abs: number, extinction: number): number => abs + 5 * Math.log10(g.distance) + 25 + extinction * g.ebv
-  const band = (quantity: QuantityKey, truth: number, error: number): DrawnMeasurement => number(draw, quantity, truth, error, 2, survey)
-  const out = [
-    band('v_mag', apparent(g.absV, 3.1), 0.05),
-    band('b_mag', apparent(g.absV + g.colourBV, 4.1), 0.06),
-    { ...number(draw, 'ebv', g.ebv, 0.008, 3, sourceTitled(sources, 'reddening')), convention: 'true' as const },
-  ]
-  if (g.absV < -15) out.push(band('k_mag', apparent(g.absV - g.colourVK, 0.35), 0.07))
-  return out
 }
 
 function structure(draw: Random, g: TrueGalaxy, sources: readonly InventedSource[]): DrawnMeasurement[] {
@@ -87,7 +85,7 @@ function structure(draw: Random, g: TrueGalaxy, sources: readonly InventedSource
   const arcmin = (g.radius / (g.distance * 1e6)) * (180 / Math.PI) * 60
   const text = (): DrawnMeasurement => ({ ...blank(survey), quantity: 'morphology', value: null, textValue: g.morphology, locator: 'table 1' })
   const out = [text(), { ...number(draw, 'morph_t', g.stage, 0, 0, survey), errPlus: null, errMinus: null }]
-  if (draw.uniform() < 0.9) out.push(number(draw, 'r_half', arcmin, 0.06 * arcmin, 2, survey), number(draw, 'axis_ratio', g.axisRatio, 0.04, 2, survey))
+  if (draw.uniform() < 0.9 && arcmin < WIDEST_FIELD_ARCMIN) out.push(number(draw, 'r_half', arcmin, 0.06 * arcmin, 2, survey), number(draw, 'axis_ratio', g.axisRatio, 0.04, 2, survey))
   if (g.axisRatio < 0.85) out.push(number(draw, 'position_angle', g.positionAngle, 4, 0, survey))
   return out.map(within)
 }
@@ -106,33 +104,7 @@ function within(m: DrawnMeasurement): DrawnMeasurement {
   if (m.value === null) return m
   if (m.quantity === 'axis_ratio') return { ...m, value: Math.min(1, Math.max(0.05, m.value)) }
   if (m.quantity === 'position_angle') return { ...m, value: ((m.value % 180) + 180) % 180 }
-  if (m.quantity === 'hi_flux' || m.quantity === 'r_half') return { ...m, value: Math.max(0.01, m.value) }
+  if (m.quantity === 'hi_flux' || m.quantity === 'r_half' || m.quantity === 'diameter') return { ...m, value: Math.max(0.01, m.value) }
   if (m.quantity === 'w50') return { ...m, value: Math.max(12, m.value) }
   return m
-}
-
-function number(draw: Random, quantity: QuantityKey, truth: number, error: number, decimals: number, source: number): DrawnMeasurement {
-  const bar = error > 0 ? Math.max(10 ** -decimals, round(error, decimals)) : null
-  const value = round(truth + error * draw.normal(), decimals)
-  return { ...blank(source), quantity, value: quantity === 'ebv' ? Math.max(0, value) : value, errPlus: bar, errMinus: bar, locator: `table ${1 + draw.integer(5)}` }
-}
-
-function blank(source: number): DrawnMeasurement {
-  return {
-    quantity: 'distance_modulus', value: null, errPlus: null, errMinus: null, errSys: null, textValue: null, method: null, anchor: null,
-    anchorValueAssumed: null, convention: null, source, locator: '',
-  }
-}
-
-function sourceAbout(draw: Random, sources: readonly InventedSource[], about: InventedSource['about']): number {
-  const fitting = sources.flatMap((s, i) => (s.about === about ? [i] : []))
-  return fitting.length === 0 ? 0 : draw.pick(fitting)
-}
-
-function sourceTitled(sources: readonly InventedSource[], word: string): number {
-  return Math.max(0, sources.findIndex((s) => s.title.includes(word)))
-}
-
-function round(x: number, decimals: number): number {
-  return Number(x.toFixed(decimals))
 }

@@ -4,6 +4,9 @@ export const HOST_NAMES = [
   'Ostrel', 'Mirrow', 'Vesk', 'Tamsin', 'Quarrow', 'Hollin', 'Ansel', 'Corvane', 'Eldermere', 'Brightwater', 'Pallas Reach', 'Sennet',
 ] as const
 
+/** What the invented observers call the galaxy that they live in. */
+export const OWN_NAME = 'Hearth'
+
 export const FIELD_NAMES = [
   'Ambry', 'Bellwether', 'Carrick Wisp', 'Dunmore', 'Ember Lantern', 'Fallow', 'Gannet', 'Harrowgate', 'Islay Mote', 'Jessamy', 'Kestrel Light',
   'Larkspur', 'Marrable', 'Nettlebed', 'Orrery', 'Pell', 'Quillon', 'Rushlight', 'Saltmarsh', 'Thistledown', 'Umberleigh', 'Vellum', 'Wether',
