@@ -12,7 +12,8 @@ import { refuse } from '../../server/services/review/decide.ts'
 import { addChange, createSubmission } from '../../server/services/submissions/drafts.ts'
 import { remark, submit, withdraw } from '../../server/services/submissions/transitions.ts'
 import { addSources } from './load.ts'
-import { proposals, type Proposal, type Proposed } from './proposals.ts'
+import type { Proposal, Proposed } from './proposal.ts'
+import { proposals } from './proposals.ts'
 
 export interface Hands {
   curator: Reader

@@ -1,64 +1,27 @@
-/** What the invented curator proposes: some of it sound, some with the slips that the automatic checks are there to find. */
+/** What the invented curator proposes: the sound part of it. The rest is in faulty-proposals.ts. */
 import type { Knex } from 'knex'
-import type { ChangeForm } from '../../core/schema/changes.ts'
-import type { MeasurementForm } from '../../core/schema/measurement.ts'
-import type { SubmissionState } from '../../core/schema/submissions.ts'
-
-/** A change, or one made from the numbers of those before it. */
-export type Proposed = ChangeForm | ((earlier: readonly number[]) => ChangeForm)
-
-export interface Proposal {
-  title: string
-  summary: string
-  becomes: SubmissionState
-  changes: readonly Proposed[]
-  /** The author's. */
-  remark?: string
-  /** The reviewer's, before deciding. */
-  question?: string
-  /** Of the decision. */
-  note?: string
-}
-
-interface KnownGalaxy {
-  slug: string
-  name: string
-  ra: number
-  dec: number
-  /** Adopted distance modulus, mag; distance, Mpc. */
-  dm: number
-  distance: number
-  velocity: number | null
-  nDistance: number
-}
-
-interface KnownMeasurement {
-  id: number
-  galaxy: string
-  value: number
-  source: number
-  errPlus: number | null
-}
+import { doublyMeasured, fourOf, knownSatellites, measurementsBy, velocitiesHeld } from './known.ts'
+import { faultyProposals } from './faulty-proposals.ts'
+import { add, modulus, velocityForm, type Proposal } from './proposal.ts'
 
 /** In the order in which they are made: what is approved first is the ground for the rest. */
 export async function proposals(knex: Knex, source: number): Promise<Proposal[]> {
-  const known = (await knex('catalogueRows')
-    .select('slug', 'name', 'ra', 'dec', 'dm', 'distance', 'nDistance', 'vHel as velocity')
-    .whereNull('revTo').whereNotNull('host').whereNotNull('dm')
-    .orderBy('slug')) as KnownGalaxy[]
+  const known = await knownSatellites(knex)
   const near = known.filter((g) => g.distance < 4)
-  const far = known.filter((g) => g.distance > 6.5)
-  const moving = known.filter((g) => g.velocity !== null)
-  const photographic = await measurementBy(knex, 'brightest-stars')
-  const velocity = await velocityToMend(knex)
+  const photographic = await measurementsBy(knex, 'brightest-stars')
+  const [velocity] = await velocitiesHeld(knex, 1)
+  const twice = await doublyMeasured(knex)
   const [a, b, c, d] = fourOf(near)
-  const [slipped, bare] = fourOf(far)
-  // Only where other good values stand can a bad one stand out.
-  const [outlying] = fourOf(near.filter((g) => g.nDistance >= 2).slice(8))
-  const [first, second] = fourOf(moving)
-  const [twin] = fourOf(near.slice(4))
+  const [first, second] = fourOf(known.filter((g) => g.velocity !== null))
   const [, aliased, doubtful] = fourOf(near.slice(4))
+  if (!velocity) throw new RangeError('the invented neighbourhood has no velocity')
   return [
+    {
+      title: `Which tip of ${twice.name} to believe`, becomes: 'approved',
+      summary: 'The fainter of the two tips is that of the disc behind it, as the colour-magnitude diagram shows. Both values stay; one is adopted.',
+      changes: [{ action: 'override.set', payload: { galaxy: { slug: twice.galaxy }, about: 'distance_modulus', choice: { measurements: [twice.id] }, reason: 'The other tip is contaminated by the disc behind.' } }],
+      note: 'Agreed, having looked at the diagram.',
+    },
     {
       title: 'Two old photographic distances go', becomes: 'approved',
       summary: 'Brightest-star distances from photographic plates, with errors of half a magnitude or none at all. Both galaxies have better ones.',
@@ -68,7 +31,7 @@ export async function proposals(knex: Knex, source: number): Promise<Proposal[]>
     {
       title: `Velocity of ${first.name}`, becomes: 'returned',
       summary: 'A newer velocity from absorption lines.',
-      changes: [add(first, velocityOf(first, source, 1.5))],
+      changes: [add(first, velocityForm((first.velocity ?? 0) + 1.5, source))],
       note: 'The paper’s table 2 gives velocities relative to the Local Group, not heliocentric ones. Please look at the caption and convert.',
       remark: 'Typed from table 2.',
     },
@@ -92,25 +55,6 @@ export async function proposals(knex: Knex, source: number): Promise<Proposal[]>
       question: 'Thank you. I shall look at the colours of the second one before deciding.',
     },
     {
-      title: 'Three more satellites, from table 5', becomes: 'submitted',
-      summary: 'Three more rows of the same paper, typed in a hurry.',
-      changes: [
-        // The paper's megaparsecs, entered as kiloparsecs.
-        add(slipped, { ...modulus(slipped, source, 0), value: Number(slipped.distance.toFixed(2)), unit: 'kpc', errPlus: 0.4, errMinus: 0.4, errSys: null, locator: 'table 5, row 1' }),
-        add(outlying, { ...modulus(outlying, source, 0.78), errPlus: 0.08, errMinus: 0.08, locator: 'table 5, row 2' }),
-        add(bare, { ...modulus(bare, source, 0.04), anchor: null, anchorValueAssumed: null, locator: 'table 5, row 3' }),
-      ],
-    },
-    {
-      title: 'Two new candidates', becomes: 'submitted',
-      summary: 'Overdensities of red giants in the survey’s second release. Membership is open until somebody measures velocities.',
-      changes: [
-        { action: 'galaxy.add', payload: { designation: 'Candidate 26A', ra: turned(twin.ra + 1.3), dec: twin.dec, class: 'ultra-faint', status: 'candidate', names: ['Demo Overdensity 7'] } },
-        { action: 'galaxy.add', payload: { designation: 'Candidate 26B', ra: turned(twin.ra + 0.008), dec: twin.dec, class: 'ultra-faint', status: 'candidate' } },
-        (earlier) => add({ change: earlier[0] ?? 0 }, { ...modulus(twin, source, 0.1), errPlus: 0.15, errMinus: 0.15 }),
-      ],
-    },
-    {
       title: `${aliased.name}: another name, and a class`, becomes: 'draft',
       summary: 'The survey’s second release lists it under its own number.',
       changes: [
@@ -121,7 +65,7 @@ export async function proposals(knex: Knex, source: number): Promise<Proposal[]>
     {
       title: 'A slip in a velocity', becomes: 'draft',
       summary: '',
-      changes: velocity === undefined ? [] : [{
+      changes: [{
         action: 'measurement.replace',
         payload: {
           measurementId: velocity.id, reason: 'The last digit was misread.',
@@ -129,46 +73,18 @@ export async function proposals(knex: Knex, source: number): Promise<Proposal[]>
         },
       }],
     },
+    {
+      title: 'A newer zero point of the tip', becomes: 'submitted',
+      summary: 'Three geometric calibrations of the last two years agree on a tip 0.02 mag fainter than ours. All TRGB distances would shrink by 0.9 %.',
+      changes: [{
+        action: 'anchor.set',
+        payload: {
+          key: 'trgb-absolute-i', label: 'TRGB absolute I magnitude', kind: 'absolute-magnitude', methods: ['trgb'], value: -4.029, err: 0.03, source: 'Mean of three invented calibrations, 2025 and 2026',
+          reason: 'Three independent calibrations agree; the old error was generous.',
+        },
+      }],
+      remark: 'Please look at the plot of the effect before deciding: a few satellites change host.',
+    },
+    ...(await faultyProposals(knex, source)),
   ]
-}
-
-function add(galaxy: { slug: string } | { change: number }, measurement: MeasurementForm): ChangeForm {
-  return { action: 'measurement.add', payload: { galaxy: 'slug' in galaxy ? { slug: galaxy.slug } : galaxy, measurement } }
-}
-
-/** @param off - from what is adopted, mag */
-function modulus(g: KnownGalaxy, sourceId: number, off: number): MeasurementForm {
-  return { quantity: 'distance_modulus', value: Number((g.dm + off).toFixed(2)), errPlus: 0.07, errMinus: 0.07, errSys: 0.05, unit: 'mag', method: 'trgb', anchor: 'trgb-absolute-i', anchorValueAssumed: -4.049, sourceId }
-}
-
-/** @param off - from what is adopted, km/s */
-function velocityOf(g: KnownGalaxy, sourceId: number, off: number): MeasurementForm {
-  return { quantity: 'velocity', value: Number(((g.velocity ?? 0) + off).toFixed(1)), errPlus: 2.5, errMinus: 2.5, unit: 'km/s', sourceId, locator: 'table 2' }
-}
-
-const turned = (ra: number): number => Number((ra % 360).toFixed(4))
-
-function fourOf(list: readonly KnownGalaxy[]): [KnownGalaxy, KnownGalaxy, KnownGalaxy, KnownGalaxy] {
-  const [a, b, c, d] = list
-  if (!a || !b || !c || !d) throw new RangeError(`the invented neighbourhood is too small for the desk: ${list.length} of a kind`)
-  return [a, b, c, d]
-}
-
-const MEASURED = ['m.id', 'r.slug as galaxy', 'm.value', 'm.source', 'm.errPlus']
-
-/** Two measurements by a method, of galaxies that have others. */
-async function measurementBy(knex: Knex, method: string): Promise<KnownMeasurement[]> {
-  return (await knex('measurements as m')
-    .join('catalogueRows as r', (on) => void on.on('r.galaxy', 'm.galaxy').onNull('r.revTo'))
-    .select(MEASURED)
-    .whereNull('m.revTo').where('m.method', method).where('r.nDistanceAll', '>=', 2)
-    .orderBy([{ column: 'm.errPlus', order: 'desc', nulls: 'first' }, { column: 'm.id' }]).limit(2)) as KnownMeasurement[]
-}
-
-async function velocityToMend(knex: Knex): Promise<KnownMeasurement | undefined> {
-  return (await knex('measurements as m')
-    .join('catalogueRows as r', (on) => void on.on('r.galaxy', 'm.galaxy').onNull('r.revTo'))
-    .select(MEASURED)
-    .whereNull('m.revTo').where('m.quantity', 'velocity').whereNotNull('r.host').whereNotNull('m.errPlus')
-    .orderBy('m.id').first()) as KnownMeasurement | undefined
 }
