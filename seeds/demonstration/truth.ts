@@ -116,7 +116,7 @@ function satellitesOf(draw: Random, h: Host): TrueGalaxy[] {
     const radius = Math.max(h.galaxy.fromWithin ? OUTSIDE_OUR_DISC_MPC : 0, h.virialRadius * nfwRadius(draw))
     const towards = thickness !== undefined && draw.uniform() < SHARE_IN_PLANE ? directionInPlane(draw, normal, thickness) : direction(draw)
     const at = plus(h.at, scaled(towards, radius))
-    const absV = schechterMagnitude(draw, { bright: h.galaxy.absV + 2.2, faint: -6.2, slope: -1.25, knee: -18.5 })
+    const absV = schechterMagnitude(draw, { bright: h.galaxy.absV + (h.galaxy.fromWithin ? 4 : 2.2), faint: -6.2, slope: -1.25, knee: -18.5 })
     const gasRich = draw.uniform() < 0.1 + 0.5 * Math.min(1, radius / (1.2 * h.virialRadius))
     return dress(draw, {
       designation: `${h.galaxy.designation} ${roman(i + 1)}`, at, absV, host: h.galaxy.designation, velocity: h.velocity + 95 * draw.normal(),
