@@ -113,6 +113,8 @@ export const galaxySchema = z.object({
   mainDisturber: z.object({ slug: z.string(), name: z.string() }).nullable(),
   /** The reason of an override, where one decided about the host. */
   hostOverride: text,
+  /** Whose satellite it may be, most likely first: the fraction of draws from the distance errors. They sum to at most 1; the rest is that of the field. */
+  possibleHosts: z.array(z.object({ slug: z.string(), name: z.string(), probability: z.number() })),
   /** Satellites, when it has any. */
   satellites: z.int(),
   revision: z.int(),

@@ -94,7 +94,7 @@ function dynamics(draw: Random, g: TrueGalaxy, sources: readonly InventedSource[
   const survey = sourceTitled(sources, 'velocities')
   const out: DrawnMeasurement[] = []
   if (g.absV < -9 || draw.uniform() < 0.4) out.push(number(draw, 'velocity', g.velocity, g.hiFlux === null ? 5 : 2, 1, survey))
-  if (g.hiFlux !== null && g.hiFlux > 0.05) out.push(number(draw, 'hi_flux', g.hiFlux, 0.08 * g.hiFlux, 2, survey), number(draw, 'w50', g.lineWidth ?? 40, 3, 0, survey))
+  if (g.hiFlux !== null && g.hiFlux > 0.05 && g.hiFlux < 5e5) out.push(number(draw, 'hi_flux', g.hiFlux, 0.08 * g.hiFlux, 2, survey), number(draw, 'w50', g.lineWidth ?? 40, 3, 0, survey))
   if (g.hiFlux === null && draw.uniform() < 0.6) out.push(number(draw, 'metallicity', g.metallicity, 0.12, 2, survey))
   return out.map(within)
 }

@@ -45,13 +45,15 @@ export async function galaxyText(knex: Knex, slug: string, revision: ReadRevisio
            'reasons', a.reasons, 'override', a.override_reason) ORDER BY a.quantity), '[]')
          FROM adopted_values a WHERE a.galaxy = c.galaxy AND ${holds.sql('a')}),
        'host', ${place('host')}, 'mainDisturber', ${place('main_disturber')},
+       'possibleHosts', (SELECT coalesce(json_agg(json_build_object('slug', h.slug, 'name', h.name, 'probability', p.p) ORDER BY p.p DESC, h.slug), '[]')
+         FROM json_to_recordset(c.possible_hosts) AS p (host text, p float8) JOIN catalogue_rows h ON h.slug = p.host AND ${holds.sql('h')}),
        'hostOverride', (SELECT o.reason FROM overrides o WHERE o.galaxy = c.galaxy AND o.about = 'host' AND ${holds.sql('o')}),
        'satellites', (SELECT count(*)::int FROM catalogue_rows m WHERE m.host = c.slug AND m.status <> 'withdrawn' AND ${holds.sql('m')}),
        'revision', ?::integer)::text AS text
      FROM catalogue_rows c JOIN galaxy_versions v ON v.galaxy = c.galaxy AND ${holds.sql('v')}
      WHERE c.galaxy = ? AND ${holds.sql('c')}`,
     [
-      ...holds.bindings, ...holds.bindings, ...holds.bindings, ...holds.bindings, ...holds.bindings, ...holds.bindings, revision.number, ...holds.bindings, galaxy, ...holds.bindings,
+      ...holds.bindings, ...holds.bindings, ...holds.bindings, ...holds.bindings, ...holds.bindings, ...holds.bindings, ...holds.bindings, revision.number, ...holds.bindings, galaxy, ...holds.bindings,
     ],
   )
   const [row] = answer.rows

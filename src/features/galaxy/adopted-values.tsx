@@ -11,18 +11,21 @@ import { formatNumber, formatPercent, formatSigned } from '../../lib/format.ts'
 import { publishedWords } from '../../lib/published.ts'
 import { paths } from '../../paths.ts'
 import { adoptedOf, quantityLook } from './adopted-words.ts'
+import { Comparison } from './comparison.tsx'
 import { Fold } from './fold.tsx'
 import { OverrideLinks } from './override-links.tsx'
 
 export interface AdoptedValuesProps {
   galaxy: GalaxyAnswer
   measurements: readonly MeasurementAnswer[]
+  /** The release or revision that is read; null for the newest. */
+  at: string | null
   /** With the ways to override. */
   canWrite: boolean
 }
 
 /** What the catalogue adopts of every quantity; each opens to what each measurement weighed and why. */
-export function AdoptedValues({ galaxy, measurements, canWrite }: AdoptedValuesProps) {
+export function AdoptedValues({ galaxy, measurements, at, canWrite }: AdoptedValuesProps) {
   const adopted = QUANTITY_KEYS.map((key) => adoptedOf(galaxy, key)).filter((one) => one !== undefined)
   return (
     <Sheet title="Adopted values">
@@ -35,6 +38,7 @@ export function AdoptedValues({ galaxy, measurements, canWrite }: AdoptedValuesP
               {() => (
                 <>
                   <Reasons adopted={one} measurements={measurements} />
+                  {one.quantity === 'distance_modulus' && <div className="mt-4"><Comparison adopted={one} measurements={measurements} at={at} /></div>}
                   {canWrite && <p className="mt-3"><OverrideLinks galaxy={galaxy} about={one.quantity} isOverridden={one.override !== null} /></p>}
                 </>
               )}

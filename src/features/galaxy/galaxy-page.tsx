@@ -24,6 +24,7 @@ import { changeAddress } from './change-links.ts'
 import { DistancePlot } from './distance-plot.tsx'
 import { MeasurementTable } from './measurement-table.tsx'
 import { MissingGalaxy } from './missing-galaxy.tsx'
+import { PossibleHosts } from './possible-hosts.tsx'
 import { AdoptedDistance, Standing } from './standing.tsx'
 
 /** One galaxy: what is adopted of it and why, every measurement, where it stands. */
@@ -92,7 +93,7 @@ function Galaxy({ galaxy, at }: { galaxy: GalaxyAnswer; at: string | null }) {
           ) : held ? (
             <>
               <DistancePlot galaxy={galaxy} measurements={held} />
-              <AdoptedValues galaxy={galaxy} measurements={held} canWrite={canWrite} />
+              <AdoptedValues galaxy={galaxy} measurements={held} at={at} canWrite={canWrite} />
             </>
           ) : (
             <Skeleton height={640} label="Loading the measurements" />
@@ -101,6 +102,7 @@ function Galaxy({ galaxy, at }: { galaxy: GalaxyAnswer; at: string | null }) {
         <div className="grid min-w-0 content-start gap-5">
           <AdoptedDistance galaxy={galaxy} />
           <Standing galaxy={galaxy} at={at} canWrite={canWrite} />
+          <PossibleHosts galaxy={galaxy} at={at} />
         </div>
         <div className="min-w-0 lg:col-span-2">
           <SectionHeading>Measurements</SectionHeading>

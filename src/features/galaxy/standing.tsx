@@ -42,17 +42,18 @@ export function Standing({ galaxy, at, canWrite }: { galaxy: GalaxyAnswer; at: s
   const rows: (DefinitionRow | null)[] = [
     separation(galaxy, at),
     line(galaxy, <>SGX, SGY, SGZ</>, value('sgx') === null ? null : <span className="whitespace-nowrap">{`${['sgx', 'sgy', 'sgz'].map((key) => formatNumber(value(key), 2)).join(', ')}${GAP}Mpc`}</span>),
-    measured(galaxy, <>M<sub>V</sub></>, 'abs_v', 1, 'mag'),
-    measured(galaxy, <>M<sub>B</sub></>, 'abs_b', 1, 'mag'),
-    measured(galaxy, <>M<sub>K</sub></>, 'abs_k', 1, 'mag'),
-    measured(galaxy, 'Half-light radius', 'r_half_pc', 0, 'pc'),
-    measured(galaxy, 'Surface brightness', 'mu_half', 1, 'mag/arcsec2', 'mean in V inside the half-light radius'),
+    measured(galaxy, <>M<sub>V</sub></>, 'abs_v', 1, 'mag', undefined, value('abs_v_err')),
+    measured(galaxy, <>M<sub>B</sub></>, 'abs_b', 1, 'mag', undefined, value('abs_b_err')),
+    measured(galaxy, <>M<sub>K</sub></>, 'abs_k', 1, 'mag', undefined, value('abs_k_err')),
+    measured(galaxy, 'Half-light radius', 'r_half_pc', 0, 'pc', 'semi-major', value('r_half_pc_err')),
+    measured(galaxy, 'Isophotal diameter', 'diameter_kpc', 1, 'kpc', 'major axis, B = 25 mag/arcsec²', value('diameter_kpc_err')),
+    measured(galaxy, 'Surface brightness', 'mu_half', 1, 'mag/arcsec2', 'mean in V inside the half-light radius', value('mu_half_err')),
     measured(galaxy, <>v<sub>☉</sub></>, 'v_hel', 0, 'km/s', undefined, value('v_hel_err')),
     measured(galaxy, <>v<sub>GSR</sub></>, 'v_gsr', 0, 'km/s', undefined, value('v_hel_err')),
     measured(galaxy, <>v<sub>LG</sub></>, 'v_lg', 0, 'km/s', undefined, value('v_hel_err')),
-    measured(galaxy, 'Velocity against the host', 'host_dv', 0, 'km/s'),
-    measured(galaxy, 'Stellar mass, log', 'log_mstar', 2, 'M☉'),
-    measured(galaxy, 'H I mass, log', 'log_mhi', 2, 'M☉'),
+    measured(galaxy, 'Velocity against the host', 'host_dv', 0, 'km/s', undefined, value('host_dv_err')),
+    measured(galaxy, 'Stellar mass, log', 'log_mstar', 2, 'M☉', undefined, value('log_mstar_err')),
+    measured(galaxy, 'H I mass, log', 'log_mhi', 2, 'M☉', undefined, value('log_mhi_err')),
     measured(galaxy, 'Tidal index', 'tidal_index', 2, undefined, 'above 0 within a neighbour’s reach'),
     galaxy.mainDisturber && { label: 'Main disturber', value: <Link to={withQuery(paths.galaxy(galaxy.mainDisturber.slug), { at })}>{galaxy.mainDisturber.name}</Link> },
     { label: 'Galactic l, b', value: `${formatNumber(value('glon'), 2)}°, ${formatNumber(value('glat'), 2)}°` },
@@ -79,12 +80,17 @@ function measured(galaxy: GalaxyAnswer, label: ReactNode, column: string, decima
 /** From the host where there is one, from the main disturber otherwise. */
 function separation(galaxy: GalaxyAnswer, at: string | null): DefinitionRow | null {
   const from = galaxy.host ?? galaxy.mainDisturber
-  const [r, lo, hi, angle] = ['host_sep', 'host_sep_lo', 'host_sep_hi', 'host_angle'].map((key) => rowNumber(galaxy, key))
+  const [r, median, lo, hi, angle] = ['host_sep', 'host_sep_median', 'host_sep_lo', 'host_sep_hi', 'host_angle'].map((key) => rowNumber(galaxy, key))
   if (!from || r == null) return null
-  const range = lo == null || hi == null ? '' : ` (${formatNumber(lo, 0)}–${formatNumber(hi, 0)})`
+  const onSky = angle == null ? '' : `; ${formatNumber(angle, 2)}° on the sky`
   return {
     label: <>from <Link to={withQuery(galaxy.host ? paths.host(from.slug) : paths.galaxy(from.slug), { at })}>{from.name}</Link>, 3-D</>,
-    help: angle == null ? undefined : `${formatNumber(angle, 2)}° on the sky`,
-    value: <span className="whitespace-nowrap"><Measure value={r} unit="kpc" decimals={0} /><span className="text-muted">{range}</span></span>,
+    // Behind a host every error makes the separation larger: what the adopted distances give may lie outside the range.
+    help: median == null ? onSky.slice(2) : `median of the draws, 16 to 84 %; ${formatNumber(r, 0)}${GAP}kpc from the adopted distances${onSky}`,
+    value: (
+      <span className="whitespace-nowrap">
+        <Measure value={median ?? r} plus={away(hi ?? null, median ?? r)} minus={away(median ?? r, lo ?? null)} unit="kpc" decimals={0} stacked />
+      </span>
+    ),
   }
 }
