@@ -1,10 +1,12 @@
 import { useState } from 'react'
 import { changePayloadSchemas } from '../../../core/schema/changes.ts'
 import type { ScaleAnswer } from '../../../core/schema/scale.ts'
+import type { ChangeAnswer } from '../../../core/schema/submissions.ts'
+import { ANCHOR_FIELDS, anchorFieldLabel } from '../../../core/scale/anchor-fields.ts'
 import { useScale } from '../../api/scale.ts'
 import { Button } from '../../components/button.tsx'
 import { AnchorFields } from '../../components/curation/scale/anchor-fields.tsx'
-import { NEW_ANCHOR, readAnchor, typedAnchor } from '../../components/curation/scale/anchor-typed.ts'
+import { NEW_ANCHOR, readAnchor, typedAnchor, type AnchorPayload } from '../../components/curation/scale/anchor-typed.ts'
 import { FailedState, ProblemNote } from '../../components/failed-state.tsx'
 import { Select } from '../../components/select.tsx'
 import { Skeleton } from '../../components/skeleton.tsx'
@@ -42,7 +44,7 @@ export function AnchorForm(props: ChangeFormProps<'anchor.set'>) {
 
 function Fields({ held, anchors, change, onSave, isSaving, error }: ChangeFormProps<'anchor.set'> & { held: ScaleAnswer['anchors'][number] | undefined; anchors: ScaleAnswer['anchors'] }) {
   const before = change ? schema.parse(change.payload) : null
-  const [typed, setTyped] = useState(before ? typedAnchor(before) : held ? typedAnchor(held) : NEW_ANCHOR)
+  const [typed, setTyped] = useState(() => (change && before && held ? typedAnchor(onTopOf(held, before, change)) : before ? typedAnchor(before) : held ? typedAnchor(held) : NEW_ANCHOR))
   const [reason, setReason] = useState(before?.reason ?? '')
   const [tried, setTried] = useState(false)
   const parsed = readAnchor(typed, reason, anchors.map((a) => a.key))
@@ -67,4 +69,11 @@ function Fields({ held, anchors, change, onSave, isSaving, error }: ChangeFormPr
       </div>
     </form>
   )
+}
+
+/** What others moved since the change was made stays as they left it: only what this change moves is proposed again. */
+function onTopOf(held: ScaleAnswer['anchors'][number], before: AnchorPayload, change: ChangeAnswer): AnchorPayload {
+  const moved = new Set(change.diff.map((d) => d.field))
+  const kept = ANCHOR_FIELDS.filter((field) => !moved.has(anchorFieldLabel(field)))
+  return { ...before, ...Object.fromEntries(kept.map((field) => [field, held[field]])) }
 }

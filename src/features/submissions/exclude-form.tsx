@@ -47,7 +47,7 @@ export function ExcludeForm({ action, change, onSave, isSaving, error }: ChangeF
         void save()
       }}
     >
-      {!change && <MeasurementPicker galaxy={galaxy} onGalaxy={setGalaxy} value={id} onChange={(m) => setId(m.id)} error={tried && id === null ? 'Choose the measurement.' : errorAt([], error, 'measurementId')} />}
+      {!change && <MeasurementPicker excluded={action === 'measurement.restore'} galaxy={galaxy} onGalaxy={setGalaxy} value={id} onChange={(m) => setId(m.id)} error={tried && id === null ? 'Choose the measurement.' : errorAt([], error, 'measurementId')} />}
       <TextField label="Reason" value={reason} onChange={setReason} error={errorAt(issues, error, 'reason')} help={HELP[action]} />
       {error ? <ProblemNote error={error} safe="What you typed is kept." /> : null}
       <div>

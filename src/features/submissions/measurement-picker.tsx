@@ -13,6 +13,8 @@ interface Props {
   value: number | null
   onChange: (measurement: MeasurementAnswer) => void
   error?: string
+  /** Offers those alone that are excluded, or that are not. */
+  excluded?: boolean
 }
 
 /** "Distance modulus 26.37 ± 0.05 mag, Gieren et al. 2005" */
@@ -22,21 +24,21 @@ function words(m: MeasurementAnswer): string {
 }
 
 /** Chooses one measurement that the catalogue holds: first the galaxy, then the value. */
-export function MeasurementPicker({ galaxy, onGalaxy, value, onChange, error }: Props) {
+export function MeasurementPicker({ galaxy, onGalaxy, value, onChange, error, excluded }: Props) {
   return (
     <div className="grid grid-cols-[minmax(0,1fr)] gap-4">
       <GalaxyPicker value={galaxy} onChange={onGalaxy} autoFocus={!galaxy} />
-      {galaxy && <Choices slug={galaxy.slug} value={value} onChange={onChange} error={error} />}
+      {galaxy && <Choices slug={galaxy.slug} value={value} onChange={onChange} error={error} excluded={excluded} />}
     </div>
   )
 }
 
-function Choices({ slug, value, onChange, error }: { slug: string } & Pick<Props, 'value' | 'onChange' | 'error'>) {
+function Choices({ slug, value, onChange, error, excluded }: { slug: string } & Pick<Props, 'value' | 'onChange' | 'error' | 'excluded'>) {
   const query = useMeasurements(slug)
   if (query.isError) return <FailedState error={query.error} onRetry={() => void query.refetch()} />
   if (!query.data) return <Skeleton lines={4} />
-  const { measurements } = query.data
-  if (measurements.length === 0) return <p className="text-muted">The catalogue holds no measurement of this galaxy.</p>
+  const measurements = query.data.measurements.filter((m) => excluded === undefined || excluded === (m.excludedReason !== null))
+  if (measurements.length === 0) return <p className="text-muted">{excluded ? 'No measurement of this galaxy is excluded.' : 'The catalogue holds no measurement of this galaxy that could be chosen.'}</p>
   return (
     <div>
       <RadioGroup

@@ -1,7 +1,8 @@
 import { useState } from 'react'
 import { changePayloadSchemas } from '../../../core/schema/changes.ts'
-import { policyDifferences } from '../../../core/scale/policy-leaves.ts'
+import { policyDifferences, policyLeaves } from '../../../core/scale/policy-leaves.ts'
 import type { Policy } from '../../../core/scale/policy.ts'
+import type { ChangeAnswer } from '../../../core/schema/submissions.ts'
 import { useScale } from '../../api/scale.ts'
 import { Button } from '../../components/button.tsx'
 import { HostRuleFields, MethodRuleFields } from '../../components/curation/scale/policy-fields.tsx'
@@ -25,7 +26,7 @@ export function PolicyForm(props: ChangeFormProps<'policy.set'>) {
 function Fields({ policy, change, onSave, isSaving, error }: ChangeFormProps<'policy.set'> & { policy: Policy }) {
   const before = change ? schema.parse(change.payload) : null
   const held = policyTexts(policy)
-  const [typed, setTyped] = useState<TypedPolicy>(() => (before ? Object.fromEntries(Object.entries(policyTexts(before.document)).filter(([path, text]) => held[path] !== text)) : {}))
+  const [typed, setTyped] = useState<TypedPolicy>(() => (change && before ? movedBy(change, before.document, held) : {}))
   const [reason, setReason] = useState(before?.reason ?? '')
   const [tried, setTried] = useState(false)
   const read = readPolicy(policy, typed)
@@ -56,4 +57,11 @@ function Fields({ policy, change, onSave, isSaving, error }: ChangeFormProps<'po
       </div>
     </form>
   )
+}
+
+/** What others moved since the change was made stays as they left it: only the leaves that this change moves are proposed again. */
+function movedBy(change: ChangeAnswer, document: Policy, held: TypedPolicy): TypedPolicy {
+  const labels = new Set(change.diff.map((d) => d.field))
+  const moved = new Set(policyLeaves(document).filter((l) => labels.has(l.label)).map((l) => l.path))
+  return Object.fromEntries(Object.entries(policyTexts(document)).filter(([path, text]) => moved.has(path) && held[path] !== text))
 }
