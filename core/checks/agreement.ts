@@ -4,6 +4,7 @@ import { statedError } from '../adoption/eligible.ts'
 import { quantity } from '../quantities.ts'
 import { canonicalOf, othersOf, scaledOf } from './canonical.ts'
 import type { MeasurementCheck, MeasurementSurroundings, ProposedMeasurement } from './check.ts'
+import { printed } from './printed.ts'
 
 /** How far it lies from what the rest says, in standard deviations of both. */
 export const agreement: MeasurementCheck = (proposed, surroundings) => {
@@ -15,7 +16,7 @@ export const agreement: MeasurementCheck = (proposed, surroundings) => {
   const error = Math.hypot(statedError(own) ?? 0, known.errPlus ?? 0, ...systematics(proposed, known, surroundings))
   if (error <= 0) return null
   const z = Math.abs(scaled - known.value) / error
-  const words = `${z.toFixed(1)} σ from the ${known.value.toFixed(q.decimals)}${q.unit ? ` ${q.unit}` : ''} of the other ${known.nUsed === 1 ? 'value' : `${known.nUsed} values`}`
+  const words = `${z.toFixed(1)} σ from the ${printed(known.value, q.decimals)}${q.unit ? ` ${q.unit}` : ''} of the other ${known.nUsed === 1 ? 'value' : `${known.nUsed} values`}`
   if (z <= surroundings.scale.policy.tension) return { check: 'agreement', level: 'ok', sentence: `${words}.` }
   return { check: 'agreement', level: 'warn', sentence: `${words}: look at the source again, and say in the note why it should be believed.` }
 }

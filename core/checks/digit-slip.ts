@@ -3,6 +3,7 @@ import { statedError } from '../adoption/eligible.ts'
 import { quantity, type Quantity } from '../quantities.ts'
 import { canonicalOf, othersOf, scaledOf } from './canonical.ts'
 import type { MeasurementCheck } from './check.ts'
+import { printed } from './printed.ts'
 
 /** A reading has to fit this much better before it is suggested. */
 const BETTER = 20
@@ -27,7 +28,7 @@ export const digitSlip: MeasurementCheck = (proposed, surroundings) => {
   const unit = q.unit ? ` ${q.unit}` : ''
   return {
     check: 'digit-slip', level: 'warn',
-    sentence: `${value.toFixed(q.decimals)}${unit} is far from the ${known.value.toFixed(q.decimals)}${unit} adopted; ${better.words} it would fit. Check it against the source.`,
+    sentence: `${printed(value, q.decimals)}${unit} is far from the ${printed(known.value, q.decimals)}${unit} adopted; ${better.words} it would fit. Check it against the source.`,
   }
 }
 
@@ -35,10 +36,10 @@ function readingsOf(q: Quantity, value: number): { value: number; words: string 
   const signed = { value: -value, words: 'with the other sign' }
   // Magnitudes and moduli are logarithms: a wrong digit adds, a wrong point makes no magnitude at all.
   if (q.unit === 'mag' || q.unit === 'dex') {
-    const off = [1, -1, 10, -10].map((by) => ({ value: value + by, words: `with another digit (${(value + by).toFixed(q.decimals)})` }))
+    const off = [1, -1, 10, -10].map((by) => ({ value: value + by, words: `with another digit (${printed(value + by, q.decimals)})` }))
     return q.bounds[0] < 0 ? [...off, signed] : off
   }
-  const points = [10, 0.1, 100, 0.01].map((by) => ({ value: value * by, words: `with the decimal point elsewhere (${Number((value * by).toPrecision(6))})` }))
-  const off = q.unit === 'km/s' ? [100, -100, 1000, -1000].map((by) => ({ value: value + by, words: `with another digit (${(value + by).toFixed(q.decimals)})` })) : []
+  const points = [10, 0.1, 100, 0.01].map((by) => ({ value: value * by, words: `with the decimal point elsewhere (${String(Number((value * by).toPrecision(6))).replace('-', '\u2212')})` }))
+  const off = q.unit === 'km/s' ? [100, -100, 1000, -1000].map((by) => ({ value: value + by, words: `with another digit (${printed(value + by, q.decimals)})` })) : []
   return q.bounds[0] < 0 ? [signed, ...points, ...off] : [...points, ...off]
 }

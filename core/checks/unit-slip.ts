@@ -2,6 +2,7 @@ import { adopt } from '../adoption/adopt.ts'
 import { acceptedUnit, quantity } from '../quantities.ts'
 import { canonicalOf, othersOf } from './canonical.ts'
 import type { MeasurementCheck } from './check.ts'
+import { printed } from './printed.ts'
 
 /** A reading in another unit has to fit this much better before it is suggested. */
 const BETTER = 20
@@ -20,7 +21,7 @@ export const unitSlip: MeasurementCheck = (proposed, surroundings) => {
     if (Number.isFinite(otherwise) && miss > BETTER * Math.abs(otherwise - known) && miss > 1) {
       return {
         check: 'unit-slip', level: 'warn',
-        sentence: `${m.value} ${m.unit || 'without unit'} is far from the ${known.toFixed(q.decimals)} ${q.unit} adopted; as ${m.value} ${unit.unit} it would fit. Check the unit.`,
+        sentence: `${m.value} ${m.unit || 'without unit'} is far from the ${printed(known, q.decimals)} ${q.unit} adopted; as ${m.value} ${unit.unit} it would fit. Check the unit.`,
       }
     }
   }

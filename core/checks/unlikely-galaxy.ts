@@ -6,6 +6,7 @@ import type { Measurement } from '../catalogue/types.ts'
 import type { QuantityKey } from '../quantities.ts'
 import { heldWith } from './canonical.ts'
 import type { MeasurementCheck } from './check.ts'
+import { printed } from './printed.ts'
 
 /** No galaxy is known outside these: common practice, no source. */
 const ABSOLUTE_MAG = [-25, 1] as const
@@ -27,7 +28,7 @@ export const unlikelyGalaxy: MeasurementCheck = (proposed, surroundings) => {
   const warn = (words: string): ReturnType<MeasurementCheck> => ({ check: 'unlikely-galaxy', level: 'warn', sentence: `${words}, at ${distance.toFixed(3)} Mpc. No galaxy is known like that: check the value, its unit and the distance.` })
   for (const band of MAGNITUDES) {
     const m = asked(band)
-    if (m !== null && outside(m - modulus, ABSOLUTE_MAG)) return warn(`This makes an absolute ${band.charAt(0).toUpperCase()} magnitude of ${signed(m - modulus)}`)
+    if (m !== null && outside(m - modulus, ABSOLUTE_MAG)) return warn(`This makes an absolute ${band.charAt(0).toUpperCase()} magnitude of ${printed(m - modulus, 1)}`)
   }
   const radius = asked('r_half')
   if (radius !== null && radius > 0 && outside(semiMajorPc(distance, radius), HALF_LIGHT_PC)) return warn(`This makes a half-light radius of ${Number(semiMajorPc(distance, radius).toPrecision(3))} pc`)
@@ -37,4 +38,3 @@ export const unlikelyGalaxy: MeasurementCheck = (proposed, surroundings) => {
 }
 
 const outside = (value: number, [lo, hi]: readonly [number, number]): boolean => value < lo || value > hi
-const signed = (value: number): string => value.toFixed(1).replace('-', '\u2212')

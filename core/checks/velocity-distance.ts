@@ -5,6 +5,7 @@ import { velocityLocalGroup } from '../astro/velocities.ts'
 import type { Measurement } from '../catalogue/types.ts'
 import { heldWith } from './canonical.ts'
 import type { MeasurementCheck } from './check.ts'
+import { printed } from './printed.ts'
 
 /**
  * How far velocities scatter about the Hubble flow nearby, hosts' satellites included, km/s: common practice, no source. The check asks at three
@@ -27,7 +28,7 @@ export const velocityDistance: MeasurementCheck = (proposed, surroundings) => {
   const flow = scale.policy.host.hubble * distance
   // A distance is rarely better than a tenth, and the flow is as wrong as it is.
   const z = Math.abs(own - flow) / Math.hypot(SCATTER_KM_PER_S, 0.1 * flow)
-  const words = `${own.toFixed(0)} km/s in the Local Group’s frame, where ${distance.toFixed(2)} Mpc lets expect about ${flow.toFixed(0)} km/s`
+  const words = `${printed(own, 0)} km/s in the Local Group’s frame, where ${distance.toFixed(2)} Mpc lets expect about ${printed(flow, 0)} km/s`
   if (z <= 3) return { check: 'velocity-distance', level: 'ok', sentence: `Velocity and distance go together: ${words}.` }
   return { check: 'velocity-distance', level: 'warn', sentence: `${words}: one of the two may be another galaxy’s.` }
 }

@@ -1,5 +1,6 @@
 /** From where a galaxy is and how bright, to all that there is to see of it: sizes, colours and gas follow luminosity and class with scatter (common practice, no source). */
 import { convert } from '../../core/astro/frames.ts'
+import { velocityLocalGroup } from '../../core/astro/velocities.ts'
 import { length, type Vector } from '../../core/astro/vector.ts'
 import type { GalaxyClass } from '../../core/classes.ts'
 import type { Random } from '../../core/random.ts'
@@ -12,6 +13,7 @@ export interface Placed {
   at: Vector
   absV: number
   host: string | null
+  /** In the frame of the Local Group, km/s. */
   velocity: number
   class: GalaxyClass
 }
@@ -42,7 +44,8 @@ export function dress(draw: Random, placed: Placed): TrueGalaxy {
     radius: 10 ** (2.45 - 0.105 * (absV + 10) + type.puff + 0.14 * draw.normal()),
     axisRatio: Math.min(1, Math.max(0.15, type.flat + 0.16 * draw.normal())),
     positionAngle: 180 * draw.uniform(),
-    velocity: placed.velocity,
+    // What the observers measure from the moving Sun.
+    velocity: placed.velocity - velocityLocalGroup(0, galactic.lon, galactic.lat),
     hiFlux: gas === null ? null : gas / (2.356e5 * distance ** 2),
     lineWidth: gas === null ? null : 10 ** (1.35 - 0.075 * (absV + 12)) * (1 + 0.1 * draw.normal()),
     metallicity: -1.6 - 0.12 * (absV + 11) + 0.15 * draw.normal(),

@@ -69,7 +69,7 @@ export async function proposals(knex: Knex, source: number): Promise<Proposal[]>
         action: 'measurement.replace',
         payload: {
           measurementId: velocity.id, reason: 'The last digit was misread.',
-          measurement: { quantity: 'velocity', value: Number((velocity.value + 4).toFixed(1)), errPlus: velocity.errPlus, errMinus: velocity.errPlus, unit: 'km/s', sourceId: velocity.source, locator: 'table 2' },
+          measurement: { quantity: 'velocity', value: Number((velocity.value + 3.3).toFixed(1)), errPlus: velocity.errPlus, errMinus: velocity.errPlus, unit: 'km/s', sourceId: velocity.source, locator: 'table 2' },
         },
       }],
     },

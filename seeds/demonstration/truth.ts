@@ -73,6 +73,7 @@ export function neighbourhood(draw: Random): TrueGalaxy[] {
 interface Host {
   galaxy: TrueGalaxy
   at: Vector
+  /** In the frame of the Local Group, km/s. */
   velocity: number
   /** Mpc */
   virialRadius: number
@@ -96,11 +97,12 @@ function host(draw: Random, name: string, index: number): Host {
   const at: Vector = [inPlane * Math.cos(angle), inPlane * Math.sin(angle), height]
   const early = draw.uniform() < 0.2
   const absV = -20.6 - 1.1 * draw.uniform()
+  const velocity = flow(at) + 70 * draw.normal()
   const galaxy = dress(draw, {
-    designation: name, at, absV, host: null, velocity: flow(at) + 70 * draw.normal(),
+    designation: name, at, absV, host: null, velocity,
     class: early ? (draw.uniform() < 0.5 ? 'elliptical' : 'lenticular') : 'spiral',
   })
-  return { galaxy, at, velocity: galaxy.velocity, virialRadius: virialRadius(absV) }
+  return { galaxy, at, velocity, virialRadius: virialRadius(absV) }
 }
 
 /** R200 goes with the cube root of the light, Mpc. */

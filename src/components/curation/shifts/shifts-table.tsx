@@ -35,14 +35,14 @@ function columnsFor(effect: Effect): DataColumn<ShiftRow>[] {
     return change[when] === null ? 'none' : (names.get(String(change[when])) ?? String(change[when]))
   }
   return [
-    { key: 'name', header: 'Galaxy', text: (s) => s.name, sortable: true, width: 170, render: (s) => <Link look="quiet" to={paths.galaxy(s.slug)}>{s.name}</Link> },
+    { key: 'name', header: 'Galaxy', text: (s) => s.name, sortable: true, width: 210, render: (s) => <Link look="quiet" to={paths.galaxy(s.slug)}>{s.name}</Link> },
     { key: 'method', header: 'Method', text: (s) => methodLabel(s.method), sortable: true, width: 170 },
-    { key: 'before', header: 'μ before', unit: 'mag', text: (s) => s.before, decimals: 3, sortable: true, width: 100 },
-    { key: 'after', header: 'μ after', unit: 'mag', text: (s) => s.after, decimals: 3, sortable: true, width: 100 },
+    { key: 'before', header: 'μ before', unit: 'mag', text: (s) => s.before, decimals: 3, sortable: true, width: 140 },
+    { key: 'after', header: 'μ after', unit: 'mag', text: (s) => s.after, decimals: 3, sortable: true, width: 140 },
     { key: 'shift', header: 'Δμ', unit: 'mag', text: (s) => Number(shiftOf(s).toFixed(6)), decimals: 3, sortable: true, width: 90, render: (s) => <strong className="font-semibold">{formatSigned(shiftOf(s), 3)}</strong> },
     { key: 'errors', header: 'Δμ/σ', text: (s) => shiftInErrors(s), decimals: 2, sortable: true, width: 80, help: 'The shift in units of the error that the modulus has, both parts', render: (s) => formatSigned(shiftInErrors(s), 2) },
-    { key: 'distance', header: 'D before', unit: 'Mpc', text: (s) => s.distance, decimals: 3, sortable: true, width: 100 },
-    { key: 'distanceAfter', header: 'D after', unit: 'Mpc', text: distanceAfter, decimals: 3, sortable: true, width: 100 },
+    { key: 'distance', header: 'D before', unit: 'Mpc', text: (s) => s.distance, decimals: 3, sortable: true, width: 140 },
+    { key: 'distanceAfter', header: 'D after', unit: 'Mpc', text: distanceAfter, decimals: 3, sortable: true, width: 140 },
     { key: 'hostBefore', header: 'Host before', text: (s) => host(s.slug, 'before'), sortable: true, width: 140, help: 'Only where it changes' },
     { key: 'hostAfter', header: 'Host after', text: (s) => host(s.slug, 'after'), sortable: true, width: 140, help: 'Only where it changes' },
   ]
