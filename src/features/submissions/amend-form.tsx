@@ -5,13 +5,13 @@ import { GALAXY_CLASSES, GALAXY_STATUSES, classLabel, type GalaxyClass, type Gal
 import type { GalaxyAnswer } from '../../../core/schema/catalogue.ts'
 import { changePayloadSchemas } from '../../../core/schema/changes.ts'
 import { useGalaxy } from '../../api/galaxies.ts'
-import { Button } from '../../components/button.tsx'
 import { GalaxyPicker, type PickedGalaxy } from '../../components/curation/galaxy-picker.tsx'
-import { FailedState, ProblemNote } from '../../components/failed-state.tsx'
+import { FailedState } from '../../components/failed-state.tsx'
 import { Select } from '../../components/select.tsx'
 import { Skeleton } from '../../components/skeleton.tsx'
 import { TextArea } from '../../components/text-area.tsx'
 import { TextField } from '../../components/text-field.tsx'
+import { ChangeFormFrame } from './change-form-frame.tsx'
 import type { ChangeFormProps } from './change-forms.tsx'
 import { errorAt } from './form-errors.ts'
 import { useGalaxyAsked } from './galaxy-asked.ts'
@@ -73,13 +73,7 @@ function Fields({ galaxy, change, onSave, isSaving, error }: ChangeFormProps<'ga
     if (parsed.success && position.ok) await onSave({ action: 'galaxy.amend', payload: parsed.data })
   }
   return (
-    <form
-      className="grid grid-cols-[minmax(0,1fr)] gap-4"
-      onSubmit={(event) => {
-        event.preventDefault()
-        void save()
-      }}
-    >
+    <ChangeFormFrame save={save} isNew={!change} isSaving={isSaving} error={error}>
       <div className="grid grid-cols-[minmax(0,1fr)] gap-4 sm:grid-cols-2">
         <TextField label="Designation" value={typed.designation} onChange={(designation) => set({ designation })} error={errorAt(issues, error, 'set.designation')} />
         <TextField label="Position, ICRS" value={typed.position} onChange={(text) => set({ position: text })} error={position.ok ? errorAt(issues, error, 'set.ra', 'set.dec') : position.error} reading={moved ? `Read as ${formatPosition(position.ra, position.dec)}` : undefined} />
@@ -89,10 +83,6 @@ function Fields({ galaxy, change, onSave, isSaving, error }: ChangeFormProps<'ga
       <TextArea label="Note" rows={2} value={typed.note} onChange={(note) => set({ note })} error={errorAt(issues, error, 'set.note')} />
       <TextField label="Reason" value={reason} onChange={setReason} error={errorAt(issues, error, 'reason')} help="Why it should be changed" />
       {errorAt(issues, error, 'set') && <p className="text-sm text-stop">{errorAt(issues, error, 'set')}</p>}
-      {error ? <ProblemNote error={error} safe="What you typed is kept." /> : null}
-      <div>
-        <Button type="submit" kind="primary" isPending={isSaving}>{change ? 'Save' : 'Add to the draft'}</Button>
-      </div>
-    </form>
+    </ChangeFormFrame>
   )
 }

@@ -4,13 +4,13 @@ import type { ScaleAnswer } from '../../../core/schema/scale.ts'
 import type { ChangeAnswer } from '../../../core/schema/submissions.ts'
 import { ANCHOR_FIELDS, anchorFieldLabel } from '../../../core/scale/anchor-fields.ts'
 import { useScale } from '../../api/scale.ts'
-import { Button } from '../../components/button.tsx'
 import { AnchorFields } from '../../components/curation/scale/anchor-fields.tsx'
 import { NEW_ANCHOR, readAnchor, typedAnchor, type AnchorPayload } from '../../components/curation/scale/anchor-typed.ts'
-import { FailedState, ProblemNote } from '../../components/failed-state.tsx'
+import { FailedState } from '../../components/failed-state.tsx'
 import { Select } from '../../components/select.tsx'
 import { Skeleton } from '../../components/skeleton.tsx'
 import { TextField } from '../../components/text-field.tsx'
+import { ChangeFormFrame } from './change-form-frame.tsx'
 import type { ChangeFormProps } from './change-forms.tsx'
 import { errorAt } from './form-errors.ts'
 
@@ -54,20 +54,10 @@ function Fields({ held, anchors, change, onSave, isSaving, error }: ChangeFormPr
     if (parsed.success) await onSave({ action: 'anchor.set', payload: parsed.data })
   }
   return (
-    <form
-      className="grid grid-cols-[minmax(0,1fr)] gap-4"
-      onSubmit={(event) => {
-        event.preventDefault()
-        void save()
-      }}
-    >
+    <ChangeFormFrame save={save} isNew={!change} isSaving={isSaving} error={error}>
       <AnchorFields typed={typed} onChange={setTyped} held={held} anchors={anchors} errorOf={(field) => errorAt(issues, error, field)} />
       <TextField label="Reason" value={reason} onChange={setReason} error={errorAt(issues, error, 'reason')} help="Why this value should be believed" />
-      {error ? <ProblemNote error={error} safe="What you typed is kept." /> : null}
-      <div>
-        <Button type="submit" kind="primary" isPending={isSaving}>{change ? 'Save' : 'Add to the draft'}</Button>
-      </div>
-    </form>
+    </ChangeFormFrame>
   )
 }
 

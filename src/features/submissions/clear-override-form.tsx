@@ -1,10 +1,9 @@
 import { useState } from 'react'
 import { changePayloadSchemas, OVERRIDE_SUBJECTS, type OverrideSubject } from '../../../core/schema/changes.ts'
-import { Button } from '../../components/button.tsx'
 import { GalaxyPicker, type PickedGalaxy } from '../../components/curation/galaxy-picker.tsx'
-import { ProblemNote } from '../../components/failed-state.tsx'
 import { Select } from '../../components/select.tsx'
 import { TextField } from '../../components/text-field.tsx'
+import { ChangeFormFrame } from './change-form-frame.tsx'
 import type { ChangeFormProps } from './change-forms.tsx'
 import { errorAt } from './form-errors.ts'
 import { useGalaxyAsked } from './galaxy-asked.ts'
@@ -28,13 +27,7 @@ export function ClearOverrideForm({ change, onSave, isSaving, error }: ChangeFor
     if (parsed.success) await onSave({ action: 'override.clear', payload: parsed.data })
   }
   return (
-    <form
-      className="grid grid-cols-[minmax(0,1fr)] gap-4"
-      onSubmit={(event) => {
-        event.preventDefault()
-        void save()
-      }}
-    >
+    <ChangeFormFrame save={save} isNew={!change} isSaving={isSaving} error={error}>
       {!change && (
         <div className="grid grid-cols-[minmax(0,1fr)] gap-4 sm:grid-cols-2">
           <GalaxyPicker value={galaxy} onChange={setGalaxy} autoFocus={!galaxy} error={tried && !galaxy ? 'Choose the galaxy.' : errorAt([], error, 'galaxy.slug')} />
@@ -42,10 +35,6 @@ export function ClearOverrideForm({ change, onSave, isSaving, error }: ChangeFor
         </div>
       )}
       <TextField label="Reason" value={reason} onChange={setReason} error={errorAt(issues, error, 'reason')} help="Why the policy is right after all" />
-      {error ? <ProblemNote error={error} safe="What you typed is kept." /> : null}
-      <div>
-        <Button type="submit" kind="primary" isPending={isSaving}>{change ? 'Save' : 'Add to the draft'}</Button>
-      </div>
-    </form>
+    </ChangeFormFrame>
   )
 }

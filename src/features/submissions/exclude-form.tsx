@@ -1,10 +1,9 @@
 import { useState } from 'react'
 import { useSearchParams } from 'react-router-dom'
 import { changePayloadSchemas } from '../../../core/schema/changes.ts'
-import { Button } from '../../components/button.tsx'
 import type { PickedGalaxy } from '../../components/curation/galaxy-picker.tsx'
-import { ProblemNote } from '../../components/failed-state.tsx'
 import { TextField } from '../../components/text-field.tsx'
+import { ChangeFormFrame } from './change-form-frame.tsx'
 import type { ChangeFormProps } from './change-forms.tsx'
 import { errorAt } from './form-errors.ts'
 import { useGalaxyAsked } from './galaxy-asked.ts'
@@ -40,19 +39,9 @@ export function ExcludeForm({ action, change, onSave, isSaving, error }: ChangeF
     }
   }
   return (
-    <form
-      className="grid grid-cols-[minmax(0,1fr)] gap-4"
-      onSubmit={(event) => {
-        event.preventDefault()
-        void save()
-      }}
-    >
+    <ChangeFormFrame save={save} isNew={!change} isSaving={isSaving} error={error}>
       {!change && <MeasurementPicker excluded={action === 'measurement.restore'} galaxy={galaxy} onGalaxy={setGalaxy} value={id} onChange={(m) => setId(m.id)} error={tried && id === null ? 'Choose the measurement.' : errorAt([], error, 'measurementId')} />}
       <TextField label="Reason" value={reason} onChange={setReason} error={errorAt(issues, error, 'reason')} help={HELP[action]} />
-      {error ? <ProblemNote error={error} safe="What you typed is kept." /> : null}
-      <div>
-        <Button type="submit" kind="primary" isPending={isSaving}>{change ? 'Save' : 'Add to the draft'}</Button>
-      </div>
-    </form>
+    </ChangeFormFrame>
   )
 }

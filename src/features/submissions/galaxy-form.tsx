@@ -3,13 +3,12 @@ import { readPosition } from '../../../core/astro/position-reader.ts'
 import { formatPosition } from '../../../core/astro/position-format.ts'
 import { GALAXY_CLASSES, classLabel, type GalaxyClass } from '../../../core/classes.ts'
 import { changePayloadSchemas } from '../../../core/schema/changes.ts'
-import { Button } from '../../components/button.tsx'
-import { ProblemNote } from '../../components/failed-state.tsx'
 import { RadioGroup } from '../../components/radio-group.tsx'
 import { Select } from '../../components/select.tsx'
 import { TextArea } from '../../components/text-area.tsx'
 import { TextField } from '../../components/text-field.tsx'
 import { useKeptForm } from '../../lib/kept-form.ts'
+import { ChangeFormFrame } from './change-form-frame.tsx'
 import type { ChangeFormProps } from './change-forms.tsx'
 import { errorAt } from './form-errors.ts'
 
@@ -51,13 +50,7 @@ export function GalaxyForm({ submission, change, onSave, isSaving, error }: Chan
     if (!change) setTyped(BLANK)
   }
   return (
-    <form
-      className="grid grid-cols-[minmax(0,1fr)] gap-4"
-      onSubmit={(event) => {
-        event.preventDefault()
-        void save()
-      }}
-    >
+    <ChangeFormFrame save={save} isNew={!change} isSaving={isSaving} error={error}>
       <div className="grid grid-cols-[minmax(0,1fr)] gap-4 sm:grid-cols-2">
         <TextField label="Designation" value={typed.designation} onChange={(designation) => set({ designation })} error={errorAt(issues, error, 'designation')} autoFocus={!change} />
         <TextField
@@ -73,11 +66,7 @@ export function GalaxyForm({ submission, change, onSave, isSaving, error }: Chan
         <TextArea label="Other names" rows={3} value={typed.names} onChange={(names) => set({ names })} help="One a line" error={errorAt(issues, error, 'names')} />
         <TextArea label="Note" rows={3} value={typed.note} onChange={(note) => set({ note })} error={errorAt(issues, error, 'note')} />
       </div>
-      {error ? <ProblemNote error={error} safe="What you typed is kept." /> : null}
-      <div>
-        <Button type="submit" kind="primary" isPending={isSaving}>{change ? 'Save' : 'Add to the draft'}</Button>
-      </div>
-    </form>
+    </ChangeFormFrame>
   )
 }
 

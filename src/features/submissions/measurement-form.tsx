@@ -2,11 +2,10 @@ import { useEffect, useState } from 'react'
 import { useForm, type UseFormReturn } from 'react-hook-form'
 import { changePayloadSchemas, type GalaxyRef } from '../../../core/schema/changes.ts'
 import type { ChangeAnswer, SubmissionAnswer } from '../../../core/schema/submissions.ts'
-import { Button } from '../../components/button.tsx'
 import { GalaxyPicker, type PickedGalaxy } from '../../components/curation/galaxy-picker.tsx'
-import { ProblemNote } from '../../components/failed-state.tsx'
 import { Select } from '../../components/select.tsx'
 import { useKeptForm } from '../../lib/kept-form.ts'
+import { ChangeFormFrame } from './change-form-frame.tsx'
 import type { ChangeFormProps } from './change-forms.tsx'
 import { errorAt } from './form-errors.ts'
 import { useGalaxyAsked } from './galaxy-asked.ts'
@@ -50,23 +49,13 @@ export function MeasurementForm({ submission, change, onSave, isSaving, error }:
     if (!change) form.reset({ ...typed, measurement: { ...typed.measurement, value: '', errPlus: '', errMinus: '', errSys: '', textValue: '', locator: '', note: '' } })
   }
   return (
-    <form
-      className="grid grid-cols-[minmax(0,1fr)] gap-4"
-      onSubmit={(event) => {
-        event.preventDefault()
-        void save()
-      }}
-    >
+    <ChangeFormFrame save={save} isNew={!change} isSaving={isSaving} error={error}>
       <div className="grid grid-cols-[minmax(0,1fr)] gap-4 sm:grid-cols-2">
         <GalaxyPicker key={typed.galaxy?.slug ?? 'none'} value={typed.galaxy} onChange={(galaxy) => { form.setValue('galaxy', galaxy); if (galaxy) form.setValue('newGalaxy', null) }} error={tried && !ref ? 'Choose the galaxy.' : errorAt(issues, error, 'galaxy', 'galaxy.slug')} autoFocus={!change && !preset} />
         {added.length > 0 && <NewGalaxySelect added={added} value={typed.newGalaxy} onChange={(id) => { form.setValue('newGalaxy', id); if (id !== null) form.setValue('galaxy', null) }} />}
       </div>
       <MeasurementFields form={form as unknown as UseFormReturn<{ measurement: TypedMeasurement }>} errorOf={(field) => (field === 'sourceId' && tried && !typed.measurement.source ? 'Choose the source.' : errorAt(issues, error, `measurement.${field}`))} />
-      {error ? <ProblemNote error={error} safe="What you typed is kept." /> : null}
-      <div>
-        <Button type="submit" kind="primary" isPending={isSaving}>{change ? 'Save' : 'Add to the draft'}</Button>
-      </div>
-    </form>
+    </ChangeFormFrame>
   )
 }
 

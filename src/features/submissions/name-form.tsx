@@ -1,10 +1,9 @@
 import { useState } from 'react'
 import { changePayloadSchemas } from '../../../core/schema/changes.ts'
-import { Button } from '../../components/button.tsx'
 import { GalaxyPicker, type PickedGalaxy } from '../../components/curation/galaxy-picker.tsx'
 import { SourcePicker, type PickedSource } from '../../components/curation/source-picker.tsx'
-import { ProblemNote } from '../../components/failed-state.tsx'
 import { TextField } from '../../components/text-field.tsx'
+import { ChangeFormFrame } from './change-form-frame.tsx'
 import type { ChangeFormProps } from './change-forms.tsx'
 import { errorAt } from './form-errors.ts'
 import { useGalaxyAsked } from './galaxy-asked.ts'
@@ -31,22 +30,12 @@ export function NameForm({ change, onSave, isSaving, error }: ChangeFormProps<'n
     }
   }
   return (
-    <form
-      className="grid grid-cols-[minmax(0,1fr)] gap-4"
-      onSubmit={(event) => {
-        event.preventDefault()
-        void save()
-      }}
-    >
+    <ChangeFormFrame save={save} isNew={!change} isSaving={isSaving} error={error}>
       <div className="grid grid-cols-[minmax(0,1fr)] gap-4 sm:grid-cols-2">
         <GalaxyPicker value={galaxy} onChange={setGalaxy} error={tried && !ref ? 'Choose the galaxy.' : undefined} autoFocus={!change && !asked} />
         <TextField label="Name" value={name} onChange={setName} error={errorAt(issues, error, 'name')} />
       </div>
       <SourcePicker value={source} onChange={setSource} />
-      {error ? <ProblemNote error={error} safe="What you typed is kept." /> : null}
-      <div>
-        <Button type="submit" kind="primary" isPending={isSaving}>{change ? 'Save' : 'Add to the draft'}</Button>
-      </div>
-    </form>
+    </ChangeFormFrame>
   )
 }

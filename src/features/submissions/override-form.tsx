@@ -5,14 +5,14 @@ import { quantity, QUANTITIES } from '../../../core/quantities.ts'
 import type { MeasurementAnswer } from '../../../core/schema/catalogue.ts'
 import { changePayloadSchemas, OVERRIDE_SUBJECTS, overrideSubjectWords, type OverrideSubject } from '../../../core/schema/changes.ts'
 import { useMeasurements } from '../../api/galaxies.ts'
-import { Button } from '../../components/button.tsx'
 import { Checkbox } from '../../components/checkbox.tsx'
 import { GalaxyPicker, type PickedGalaxy } from '../../components/curation/galaxy-picker.tsx'
-import { FailedState, ProblemNote } from '../../components/failed-state.tsx'
+import { FailedState } from '../../components/failed-state.tsx'
 import { RadioGroup } from '../../components/radio-group.tsx'
 import { Select } from '../../components/select.tsx'
 import { Skeleton } from '../../components/skeleton.tsx'
 import { TextField } from '../../components/text-field.tsx'
+import { ChangeFormFrame } from './change-form-frame.tsx'
 import type { ChangeFormProps } from './change-forms.tsx'
 import { errorAt } from './form-errors.ts'
 import { useGalaxyAsked } from './galaxy-asked.ts'
@@ -49,13 +49,7 @@ export function OverrideForm({ change, onSave, isSaving, error }: ChangeFormProp
     if (parsed.success) await onSave({ action: 'override.set', payload: parsed.data })
   }
   return (
-    <form
-      className="grid grid-cols-[minmax(0,1fr)] gap-4"
-      onSubmit={(event) => {
-        event.preventDefault()
-        void save()
-      }}
-    >
+    <ChangeFormFrame save={save} isNew={!change} isSaving={isSaving} error={error}>
       {!change && (
         <div className="grid grid-cols-[minmax(0,1fr)] gap-4 sm:grid-cols-2">
           <GalaxyPicker value={galaxy} onChange={setGalaxy} autoFocus={!galaxy} error={tried && !galaxy ? 'Choose the galaxy.' : errorAt([], error, 'galaxy.slug')} />
@@ -79,11 +73,7 @@ export function OverrideForm({ change, onSave, isSaving, error }: ChangeFormProp
         </div>
       )}
       <TextField label="Reason" value={reason} onChange={setReason} error={errorAt(issues, error, 'reason')} help="Shown wherever the value is: why the policy is wrong here" />
-      {error ? <ProblemNote error={error} safe="What you typed is kept." /> : null}
-      <div>
-        <Button type="submit" kind="primary" isPending={isSaving}>{change ? 'Save' : 'Add to the draft'}</Button>
-      </div>
-    </form>
+    </ChangeFormFrame>
   )
 }
 

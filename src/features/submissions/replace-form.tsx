@@ -5,10 +5,9 @@ import { quantity } from '../../../core/quantities.ts'
 import type { MeasurementAnswer } from '../../../core/schema/catalogue.ts'
 import { changePayloadSchemas } from '../../../core/schema/changes.ts'
 import { useMeasurements } from '../../api/galaxies.ts'
-import { Button } from '../../components/button.tsx'
 import type { PickedGalaxy } from '../../components/curation/galaxy-picker.tsx'
-import { ProblemNote } from '../../components/failed-state.tsx'
 import { TextField } from '../../components/text-field.tsx'
+import { ChangeFormFrame } from './change-form-frame.tsx'
 import type { ChangeFormProps } from './change-forms.tsx'
 import { errorAt } from './form-errors.ts'
 import { useGalaxyAsked } from './galaxy-asked.ts'
@@ -57,20 +56,10 @@ function Mend({ measurementId, start, startReason, change, onSave, isSaving, err
     if (parsed.success) await onSave({ action: 'measurement.replace', payload: parsed.data })
   }
   return (
-    <form
-      className="grid grid-cols-[minmax(0,1fr)] gap-4"
-      onSubmit={(event) => {
-        event.preventDefault()
-        void save()
-      }}
-    >
+    <ChangeFormFrame save={save} isNew={!change} isSaving={isSaving} error={error}>
       <MeasurementFields form={form as UseFormReturn<{ measurement: TypedMeasurement }>} errorOf={(field) => errorAt(issues, error, `measurement.${field}`)} />
       <TextField label="Reason" value={reason} onChange={setReason} error={errorAt(issues, error, 'reason')} help="What was wrong with the entry" />
-      {error ? <ProblemNote error={error} safe="What you typed is kept." /> : null}
-      <div>
-        <Button type="submit" kind="primary" isPending={isSaving}>{change ? 'Save' : 'Add to the draft'}</Button>
-      </div>
-    </form>
+    </ChangeFormFrame>
   )
 }
 
