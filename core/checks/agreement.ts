@@ -1,6 +1,7 @@
 import { adopt } from '../adoption/adopt.ts'
 import type { Adopted } from '../adoption/adopted.ts'
 import { statedError } from '../adoption/eligible.ts'
+import { hangsOnAnchor, rescaling } from '../adoption/rescale.ts'
 import { quantity } from '../quantities.ts'
 import { canonicalOf, othersOf, scaledOf } from './canonical.ts'
 import type { MeasurementCheck, MeasurementSurroundings, ProposedMeasurement } from './check.ts'
@@ -13,7 +14,7 @@ export const agreement: MeasurementCheck = (proposed, surroundings) => {
   const own = canonicalOf(proposed)
   const known = adopt(q.key, othersOf(proposed, surroundings), surroundings.scale)
   if (scaled === null || own === null || known === null || known.value === null || proposed.measurement.limitFlag !== null) return null
-  const error = Math.hypot(statedError(own) ?? 0, known.errPlus ?? 0, ...systematics(proposed, known, surroundings))
+  const error = Math.hypot(statedError(own) ?? 0, unscaled(proposed, surroundings), known.errPlus ?? 0, ...systematics(proposed, known, surroundings))
   if (error <= 0) return null
   const z = Math.abs(scaled - known.value) / error
   const words = `${z.toFixed(1)} σ from the ${printed(known.value, q.decimals)}${q.unit ? ` ${q.unit}` : ''} of the other ${known.nUsed === 1 ? 'value' : `${known.nUsed} values`}`
@@ -27,4 +28,10 @@ function systematics({ measurement }: ProposedMeasurement, known: Adopted, { hel
   const used = new Set(known.reasons.filter((r) => r.used).map((r) => r.measurementId))
   if (held.filter((m) => used.has(m.id)).every((m) => m.method === measurement.method)) return []
   return [known.errSys ?? 0, scale.policy.methods.find((r) => r.method === measurement.method)?.systematic ?? 0]
+}
+
+/** What adoption adds where nobody knows on which anchor value a distance hangs. */
+function unscaled({ measurement: m }: ProposedMeasurement, { scale }: MeasurementSurroundings): number {
+  if (m.quantity !== 'distance_modulus' || m.method === null || !hangsOnAnchor(m.method, scale.anchors) || rescaling(m, scale.anchors) !== null) return 0
+  return scale.policy.methods.find((r) => r.method === m.method)?.unscaled ?? 0
 }

@@ -37,8 +37,8 @@ export interface MeasurementSurroundings {
   sourceLacks: readonly string[]
   /** Other galaxies that hold this very value of the same quantity from the same source. */
   elsewhere: readonly string[]
-  /** null where the measurement can move nobody, or where it was not looked into. */
-  outlook: HostOutlook | null
+  /** null where the measurement can move nobody; `many` where there are too many changes to look into each. */
+  outlook: HostOutlook | 'many' | null
 }
 
 export interface ProposedGalaxy {

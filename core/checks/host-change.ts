@@ -5,6 +5,7 @@ const MOST_NAMED = 5
 /** With this value somebody would belong to another host: the reviewer should know before anything else. */
 export const hostChange: MeasurementCheck = (_proposed, { galaxy, outlook }) => {
   if (outlook === null) return null
+  if (outlook === 'many') return { check: 'host-change', level: 'ok', sentence: 'Among so many changes hosts are not looked into one by one: the effect tells who changes host.' }
   const { own, satellites } = outlook
   const words = [
     ...(own.before !== own.after ? [`${galaxy} would ${becoming(own)}`] : []),

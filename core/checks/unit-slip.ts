@@ -15,10 +15,12 @@ export const unitSlip: MeasurementCheck = (proposed, surroundings) => {
   const known = adopt(q.key, othersOf(proposed, surroundings), surroundings.scale)?.value ?? null
   if (own === null || known === null || m.value === null || q.units.length < 2) return null
   const miss = Math.abs(own.value - known)
+  // A magnitude is a logarithm: one of them is far. Of a length, half of itself.
+  const far = q.unit === 'mag' ? 1 : Math.abs(known) / 2
   for (const unit of q.units) {
     if (unit === acceptedUnit(q, m.unit)) continue
     const otherwise = unit.toCanonical(m.value)
-    if (Number.isFinite(otherwise) && miss > BETTER * Math.abs(otherwise - known) && miss > 1) {
+    if (Number.isFinite(otherwise) && miss > BETTER * Math.abs(otherwise - known) && miss > far) {
       return {
         check: 'unit-slip', level: 'warn',
         sentence: `${m.value} ${m.unit || 'without unit'} is far from the ${printed(known, q.decimals)} ${q.unit} adopted; as ${m.value} ${unit.unit} it would fit. Check the unit.`,

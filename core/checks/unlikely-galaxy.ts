@@ -1,5 +1,6 @@
 import { adopt } from '../adoption/adopt.ts'
 import { distanceOf } from '../astro/distance.ts'
+import { meanSurfaceBrightness } from '../astro/magnitudes.ts'
 import { hiMass } from '../astro/masses.ts'
 import { semiMajorPc } from '../astro/sizes.ts'
 import type { Measurement } from '../catalogue/types.ts'
@@ -12,6 +13,7 @@ import { printed } from './printed.ts'
 const ABSOLUTE_MAG = [-25, 1] as const
 const HALF_LIGHT_PC = [3, 30_000] as const
 const LOG_HI_MASS = [2, 11] as const
+const MEAN_SURFACE_BRIGHTNESS = [16, 31.5] as const
 
 const MAGNITUDES: readonly QuantityKey[] = ['b_mag', 'v_mag', 'k_mag', 'i_mag', 'g_mag', 'r_mag']
 
@@ -21,6 +23,10 @@ export const unlikelyGalaxy: MeasurementCheck = (proposed, surroundings) => {
   const held = heldWith(proposed, surroundings)
   if (held === null || proposed.measurement.limitFlag !== null) return null
   const of = (k: Measurement['quantity']): number | null => adopt(k, held.filter((m) => m.quantity === k), surroundings.scale)?.value ?? null
+  const faint = surfaceBrightness(key, of)
+  if (faint !== null && outside(faint, MEAN_SURFACE_BRIGHTNESS)) {
+    return { check: 'unlikely-galaxy', level: 'warn', sentence: `This makes a mean surface brightness of ${printed(faint, 1)} mag/arcsec² inside the half-light radius. No galaxy is known like that: check magnitude, size and unit.` }
+  }
   const modulus = of('distance_modulus')
   if (modulus === null) return null
   const asked = (k: QuantityKey): number | null => (k === key || key === 'distance_modulus' ? of(k) : null)
@@ -35,6 +41,13 @@ export const unlikelyGalaxy: MeasurementCheck = (proposed, surroundings) => {
   const flux = asked('hi_flux')
   if (flux !== null && flux > 0 && outside(Math.log10(hiMass(distance, flux)), LOG_HI_MASS)) return warn(`This makes an H I mass of 10^${Math.log10(hiMass(distance, flux)).toFixed(1)} solar masses`)
   return null
+}
+
+/** In V, where the proposed value has a part in it; a missing axis ratio counts as 1. */
+function surfaceBrightness(key: QuantityKey, of: (key: QuantityKey) => number | null): number | null {
+  const [v, radius] = [of('v_mag'), of('r_half')]
+  if ((key !== 'v_mag' && key !== 'r_half' && key !== 'axis_ratio') || v === null || radius === null || radius <= 0) return null
+  return meanSurfaceBrightness(v, radius, of('axis_ratio') ?? 1)
 }
 
 const outside = (value: number, [lo, hi]: readonly [number, number]): boolean => value < lo || value > hi

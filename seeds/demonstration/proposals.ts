@@ -73,6 +73,7 @@ export async function proposals(knex: Knex, source: number): Promise<Proposal[]>
         },
       }],
     },
+    ...(await faultyProposals(knex, source)),
     {
       title: 'A newer zero point of the tip', becomes: 'submitted',
       summary: 'Three geometric calibrations of the last two years agree on a tip 0.02 mag fainter than ours. All TRGB distances would shrink by 0.9 %.',
@@ -85,6 +86,5 @@ export async function proposals(knex: Knex, source: number): Promise<Proposal[]>
       }],
       remark: 'Please look at the plot of the effect before deciding: a few satellites change host.',
     },
-    ...(await faultyProposals(knex, source)),
   ]
 }

@@ -2,6 +2,7 @@
 import { describe, expect, it } from 'vitest'
 import { adopt } from '../../core/adoption/adopt.ts'
 import { sharedZeroPointMean } from '../../core/adoption/shared-zero-point.ts'
+import { convert } from '../../core/astro/frames.ts'
 import type { Measurement } from '../../core/catalogue/types.ts'
 import { checkMeasurement } from '../../core/checks/run.ts'
 import { flatteningOf } from '../../core/systems/flattening.ts'
@@ -155,7 +156,10 @@ describe('the invented neighbourhood', () => {
 
   it('is flattened towards the supergalactic plane, and thins out where dust hides the faint', () => {
     const many = known.map((k) => k.galaxy)
-    // Of an even sky two thirds lie below 41.8°; the share at low Galactic latitude would be sin 10° = 17 %.
+    // Of an even sky half lies within 30° of a great circle.
+    const far = many.filter((g) => g.distance > 1.5 && Math.abs(g.latitude) > 15)
+    expect(far.filter((g) => Math.abs(convert(g.ra, g.dec, 'equatorial', 'supergalactic').lat) < 30).length / far.length).toBeGreaterThan(0.7)
+    // The share at low Galactic latitude would be sin 10° = 17 %.
     expect(many.filter((g) => Math.abs(g.latitude) < 10 && g.absV > -12).length / many.filter((g) => g.absV > -12).length).toBeLessThan(0.12)
   })
 
@@ -172,8 +176,10 @@ describe('the invented neighbourhood', () => {
         const centre = at(host)
         return flatteningOf(list.filter((g) => g.host === name).map(at).map(([x, y, z]): [number, number, number] => [x - centre[0], y - centre[1], z - centre[2]]))?.minorToMajor ?? NaN
       })
-    const average = (list: readonly number[]): number => list.reduce((a, b) => a + b, 0) / list.length
-    expect(average(ratios('Ostrel'))).toBeLessThan(average(ratios('Mirrow')) - 0.1)
+    // A host with hardly any satellite in some neighbourhood has no shape there.
+    const average = (list: readonly number[]): number => list.filter((x) => !Number.isNaN(x)).reduce((sum, x, _i, { length }) => sum + x / length, 0)
+    const round = average(['Mirrow', 'Vesk', 'Quarrow'].map((name) => average(ratios(name))))
+    for (const flat of ['Ostrel', 'Tamsin']) expect(average(ratios(flat)), flat).toBeLessThan(round - 0.1)
   })
 })
 
@@ -185,7 +191,8 @@ describe('the checks', () => {
       for (const m of k.held) {
         const { id, versionId: _v, galaxyId: _g, published: _p, sourceLabel: _l, sourceYear: _y, excludedReason: _e, ...stated } = m
         const measurement = { ...stated, unit: quantity(m.quantity).unit, sourceId: m.sourceId + 1000 }
-        asked += 1
+        // Of a value that stands alone hardly anything could be said.
+        if (k.held.some((h) => h.id !== m.id && h.quantity === m.quantity)) asked += 1
         const found = checkMeasurement({ measurement, replaces: null }, {
           galaxy: k.galaxy.designation, position: { ra: k.galaxy.ra, dec: k.galaxy.dec }, held: k.held.filter((h) => h.id !== id), scale, sourceLabel: 'A source', sourceLacks: [], elsewhere: [], outlook: null,
         })
@@ -193,7 +200,7 @@ describe('the checks', () => {
         for (const c of found) if (c.level !== 'ok' && c.check !== 'anchor-stated' && !(c.check === 'error-bar' && m.errPlus === null)) alarms.set(c.check, (alarms.get(c.check) ?? 0) + 1)
       }
     }
-    process.stdout.write(`false alarms of ${asked} honest values: ${[...alarms].map(([check, n]) => `${check} ${n}`).join(', ')}\n`)
-    expect([...alarms.values()].reduce((a, b) => a + b, 0) / asked).toBeLessThan(0.02)
+    process.stdout.write(`false alarms beside ${asked} honest values that stand with others: ${[...alarms].map(([check, n]) => `${check} ${n}`).join(', ')}\n`)
+    expect([...alarms.values()].reduce((a, b) => a + b, 0) / asked).toBeLessThan(0.01)
   })
 })

@@ -71,6 +71,11 @@ describe('agreement', () => {
     expect(said('agreement', typed('distance_modulus', 28.1), around([cepheids]))).toMatch(/^ok: 2\.8 σ/)
   })
 
+  it('adds what adoption does where the anchor’s value is not known', () => {
+    // 0.3 mag apart: 0.06, 0.05 and 0.05 for the unknown scale: 3.2 σ.
+    expect(said('agreement', typed('distance_modulus', 28.1, { anchor: null, anchorValueAssumed: null }), around([near]))).toMatch(/^warn: 3\.2 σ/)
+  })
+
   it('says nothing of a limit', () => {
     expect(said('agreement', typed('velocity', 900, { limitFlag: 'upper' }), around([held('velocity', 200)]))).toBeUndefined()
   })
@@ -118,6 +123,22 @@ describe('unlikely-galaxy', () => {
   })
 })
 
+describe('a surface brightness', () => {
+  it('that no galaxy has shows a tenfold radius or a slip of magnitudes, without a distance', () => {
+    // V = 16 in 2.5′: 16 + 1.995 + 5 log10(150″) = 28.9; in 25′ 33.9; in 0.005′ 15.4.
+    const light = around([held('v_mag', 16)])
+    expect(said('unlikely-galaxy', typed('r_half', 2.5), light)).toBeUndefined()
+    expect(said('unlikely-galaxy', typed('r_half', 25), light)).toContain('mean surface brightness of 33.9 mag/arcsec²')
+    expect(said('unlikely-galaxy', typed('r_half', 0.005), light)).toContain('15.4 mag/arcsec²')
+  })
+})
+
+describe('unit-slip', () => {
+  it('finds seconds typed for minutes of arc in a small galaxy too', () => {
+    expect(said('unit-slip', typed('r_half', 0.31, { unit: 'arcsec' }), around([held('r_half', 0.3)]))).toContain('as 0.31 arcmin it would fit')
+  })
+})
+
 describe('method-reach', () => {
   it('asks about methods far out of their range', () => {
     expect(said('method-reach', typed('distance_modulus', 29, { method: 'rr-lyrae' }), around([]))).toContain('farther than RR Lyrae distances usually reach')
@@ -137,6 +158,7 @@ describe('host-change', () => {
     expect(outlook({ before: 'Ostrel', after: 'Marl' })).toBe('warn: Ostrel IX would pass from Ostrel to Marl.')
     expect(outlook({ before: null, after: null }, [{ name: 'Marl II', before: 'Ostrel IX', after: null }, { name: 'Marl III', before: 'Ostrel IX', after: null }])).toBe('warn: 2 other galaxies change host with it: Marl II, Marl III.')
     expect(said('host-change', typed('velocity', 200), around([]))).toBeUndefined()
+    expect(said('host-change', typed('distance_modulus', 27.8), around([], { outlook: 'many' }))).toMatch(/^ok: Among so many changes/)
   })
 })
 

@@ -21,10 +21,11 @@ const MOST = 12
 /** What a galaxy's place or pull depends on. */
 const MOVING: ReadonlySet<QuantityKey> = new Set(['distance_modulus', 'b_mag', 'v_mag', 'k_mag', 'ebv', 'morph_t', 'log_mstar'])
 
-/** Outlooks by change; none where there are too many changes to look into, or where a change can move nobody. */
-export async function outlooksOf(knex: Knex, changes: readonly MeasurementChange[], heldOf: (galaxy: number | null) => readonly Measurement[], scale: Scale): Promise<Map<number, HostOutlook>> {
+/** Outlooks by change; none where a change can move nobody. */
+export async function outlooksOf(knex: Knex, changes: readonly MeasurementChange[], heldOf: (galaxy: number | null) => readonly Measurement[], scale: Scale): Promise<Map<number, HostOutlook | 'many'>> {
   const moving = changes.filter((c) => c.galaxy !== null && MOVING.has(c.payload.measurement.quantity))
-  if (moving.length === 0 || moving.length > MOST) return new Map()
+  if (moving.length === 0) return new Map()
+  if (moving.length > MOST) return new Map(moving.map((c) => [c.id, 'many']))
   const revision = await currentRevision(knex)
   if (revision === 0) return new Map()
   const surroundings = await surroundingsAt(knex, revision)
