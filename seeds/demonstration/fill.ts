@@ -6,6 +6,7 @@ import { DEFAULT_POLICY } from '../../core/scale/policy.ts'
 import { rebuildCatalogue } from '../../server/services/revision/rebuild.ts'
 import type { Services } from '../../server/http/route.ts'
 import { personCalled } from '../people.ts'
+import { withFaults } from './catalogue-faults.ts'
 import { layTheDesk } from './desk.ts'
 import { hangTheGallery } from './gallery.ts'
 import { literature } from './literature.ts'
@@ -30,7 +31,8 @@ export async function fillWithDemonstration(trx: Knex.Transaction, people: Reado
   const draw = random(SEED)
   const sources = literature(draw)
   const systematics = drawSystematics(draw, DEFAULT_POLICY, DEFAULT_ANCHORS)
-  const invented = shuffledTail(neighbourhood(draw).map((galaxy): Invented => ({ galaxy, measurements: measure(draw, galaxy, sources, systematics) })))
+  const honest = neighbourhood(draw).map((galaxy): Invented => ({ galaxy, measurements: measure(draw, galaxy, sources, systematics) }))
+  const invented = shuffledTail(withFaults(honest, sources))
   const sourceIds = await addSources(trx, sources, person('curator'))
   let from = 0
   for (const chapter of CHAPTERS) {

@@ -4,6 +4,7 @@ import { join } from 'node:path'
 import { afterAll, describe, expect, it } from 'vitest'
 import { permissionsOf } from '../../core/permissions.ts'
 import { DEMONSTRATION_ACCOUNTS } from '../../seeds/accounts.ts'
+import { ZERO_POINT } from '../../seeds/demonstration/catalogue-faults.ts'
 import { PLANTED_FAULTS } from '../../seeds/demonstration/faults.ts'
 import { seedWhenEmpty } from '../../seeds/index.ts'
 import { loadConfig } from '../../server/config.ts'
@@ -68,6 +69,23 @@ describe('the demonstration', () => {
       })
     }
   }, 60_000)
+
+  it('has slips in the catalogue itself: a paper on a zero point of its own stands out by its residuals, an outlying tip by its tension', async () => {
+    const { knex } = databases[0] as TestDatabase
+    const { rows } = (await knex.raw(
+      `select s.title, count(*)::int as n, avg((r ->> 'residual')::float8) as mean
+         from adopted_values a cross join jsonb_array_elements(a.reasons) r join measurements m on m.lineage = (r ->> 'measurementId')::int and m.rev_to is null join sources s on s.id = m.source
+        where a.rev_to is null and a.quantity = 'distance_modulus' and m.method = 'trgb' and (r ->> 'used')::boolean and a.n_used > 1
+        group by s.title order by abs(avg((r ->> 'residual')::float8)) desc`,
+    )) as { rows: { title: string; n: number; mean: number }[] }
+    expect(rows[0]?.title).toBe(ZERO_POINT.title)
+    // Half of the offset, for a pair, over an error of about 0.06 mag.
+    expect(rows[0]?.mean).toBeGreaterThan(1)
+    const { rows: tense } = (await knex.raw(
+      "select count(*)::int as n from adopted_values a cross join jsonb_array_elements(a.reasons) r where a.rev_to is null and a.quantity = 'distance_modulus' and (r ->> 'tension')::boolean and abs((r ->> 'residual')::float8) > 5",
+    )) as { rows: { n: number }[] }
+    expect(tense[0]?.n).toBeGreaterThan(0)
+  })
 
   it('is a neighbourhood of about 600 galaxies, ours among them with its satellites', async () => {
     const { knex } = databases[0] as TestDatabase
