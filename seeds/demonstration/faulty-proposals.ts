@@ -3,7 +3,7 @@ import type { Knex } from 'knex'
 import { roundedDesignation } from './rounded-designation.ts'
 import { CANDIDATES, HURRY, OWN_SCALE, VELOCITIES } from './faults.ts'
 import { fourOf, knownSatellites, velocitiesHeld } from './known.ts'
-import { add, modulus, turned, velocityForm, type Proposal } from './proposal.ts'
+import { add, modulus, printed, turned, velocityForm, type Proposal } from './proposal.ts'
 
 export async function faultyProposals(knex: Knex, source: number): Promise<Proposal[]> {
   const known = await knownSatellites(knex)
@@ -19,7 +19,7 @@ export async function faultyProposals(knex: Knex, source: number): Promise<Propo
   const [lost, wrong, doubled, next] = fourOf(moving.slice(12))
   const [entered] = await velocitiesHeld(knex, 1)
   if (!entered) throw new RangeError('the invented neighbourhood has no velocity')
-  const candidate = { ra: turned(twin.ra + 2.4), dec: Number((twin.dec * 0.98).toFixed(4)) }
+  const candidate = { ra: turned(twin.ra + 2.4), dec: printed(twin.dec * 0.98) }
   return [
     {
       title: HURRY, becomes: 'submitted',
@@ -35,8 +35,8 @@ export async function faultyProposals(knex: Knex, source: number): Promise<Propo
       title: CANDIDATES, becomes: 'submitted',
       summary: 'Overdensities of red giants in the survey’s second release. Membership is open until somebody measures velocities.',
       changes: [
-        { action: 'galaxy.add', payload: { designation: 'Candidate 26A', ra: turned(twin.ra + 1.3), dec: twin.dec, class: 'ultra-faint', status: 'candidate', names: ['Demo Overdensity 7'] } },
-        { action: 'galaxy.add', payload: { designation: 'Candidate 26B', ra: turned(twin.ra + 0.008), dec: twin.dec, class: 'ultra-faint', status: 'candidate' } },
+        { action: 'galaxy.add', payload: { designation: 'Candidate 26A', ra: turned(twin.ra + 1.3), dec: printed(twin.dec), class: 'ultra-faint', status: 'candidate', names: ['Demo Overdensity 7'] } },
+        { action: 'galaxy.add', payload: { designation: 'Candidate 26B', ra: turned(twin.ra + 0.008), dec: printed(twin.dec), class: 'ultra-faint', status: 'candidate' } },
         (earlier) => add({ change: earlier[0] ?? 0 }, { ...modulus(twin, source, 0.1), errPlus: 0.15, errMinus: 0.15 }),
         { action: 'galaxy.add', payload: { designation: roundedDesignation('Demo', candidate.ra, candidate.dec), ...candidate, class: 'dwarf-irregular', status: 'candidate' } },
         (earlier) => add({ change: earlier[1] ?? 0 }, { ...modulus(twin, source, 0.06), errPlus: 0.2, errMinus: 0.2 }),

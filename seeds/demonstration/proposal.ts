@@ -34,4 +34,7 @@ export function velocityForm(velocity: number, sourceId: number, locator = 'tabl
   return { quantity: 'velocity', value: Number(velocity.toFixed(1)), errPlus: 2.5, errMinus: 2.5, unit: 'km/s', sourceId, locator }
 }
 
-export const turned = (ra: number): number => Number((ra % 360).toFixed(4))
+/** An angle as a paper prints it, deg. */
+export const printed = (angle: number): number => Number(angle.toFixed(4))
+
+export const turned = (ra: number): number => printed(ra % 360)

@@ -20,7 +20,7 @@ const COLUMNS: readonly DataColumn<HostRow>[] = [
   { key: 'name', header: 'Host', text: (h) => h.name, render: (h) => <Link to={paths.host(h.slug)}>{h.name}</Link>, sortable: true, width: 180 },
   { key: 'class', header: 'Class', text: (h) => classLabel(h.class), render: (h) => <ClassMark galaxyClass={h.class} withLabel />, sortable: true, width: 140 },
   { key: 'members', header: 'Satellites', text: (h) => h.members, decimals: 0, sortable: true, width: 110 },
-  { key: 'distance', header: 'Distance', unit: 'Mpc', text: (h) => h.distance, decimals: 2, sortable: true, width: 110 },
+  { key: 'distance', header: 'Distance', unit: 'Mpc', text: (h) => h.distance, decimals: 3, sortable: true, width: 110 },
   { key: 'logMstar', header: 'log M★', unit: 'M☉', text: (h) => h.logMstar, decimals: 2, sortable: true, width: 110, help: 'Decimal logarithm of the stellar mass in solar masses' },
   { key: 'sphere', header: 'Sphere', unit: 'kpc', text: (h) => h.sphere, decimals: 0, sortable: true, width: 110, help: 'Radius within which a galaxy counts as a satellite: the policy’s multiple of R200' },
   {
